@@ -1,0 +1,129 @@
+import * as z from "zod/mini";
+import { email, id, longText, none, role, shortText, surveyParams, utc } from "#shared/api/common.ts";
+import { contract, json } from "#shared/api/contract.ts";
+
+export const STAGES = ["area", "frame", "plan", "draw", "field", "counts", "estimate", "record"] as const;
+export type Stage = (typeof STAGES)[number];
+
+/** A stage at a glance; `note` is the line under its name: "version 2, sealed". */
+export const stageState = z.object({
+  stage: z.enum(STAGES),
+  state: z.enum(["not-started", "in-work", "attention", "done"]),
+  note: z.string(),
+});
+export type StageState = z.infer<typeof stageState>;
+
+export const season = z.object({ id, name: z.string(), position: z.int() });
+export const target = z.object({
+  id,
+  singular: z.string(),
+  plural: z.string(),
+  countingRule: z.string(),
+  wholeNumbers: z.boolean(),
+});
+
+export const surveySummary = z.object({
+  id,
+  name: z.string(),
+  target: z.string(),
+  season: z.string(),
+  roles: z.array(role),
+  stages: z.array(stageState),
+  /** Outline for a thumbnail in degrees, or null while there is no boundary. */
+  outline: z.nullable(z.array(z.array(z.array(z.tuple([z.number(), z.number()]))))),
+  createdAt: utc,
+});
+export type SurveySummary = z.infer<typeof surveySummary>;
+
+export const survey = z.extend(surveySummary, {
+  timeZone: z.string(),
+  level: z.string(),
+  safetyNotes: z.string(),
+  seasons: z.array(season),
+  targets: z.array(target),
+  /** The opaque id under which this person acts in the record. */
+  memberId: z.nullable(id),
+});
+export type Survey = z.infer<typeof survey>;
+
+export const member = z.object({
+  id,
+  name: z.string(),
+  email: z.string(),
+  roles: z.array(role),
+  addedAt: utc,
+});
+export type Member = z.infer<typeof member>;
+
+export const listSurveys = contract({
+  name: "listSurveys",
+  method: "GET",
+  path: "/api/surveys",
+  guard: "signed-in",
+  summary: "The surveys in which I hold a role",
+  params: none,
+  query: none,
+  body: none,
+  answer: json(z.object({ surveys: z.array(surveySummary) })),
+});
+
+export const createSurvey = contract({
+  name: "createSurvey",
+  method: "POST",
+  path: "/api/surveys",
+  guard: "signed-in",
+  summary: "Start a survey; whoever starts it is its planner",
+  params: none,
+  query: none,
+  body: z.object({
+    name: shortText,
+    targetSingular: shortText,
+    targetPlural: shortText,
+    countingRule: longText,
+    wholeNumbers: z.boolean(),
+    seasonName: shortText,
+    timeZone: shortText,
+    safetyNotes: longText,
+  }),
+  answer: json(survey),
+});
+
+export const readSurvey = contract({
+  name: "readSurvey",
+  method: "GET",
+  path: "/api/surveys/:surveyId",
+  guard: "survey.see",
+  summary: "One survey with the state of its stages",
+  params: surveyParams,
+  query: none,
+  body: none,
+  answer: json(survey),
+});
+
+export const listMembers = contract({
+  name: "listMembers",
+  method: "GET",
+  path: "/api/surveys/:surveyId/members",
+  guard: "people.see",
+  summary: "The people of a survey and their roles",
+  params: surveyParams,
+  query: none,
+  body: none,
+  answer: json(z.object({ members: z.array(member) })),
+});
+
+export const addMember = contract({
+  name: "addMember",
+  method: "POST",
+  path: "/api/surveys/:surveyId/members",
+  guard: "people.change",
+  summary: "Give somebody a role; a name and a first password make the account where there is none",
+  params: surveyParams,
+  query: none,
+  body: z.object({
+    email,
+    role,
+    newAccount: z.optional(z.object({ name: shortText, password: z.string().check(z.maxLength(1000)) })),
+  }),
+  answer: json(z.object({ members: z.array(member) })),
+});
