@@ -1,0 +1,62 @@
+import { existsSync, readFileSync } from "node:fs";
+import { dirname, join } from "node:path";
+import { fileURLToPath } from "node:url";
+import Database from "better-sqlite3";
+import { drizzle } from "drizzle-orm/better-sqlite3";
+import { migrate } from "drizzle-orm/better-sqlite3/migrator";
+import * as accounts from "./schema/accounts.ts";
+import * as area from "./schema/area.ts";
+import * as counts from "./schema/counts.ts";
+import * as draw from "./schema/draw.ts";
+import * as field from "./schema/field.ts";
+import * as frame from "./schema/frame.ts";
+import * as record from "./schema/record.ts";
+import * as surveys from "./schema/surveys.ts";
+
+const schema = { ...accounts, ...surveys, ...area, ...frame, ...draw, ...field, ...counts, ...record };
+
+export type Db = ReturnType<typeof openDb>;
+export type Tx = Parameters<Parameters<Db["transaction"]>[0]>[0];
+/** Named queries take either: reads may run outside a transaction. */
+export type Reader = Db | Tx;
+
+/** Opens (and creates) the one database file, brings its shape up to date, and sets the guards. */
+export function openDb(file: string) {
+  const sqlite = new Database(file);
+  sqlite.pragma("busy_timeout = 5000"); // first: switching to WAL can itself wait
+  sqlite.pragma("journal_mode = WAL");
+  sqlite.pragma("synchronous = FULL"); // a reopened WAL file falls back to NORMAL
+  sqlite.pragma("recursive_triggers = ON"); // so that REPLACE meets the DELETE triggers
+  const db = drizzle({ client: sqlite, schema, casing: "snake_case" });
+
+  dropTriggers(sqlite);
+  sqlite.pragma("foreign_keys = OFF"); // a table rebuild would delete the rows that point at it
+  migrate(db, { migrationsFolder: shipped("drizzle") });
+  const broken = sqlite.pragma("foreign_key_check") as unknown[];
+  if (broken.length > 0) throw new Error(`${broken.length} foreign keys are broken after the migration of ${file}`);
+  sqlite.pragma("foreign_keys = ON");
+  sqlite.exec(readFileSync(shipped("server/db/triggers.sql"), "utf8"));
+  return db;
+}
+
+/** Takes the write lock at the start, so that a read followed by a write cannot fail half way. */
+export function writeTx<T>(db: Db, work: (tx: Tx) => T): T {
+  return db.transaction(work, { behavior: "immediate" });
+}
+
+export function closeDb(db: Db): void {
+  db.$client.close();
+}
+
+function dropTriggers(sqlite: Database.Database): void {
+  const names = sqlite.prepare("SELECT name FROM sqlite_master WHERE type = 'trigger'").pluck().all() as string[];
+  for (const name of names) sqlite.exec(`DROP TRIGGER "${name}"`);
+}
+
+/** A file or folder of the project: the same from server/ in development and from dist/server/ when built. */
+function shipped(path: string): string {
+  for (let folder = dirname(fileURLToPath(import.meta.url)); ; folder = dirname(folder)) {
+    if (existsSync(join(folder, "drizzle", "meta", "_journal.json"))) return join(folder, path);
+    if (folder === dirname(folder)) throw new Error(`${path} is not above ${fileURLToPath(import.meta.url)}`);
+  }
+}
