@@ -47,7 +47,7 @@ interface State {
   openedTo: number;
   unfilled: number;
   readonly closedUnits: Set<number>;
-  /** Closed picks for which a reserve was opened: closing their cell again opens none. */
+  /** Positions that another entry stands for already: closing their cell again opens none. */
   readonly replaced: Set<number>;
   readonly opened: Opening[];
   readonly passedOver: PassedOver[];
@@ -65,6 +65,7 @@ function openNext(state: State, because: number | null): void {
       state.opened.push({ position: next.position, because });
       return;
     }
+    state.replaced.add(next.position);
     state.passedOver.push({ position: next.position, unit: next.unit, because });
   }
 }
@@ -76,10 +77,11 @@ function close(state: State, unit: number, opensReserves: boolean): void {
     throw new Problem("pick-not-in-use", `No pick in use is of unit ${unit}. Close a cell that is to be visited.`);
   }
   state.closedUnits.add(unit);
+  if (!opensReserves) return;
   for (const pick of picks) {
     if (state.replaced.has(pick.position)) continue;
     state.replaced.add(pick.position);
-    if (opensReserves) openNext(state, pick.position);
+    openNext(state, pick.position);
   }
 }
 
