@@ -1,9 +1,9 @@
-import { existsSync, readFileSync } from "node:fs";
-import { dirname, join } from "node:path";
-import { fileURLToPath } from "node:url";
+import { readFileSync } from "node:fs";
+import { join } from "node:path";
 import Database from "better-sqlite3";
 import { drizzle } from "drizzle-orm/better-sqlite3";
 import { migrate } from "drizzle-orm/better-sqlite3/migrator";
+import { projectRoot } from "../project.ts";
 import * as accounts from "./schema/accounts.ts";
 import * as area from "./schema/area.ts";
 import * as counts from "./schema/counts.ts";
@@ -31,11 +31,11 @@ export function openDb(file: string) {
 
   dropTriggers(sqlite);
   sqlite.pragma("foreign_keys = OFF"); // a table rebuild would delete the rows that point at it
-  migrate(db, { migrationsFolder: shipped("drizzle") });
+  migrate(db, { migrationsFolder: join(projectRoot(), "drizzle") });
   const broken = sqlite.pragma("foreign_key_check") as unknown[];
   if (broken.length > 0) throw new Error(`${broken.length} foreign keys are broken after the migration of ${file}`);
   sqlite.pragma("foreign_keys = ON");
-  sqlite.exec(readFileSync(shipped("server/db/triggers.sql"), "utf8"));
+  sqlite.exec(readFileSync(join(projectRoot(), "server/db/triggers.sql"), "utf8"));
   return db;
 }
 
@@ -51,12 +51,4 @@ export function closeDb(db: Db): void {
 function dropTriggers(sqlite: Database.Database): void {
   const names = sqlite.prepare("SELECT name FROM sqlite_master WHERE type = 'trigger'").pluck().all() as string[];
   for (const name of names) sqlite.exec(`DROP TRIGGER "${name}"`);
-}
-
-/** A file or folder of the project: the same from server/ in development and from dist/server/ when built. */
-function shipped(path: string): string {
-  for (let folder = dirname(fileURLToPath(import.meta.url)); ; folder = dirname(folder)) {
-    if (existsSync(join(folder, "drizzle", "meta", "_journal.json"))) return join(folder, path);
-    if (folder === dirname(folder)) throw new Error(`${path} is not above ${fileURLToPath(import.meta.url)}`);
-  }
 }

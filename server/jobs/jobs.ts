@@ -1,3 +1,5 @@
+import { existsSync } from "node:fs";
+import { fileURLToPath } from "node:url";
 import { Piscina } from "piscina";
 import { Problem, type ProblemCode, type Question } from "#shared/problem.ts";
 import type { JobName, JobResults, JobTasks } from "./tasks.ts";
@@ -13,8 +15,21 @@ export type JobAnswer<T> =
   | { readonly value: T }
   | { readonly refused: { readonly code: ProblemCode; readonly detail: string; readonly question?: Question } };
 
-export function startJobs(worker: URL, execArgv: string[] = []): Jobs {
-  const pool = new Piscina({ filename: worker.href, minThreads: 1, maxThreads: 2, idleTimeout: 60_000, execArgv });
+/** Starts the pool: the built worker beside the built server, or the source through tsx in development and tests. */
+export function startJobs(): Jobs {
+  const built = new URL("./jobs/worker.js", import.meta.url);
+  const source = new URL("./worker.ts", import.meta.url);
+  const isBuilt = existsSync(fileURLToPath(built));
+  const worker = isBuilt ? built : source;
+  const execArgv = isBuilt ? [] : ["--import", "tsx"];
+  const pool = new Piscina({
+    filename: worker.href,
+    name: "runTask",
+    minThreads: 1,
+    maxThreads: 2,
+    idleTimeout: 60_000,
+    execArgv,
+  });
   return {
     async run(name, task, signal) {
       const answer = (await pool.run({ name, task }, signal ? { signal } : {})) as JobAnswer<never>;

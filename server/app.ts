@@ -1,0 +1,76 @@
+import { randomUUID } from "node:crypto";
+import express, { type Express, Router } from "express";
+import { rateLimit } from "express-rate-limit";
+import helmet from "helmet";
+import { pinoHttp } from "pino-http";
+import { Problem } from "#shared/problem.ts";
+import type { Platform } from "./context.ts";
+import { mountOn } from "./http/mount.ts";
+import { sameOriginOnly } from "./http/origin.ts";
+import { problems } from "./http/problems.ts";
+import { openSessions } from "./http/session.ts";
+import { serveClient } from "./http/static.ts";
+import { routes } from "./routes/routes.ts";
+
+interface AppOptions {
+  readonly sessionSecret: string;
+  readonly https: boolean;
+  /** Folder of the built client; null serves the interface only. */
+  readonly clientFolder: string | null;
+  /** Sign-in attempts a minute from one address. */
+  readonly signInsPerMinute: number;
+}
+
+/** Builds the app without listening, so that a test can drive it over a port of its own. */
+export function createApp(platform: Platform, options: AppOptions): Express {
+  const app = express();
+  app.disable("x-powered-by");
+  app.use(
+    helmet({
+      // Quillet is often reached over plain HTTP on a local network: nothing may insist on HTTPS there.
+      contentSecurityPolicy: {
+        directives: {
+          "default-src": ["'self'"],
+          "img-src": ["'self'", "data:", "blob:"],
+          "style-src": ["'self'", "'unsafe-inline'"],
+          "worker-src": ["'self'", "blob:"],
+          "upgrade-insecure-requests": null,
+        },
+      },
+      strictTransportSecurity: options.https,
+      crossOriginOpenerPolicy: options.https,
+      originAgentCluster: options.https,
+      referrerPolicy: { policy: "strict-origin-when-cross-origin" },
+    }),
+  );
+  app.use(
+    pinoHttp({
+      logger: platform.log,
+      genReqId: () => randomUUID(),
+      redact: ["req.headers.cookie", "req.headers.authorization", 'res.headers["set-cookie"]'],
+    }),
+  );
+  app.use(sameOriginOnly);
+  app.post(
+    "/api/session",
+    rateLimit({
+      windowMs: 60_000,
+      limit: options.signInsPerMinute,
+      standardHeaders: true,
+      legacyHeaders: false,
+      handler: (_req, _res, next) => {
+        next(new Problem("too-many-requests", "Wait a minute, then try to sign in again."));
+      },
+    }),
+  );
+  const api = Router();
+  const sessions = openSessions(platform, { secret: options.sessionSecret, https: options.https });
+  routes(mountOn(api, platform, sessions));
+  app.use(api);
+  app.use("/api", (_req, _res, next) => {
+    next(new Problem("not-found", "See /api/openapi.json for what there is."));
+  });
+  if (options.clientFolder !== null) serveClient(app, options.clientFolder);
+  app.use(problems(platform.log));
+  return app;
+}

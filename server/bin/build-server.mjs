@@ -1,0 +1,14 @@
+// Bundles the server, its worker and the quillet command into dist/server; packages stay outside.
+import { build } from "esbuild";
+
+await build({
+  entryPoints: { main: "server/main.ts", quillet: "server/cli/quillet.ts", "jobs/worker": "server/jobs/worker.ts" },
+  outdir: "dist/server",
+  bundle: true,
+  packages: "external",
+  platform: "node",
+  format: "esm",
+  target: "node20",
+  sourcemap: true,
+  logLevel: "warning",
+});

@@ -1,0 +1,5 @@
+import { ensureBuilt, ensureInstalled, ensureNode } from "./setup.mjs";
+
+ensureNode();
+ensureInstalled();
+ensureBuilt();

@@ -1,0 +1,45 @@
+import { and, asc, desc, eq, isNull } from "drizzle-orm";
+import type { Reader, Tx } from "./open.ts";
+import { members, memberships } from "./schema/accounts.ts";
+import { seasons, surveys, targets } from "./schema/surveys.ts";
+
+export type SurveyRow = typeof surveys.$inferSelect;
+export type SeasonRow = typeof seasons.$inferSelect;
+export type TargetRow = typeof targets.$inferSelect;
+
+export function insertSurvey(tx: Tx, row: SurveyRow, season: SeasonRow, target: TargetRow): void {
+  tx.insert(surveys).values(row).run();
+  tx.insert(seasons).values(season).run();
+  tx.insert(targets).values(target).run();
+}
+
+export function findSurvey(reader: Reader, id: string): SurveyRow | undefined {
+  return reader.select().from(surveys).where(eq(surveys.id, id)).get();
+}
+
+export function surveysOf(reader: Reader, accountId: string): SurveyRow[] {
+  return reader
+    .selectDistinct({ survey: surveys })
+    .from(surveys)
+    .innerJoin(members, eq(members.surveyId, surveys.id))
+    .innerJoin(memberships, eq(memberships.memberId, members.id))
+    .where(and(eq(members.accountId, accountId), isNull(memberships.removedAt), isNull(surveys.archivedAt)))
+    .orderBy(desc(surveys.createdAt))
+    .all()
+    .map((row) => row.survey);
+}
+
+export function seasonsOf(reader: Reader, surveyId: string): SeasonRow[] {
+  return reader.select().from(seasons).where(eq(seasons.surveyId, surveyId)).orderBy(asc(seasons.position)).all();
+}
+
+/** The season in work: the last one. */
+export function currentSeason(reader: Reader, surveyId: string): SeasonRow {
+  const last = seasonsOf(reader, surveyId).at(-1);
+  if (!last) throw new Error(`survey ${surveyId} has no season`);
+  return last;
+}
+
+export function targetsOf(reader: Reader, surveyId: string): TargetRow[] {
+  return reader.select().from(targets).where(eq(targets.surveyId, surveyId)).orderBy(asc(targets.position)).all();
+}

@@ -1,0 +1,20 @@
+import { Problem } from "#shared/problem.ts";
+import type { JobAnswer } from "./jobs.ts";
+import type { JobName, JobResults, JobTasks } from "./tasks.ts";
+
+type Work = { [N in JobName]: (task: JobTasks[N]) => JobResults[N] | Promise<JobResults[N]> };
+
+const work: Work = {
+  ping: ({ text }) => text,
+};
+
+/** Runs one task in a worker thread; a refusal comes back as a value, since errors lose their class on the way. */
+export async function runTask(message: { name: JobName; task: never }): Promise<JobAnswer<unknown>> {
+  try {
+    return { value: await work[message.name](message.task) };
+  } catch (error) {
+    if (!(error instanceof Problem)) throw error;
+    const { code, message: detail, question } = error;
+    return { refused: { code, detail, ...(question ? { question } : {}) } };
+  }
+}

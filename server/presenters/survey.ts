@@ -1,0 +1,57 @@
+import type { Role } from "#shared/access/table.ts";
+import type { Member, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
+import type { MemberRow } from "../db/members.ts";
+import type { SeasonRow, SurveyRow, TargetRow } from "../db/surveys.ts";
+
+interface SurveyParts {
+  readonly survey: SurveyRow;
+  readonly seasons: readonly SeasonRow[];
+  readonly targets: readonly TargetRow[];
+  readonly roles: readonly Role[];
+  readonly stages: readonly StageState[];
+  readonly outline: SurveySummary["outline"];
+  readonly memberId: string | null;
+}
+
+export function presentSurveySummary({ survey, seasons, targets, roles, stages, outline }: SurveyParts): SurveySummary {
+  return {
+    id: survey.id,
+    name: survey.name,
+    target: targets.map((target) => target.plural).join(", "),
+    season: seasons.at(-1)?.name ?? "",
+    roles: [...roles],
+    stages: [...stages],
+    outline,
+    createdAt: survey.createdAt,
+  };
+}
+
+export function presentSurvey(parts: SurveyParts): Survey {
+  const { survey } = parts;
+  return {
+    ...presentSurveySummary(parts),
+    timeZone: survey.timeZone,
+    level: survey.level,
+    safetyNotes: survey.safetyNotes,
+    seasons: parts.seasons.map(({ id, name, position }) => ({ id, name, position })),
+    targets: parts.targets.map(({ id, singular, plural, countingRule, wholeNumbers }) => ({
+      id,
+      singular,
+      plural,
+      countingRule,
+      wholeNumbers,
+    })),
+    memberId: parts.memberId,
+  };
+}
+
+/** One entry a person, with the roles held now. */
+export function presentMembers(rows: readonly MemberRow[]): Member[] {
+  const people = new Map<string, Member>();
+  for (const row of rows) {
+    const known = people.get(row.id);
+    if (known) known.roles.push(row.role);
+    else people.set(row.id, { id: row.id, name: row.name, email: row.email, addedAt: row.addedAt, roles: [row.role] });
+  }
+  return [...people.values()];
+}

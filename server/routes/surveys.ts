@@ -1,0 +1,26 @@
+import * as api from "#shared/api/surveys.ts";
+import type { Mount } from "../http/mount.ts";
+import { presentMembers, presentSurvey, presentSurveySummary } from "../presenters/survey.ts";
+import { addMember } from "../services/add-member.ts";
+import { createSurvey } from "../services/create-survey.ts";
+import { listMembers } from "../services/list-members.ts";
+import { listSurveys, readSurvey } from "../services/read-surveys.ts";
+
+export function surveyRoutes(mount: Mount): void {
+  mount.signedIn(api.listSurveys, (ctx) => ({
+    surveys: listSurveys(ctx.db, ctx.account.id).map(presentSurveySummary),
+  }));
+
+  mount.signedIn(api.createSurvey, (ctx, { body }) =>
+    presentSurvey(readSurvey(ctx.db, createSurvey(ctx, body), ctx.account.id)),
+  );
+
+  mount.survey(api.readSurvey, (ctx) => presentSurvey(readSurvey(ctx.db, ctx.surveyId, ctx.account.id)));
+
+  mount.survey(api.listMembers, (ctx) => ({ members: presentMembers(listMembers(ctx)) }));
+
+  mount.survey(api.addMember, async (ctx, { body }) => {
+    await addMember(ctx, body);
+    return { members: presentMembers(listMembers(ctx)) };
+  });
+}
