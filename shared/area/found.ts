@@ -1,0 +1,21 @@
+import type { Position } from "#shared/projection/transformer.ts";
+
+/** How a file says where its coordinates are; "asked" carries what the file lacks, in a sentence. */
+export type StatedCrs =
+  | { readonly kind: "stated"; readonly text: string; readonly howKnown: string }
+  | { readonly kind: "missing"; readonly why: string };
+
+/** What a reader took from a file, before anything is checked: rings as they came, closed or not. */
+export interface FoundPolygons {
+  readonly format: string;
+  readonly crs: StatedCrs;
+  readonly features: number;
+  /** [polygon][ring][vertex]; the first ring of a polygon is its outer one. */
+  readonly polygons: readonly (readonly (readonly Position[])[])[];
+  readonly others: { readonly points: number; readonly lines: number; readonly empty: number };
+  /** Vertices that had a third or further coordinate. */
+  readonly heights: number;
+  readonly mended: readonly string[];
+  readonly ignored: readonly string[];
+  readonly notes: readonly string[];
+}

@@ -1,0 +1,53 @@
+import { Problem } from "#shared/problem.ts";
+import type { LngLat } from "#shared/units/metric.ts";
+
+export type Magnitude = "degrees" | "metres" | "unknown";
+
+/** A question rides on the refusal that asks it. The next request answers with the same file and `crs` or `layer`. */
+export type AreaQuestion =
+  | {
+      readonly kind: "crs";
+      readonly why: string;
+      readonly looksLike: Magnitude;
+      readonly suggestions: readonly { readonly epsg: number; readonly name: string; readonly note: string }[];
+    }
+  | { readonly kind: "layer"; readonly why: string; readonly layers: readonly string[] }
+  /** Longitude and latitude look exchanged: what the place would be either way; null where it would be no place at all. */
+  | {
+      readonly kind: "axes";
+      readonly why: string;
+      readonly asWritten: LngLat | null;
+      readonly exchanged: LngLat | null;
+    };
+
+/** Answers to the questions, as the client sends them with the file. */
+export interface AreaAnswers {
+  /** An EPSG code as text, a PROJ text or WKT. */
+  readonly crs?: string | undefined;
+  readonly layer?: string | undefined;
+}
+
+/** Asks for the coordinate reference system; nothing is assumed. */
+export function askCrs(why: string, looksLike: Magnitude): Problem {
+  const suggestions =
+    looksLike === "degrees"
+      ? [{ epsg: 4326, name: "WGS 84", note: "longitude and latitude, as GPS units give them" }]
+      : [];
+  const question = { kind: "crs", why, looksLike, suggestions } as const satisfies AreaQuestion;
+  return new Problem("area-question", `${why} Say which coordinate reference system the file is in.`, question);
+}
+
+export function askLayer(layers: readonly string[]): Problem {
+  const why = `The archive holds ${layers.length} layers: ${layers.join(", ")}.`;
+  const question = { kind: "layer", why, layers } as const satisfies AreaQuestion;
+  return new Problem("area-question", `${why} Say which one is the study area.`, question);
+}
+
+export function askAxes(why: string, asWritten: LngLat | null, exchanged: LngLat | null): Problem {
+  const question = { kind: "axes", why, asWritten, exchanged } as const satisfies AreaQuestion;
+  return new Problem(
+    "coordinates-swapped",
+    `${why} Write the file again with longitude (east) first, then latitude (north).`,
+    question,
+  );
+}
