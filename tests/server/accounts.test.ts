@@ -1,0 +1,72 @@
+import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import { readSession, signIn, signOut } from "#shared/api/accounts.ts";
+import { addMember, listMembers, listSurveys, readSurvey } from "#shared/api/surveys.ts";
+import { startTeam, startTestServer, type Team, type TestServer } from "../fixtures/server.ts";
+
+let server: TestServer;
+let team: Team;
+
+beforeAll(async () => {
+  server = await startTestServer();
+  team = await startTeam(server);
+});
+
+afterAll(() => server.stop());
+
+describe("signing in", () => {
+  test("an unknown address and a wrong password get the same refusal", async () => {
+    const client = server.client();
+    const unknown = await client.call(signIn, { body: { email: "nobody@example.org", password: "whatever it is" } });
+    const wrong = await client.call(signIn, { body: { email: "planner@example.org", password: "whatever it is" } });
+    expect(unknown.status).toBe(401);
+    expect(unknown.json).toEqual(wrong.json);
+    expect(unknown.json.code).toBe("sign-in-refused");
+  });
+
+  test("signing out ends the session for a copied cookie too", async () => {
+    const client = await server.person("leaver@example.org");
+    const before = await client.call(readSession);
+    expect(before.json.account?.email).toBe("leaver@example.org");
+    await client.call(signOut);
+    expect((await client.call(readSession)).json.account).toBeNull();
+    expect((await client.call(listSurveys)).json.code).toBe("not-signed-in");
+  });
+
+  test("a write that a browser sends from another site is refused", async () => {
+    const response = await team.planner.fetch("/api/session", {
+      method: "DELETE",
+      headers: { origin: "https://elsewhere.example" },
+    });
+    expect(response.status).toBe(403);
+    expect(((await response.json()) as { code: string }).code).toBe("cross-origin");
+  });
+});
+
+describe("people of a survey", () => {
+  test("a person may hold two roles and stands in the list once", async () => {
+    const params = { surveyId: team.surveyId };
+    await team.planner.call(addMember, { params, body: { email: "lead@example.org", role: "counter" } });
+    const { json } = await team.planner.call(listMembers, { params });
+    const lead = json.members.filter((member) => member.email === "lead@example.org");
+    expect(lead).toHaveLength(1);
+    expect(lead[0]?.roles.toSorted()).toEqual(["counter", "lead"]);
+  });
+
+  test("an owner without a role may add themself, and sees the survey only after that", async () => {
+    const params = { surveyId: team.surveyId };
+    expect((await team.owner.call(readSurvey, { params })).status).toBe(404);
+    const added = await team.owner.call(addMember, { params, body: { email: "owner@example.org", role: "auditor" } });
+    expect(added.status).toBe(200);
+    expect((await team.owner.call(readSurvey, { params })).json.roles).toEqual(["auditor"]);
+  });
+
+  test("an address without an account needs a name and a first password", async () => {
+    const params = { surveyId: team.surveyId };
+    const body = { email: "new@example.org", role: "counter" as const };
+    expect((await team.planner.call(addMember, { params, body })).json.code).toBe("account-not-found");
+    const short = { ...body, newAccount: { name: "New", password: "short" } };
+    expect((await team.planner.call(addMember, { params, body: short })).json.code).toBe("password-too-short");
+    const good = { ...body, newAccount: { name: "New", password: "twelve or more" } };
+    expect((await team.planner.call(addMember, { params, body: good })).status).toBe(200);
+  });
+});
