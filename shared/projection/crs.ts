@@ -68,7 +68,7 @@ export function crsFromEpsg(code: number, lookup: EpsgLookup = noLookup): Crs {
       `EPSG:${code} (${entry.name}) is neither a map projection nor longitude and latitude. Give one of these.`,
     );
   }
-  return inspectDefinition({ text: entry.proj4, epsg: code, name: entry.name });
+  return inspectDefinition({ text: entry.proj4, epsg: code, name: entry.name, bounds: entry.bounds });
 }
 
 /** @throws Problem crs-unsupported unless the system is projected and in metres, which a frame needs. */

@@ -14,6 +14,17 @@ interface Parsed {
   readonly datum?: { readonly datum_type: number };
 }
 
+interface Definition {
+  readonly text: string;
+  readonly epsg: number | null;
+  readonly name: string;
+  /** Area of use in degrees: west, south, east, north. */
+  readonly bounds?: readonly [number, number, number, number] | undefined;
+}
+
+/** About a millimetre. */
+const ROUND_TRIP_DEGREES = 1e-8;
+
 /** proj4's kinds of datum: parameters, a grid file, the same as WGS 84, or nothing known. */
 const SHIFT_3 = 1;
 const SHIFT_7 = 2;
@@ -29,9 +40,10 @@ const WGS84_MINOR_AXIS = 6_356_752.3;
  * shift (ETRS89, NAD83, GDA94 …) are taken as WGS 84, as is usual; they differ from it by less than two metres.
  * @throws Problem crs-unsupported with the reason, crs-unknown when the text cannot be read.
  */
-export function inspectDefinition({ text, epsg, name }: { text: string; epsg: number | null; name: string }): Crs {
+export function inspectDefinition({ text, epsg, name, bounds }: Definition): Crs {
   refuseByText(text, name);
   const parsed = parse(text, name);
+  if (bounds !== undefined) checkRoundTrip(text, name, bounds);
   const kind = parsed.projName === "longlat" || parsed.projName === "identity" ? "geographic" : "projected";
   const note = datumNote(parsed, name);
   if (kind === "geographic") return { text, epsg, name, kind, metresPerUnit: null, note };
@@ -82,6 +94,35 @@ function parse(text: string, name: string): Parsed {
     );
   return parsed;
 }
+
+/** There and back in the middle of the area of use must come home; some shifts with large rotations do not, by metres. */
+function checkRoundTrip(
+  text: string,
+  name: string,
+  [west, south, east, north]: readonly [number, number, number, number],
+): void {
+  const longitude = west <= east ? (west + east) / 2 : (((west + east + 360) / 2 + 180) % 360) - 180;
+  const latitude = (south + north) / 2;
+  const converter = proj4("+proj=longlat +datum=WGS84 +no_defs", text);
+  let back: number[];
+  try {
+    back = converter.inverse(converter.forward([longitude, latitude]));
+  } catch {
+    back = [];
+  }
+  const error = Math.max(Math.abs(remainder(back[0] ?? NaN, longitude)), Math.abs((back[1] ?? NaN) - latitude));
+  if (error <= ROUND_TRIP_DEGREES) return;
+  throw new Problem(
+    "crs-unsupported",
+    `Converting to ${name} and back does not come home, so it cannot be converted exactly here. Convert the file to WGS 84, ETRS89 or NAD83.`,
+  );
+}
+
+/** The difference of two longitudes, in −180 … 180. */
+const remainder = (a: number, b: number): number => {
+  const turn = (a - b) % 360;
+  return turn > 180 ? turn - 360 : turn < -180 ? turn + 360 : turn;
+};
 
 /** A note on how good the datum shift is. @throws Problem crs-unsupported where the shift would be left out. */
 function datumNote(parsed: Parsed, name: string): string | null {
