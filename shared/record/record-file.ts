@@ -232,22 +232,16 @@ export function readRecord(value: unknown): RecordFile {
 }
 
 function issueText(issue: z.core.$ZodIssue, found: unknown): string {
-  switch (issue.code) {
-    case "unrecognized_keys":
-      return `unknown member ${issue.keys.map(shown).join(", ")}`;
-    case "invalid_type":
-      return `expected ${issue.expected}, found ${shown(found)}`;
-    case "invalid_value":
-      return `expected ${issue.values.map((value) => shown(value)).join(" or ")}, found ${shown(found)}`;
-    case "too_small":
-      return `expected at least ${String(issue.minimum)}, found ${shown(found)}`;
-    case "invalid_format":
-      return issue.format === "datetime"
-        ? `expected a time in UTC, found ${shown(found)}`
-        : `${shown(found)} ${issue.message}`;
-    default:
-      return `${shown(found)} is not as the format says`;
+  if (issue.code === "unrecognized_keys") return `unknown member ${issue.keys.map(shown).join(", ")}`;
+  if (issue.code === "invalid_type") return `expected ${issue.expected}, found ${shown(found)}`;
+  if (issue.code === "invalid_value") {
+    return `expected ${issue.values.map((value) => shown(value)).join(" or ")}, found ${shown(found)}`;
   }
+  if (issue.code === "too_small") return `expected at least ${String(issue.minimum)}, found ${shown(found)}`;
+  if (issue.code === "invalid_format" && issue.format === "datetime") {
+    return `expected a time in UTC, found ${shown(found)}`;
+  }
+  return `${shown(found)} ${issue.code === "invalid_format" ? issue.message : "is not as the format says"}`;
 }
 
 function valueAt(value: unknown, path: readonly PropertyKey[]): unknown {
