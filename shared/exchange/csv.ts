@@ -55,6 +55,16 @@ const DELIMITERS = ["\t", ";", ","] as const;
 const DELIMITER_NAMES = { ",": "commas", ";": "semicolons", "\t": "tabs" } as const;
 const LOOK_AT = 20;
 
+/** The first records with something in them; none where the text can't be read with this delimiter. */
+function beginning(text: string, delimiter: string): CsvRecord[] {
+  try {
+    return csvRecords(text, delimiter, LOOK_AT).records.filter((record) => !isEmpty(record));
+  } catch (error) {
+    if (error instanceof Problem) return [];
+    throw error;
+  }
+}
+
 /** The delimiter under which the first lines have most often as many cells as the very first; then the one with more cells. */
 function findDelimiter(text: string): "," | ";" | "\t" {
   let best: { delimiter: "," | ";" | "\t"; agreement: number; width: number } = {
@@ -63,7 +73,7 @@ function findDelimiter(text: string): "," | ";" | "\t" {
     width: 1,
   };
   for (const delimiter of DELIMITERS) {
-    const records = csvRecords(text, delimiter, LOOK_AT).records.filter((record) => !isEmpty(record));
+    const records = beginning(text, delimiter);
     const width = records[0]?.cells.length ?? 1;
     if (width < 2) continue;
     const agreement = records.filter((record) => record.cells.length === width).length / records.length;
@@ -91,12 +101,13 @@ function takeSeparatorLine(text: string): { text: string; linesTaken: number; de
   return { text: text.slice(found[0].length), linesTaken: 1, delimiter };
 }
 
+const tooManyRows = () =>
+  new Problem("too-large", "This table has more than 200,000 rows. Split it and import the parts.");
+
 function readRecords(text: string, delimiter: "," | ";" | "\t", notes: string[]): CsvRecord[] {
   const { records, oddQuotes, unwrapped } = csvRecords(text, delimiter, MOST_ROWS + 2);
   const filled = records.filter((record) => !isEmpty(record));
-  if (records.length > MOST_ROWS + 1) {
-    throw new Problem("too-large", "This table has more than 200,000 rows. Split it and import the parts.");
-  }
+  if (records.length > MOST_ROWS + 1) throw tooManyRows();
   if (filled.length === 0)
     throw new Problem("table-unreadable", "This file holds no table: all of its lines are empty.");
   if (filled.length < records.length) notes.push(`Empty lines left out: ${records.length - filled.length}.`);
@@ -141,6 +152,7 @@ export function readCsv(
   const records = readRecords(text, delimiter, notes);
   if (delimiter !== ",") notes.push(`The cells are separated by ${DELIMITER_NAMES[delimiter]}.`);
   const { header, headerFound, body } = readHeader(records, options.headerIs, notes);
+  if (body.length > MOST_ROWS) throw tooManyRows();
   const narrow = body.filter((record) => record.cells.length < header.length).map((record) => record.line + linesTaken);
   const wide = body.filter((record) => record.cells.length > header.length).map((record) => record.line + linesTaken);
   if (narrow.length > 0) notes.push(`Fewer cells than columns, the rest taken as empty: ${shown(narrow)}.`);
