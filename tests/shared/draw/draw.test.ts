@@ -19,10 +19,11 @@ describe("simple random draws", () => {
   test.each(drawCases.filter((one) => one.stratum === "" && one.generator !== "arc4-text"))(
     "$generator with and without replacement, seed $seed_as_typed, N = $N",
     (one) => {
-      if (one.generator === "arc4-text") return;
+      const { generator } = one;
+      if (generator === "arc4-text") return;
       const frame = { sha256: one.frameSha256, units: one.N };
       const draw = (kind: Design["kind"], n: number) =>
-        only(drawEntries(frame, { kind, n }, one.seed_as_typed, one.generator, 0)).map((entry) => entry.unit);
+        only(drawEntries(frame, { kind, n }, one.seed_as_typed, generator, 0)).map((entry) => entry.unit);
       expect(draw("srs-wr", one.n)).toEqual(one.units_with_replacement);
       expect(draw("srs-wor", one.units_without_replacement.length)).toEqual(one.units_without_replacement);
     },
