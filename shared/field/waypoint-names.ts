@@ -1,6 +1,5 @@
-/** Name lengths that GPS units allow, shortest first: the oldest take 6 characters. */
+/** Name lengths that GPS units allow, shortest first: the oldest take 6 characters. They are offered; any other may be set. */
 export const NAME_LENGTHS = [6, 8, 10, 14, 30] as const;
-export type NameLength = (typeof NAME_LENGTHS)[number];
 
 /** What a waypoint is named by: the cell's label on the map, its unit number in the frame, or its place in the draw order. */
 export const NAME_SCHEMES = ["label", "unit", "order"] as const;
@@ -13,7 +12,8 @@ export interface CellToName {
 }
 
 export interface NameSettings {
-  readonly length: NameLength;
+  /** The most characters that the unit takes. */
+  readonly length: number;
   readonly scheme?: NameScheme;
   readonly prefix?: string;
 }
@@ -99,8 +99,12 @@ function named(cells: readonly CellToName[], settings: Required<NameSettings>) {
  * Names that every GPS unit keeps apart: upper-case letters and digits, prefix first, cut at `length`. A unit that meets
  * two equal names renames one silently, and a crew then stands in the wrong cell; so equal names are clashes, to be
  * settled before anything is exported, and never numbered here.
+ * @throws RangeError for a length that is no whole number of at least 1
  */
 export function waypointNames(cells: readonly CellToName[], settings: NameSettings): WaypointNames {
+  if (!Number.isSafeInteger(settings.length) || settings.length < 1) {
+    throw new RangeError(`a name has at least one character, got ${settings.length}`);
+  }
   const complete = { scheme: "label", prefix: "", ...settings } as const;
   const { names, clashes } = named(cells, complete);
   const notes: string[] = [];

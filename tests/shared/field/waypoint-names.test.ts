@@ -51,6 +51,14 @@ describe("waypoint names", () => {
     ]);
   });
 
+  // A unit that takes 7 characters: AB27000 fits, AB270001 and AB270002 are cut to one.
+  test("any length may be set, and a length of none is a bug", () => {
+    const cells = [cell("AB270001", 1, 1), cell("AB270002", 2, 2)];
+    expect(waypointNames(cells, { length: 7 }).names).toEqual(["AB27000", "AB27000"]);
+    expect(waypointNames(cells, { length: 7 }).nextStep).toMatch("Allow 8 characters");
+    expect(() => waypointNames(cells, { length: 0 })).toThrow("got 0");
+  });
+
   test("a label without letters or digits is no name", () => {
     const named = waypointNames([cell("鸟", 1, 1), cell("B1", 2, 2)], { length: 8 });
     expect(named.clashes).toEqual([{ name: "", labels: ["鸟"] }]);
