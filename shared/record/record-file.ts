@@ -104,9 +104,10 @@ const pickAct = z.strictObject({
   seasonId: id,
   /** From 1 within a draw and season. */
   sequence: z.int(),
-  kind: z.enum(["close", "add"]),
+  /** As shared/field/in-use.ts has them. */
+  kind: z.enum(["close", "close-counted", "reopen", "add"]),
   stratum: text,
-  /** close: the unit whose picks are closed. */
+  /** close, close-counted, reopen: the unit whose picks are meant. */
   unit: z.nullable(unit),
   /** add: how many entries are opened. */
   count: z.nullable(z.int()),

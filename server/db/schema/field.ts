@@ -26,7 +26,10 @@ export const visits = sqliteTable(
   (t) => [unique("visits_cell").on(t.seasonId, t.frameVersionId, t.unit)],
 );
 
-/** Acts that decide which entries are in use, in order: a cell closed, entries added. Append-only. */
+/**
+ * Acts that decide which entries are in use, in order (shared/field/in-use.ts): a cell closed, a counted cell amended to
+ * a closing state, a closed cell counted after all, entries added. Append-only.
+ */
 export const pickActs = sqliteTable(
   "pick_acts",
   {
@@ -37,9 +40,9 @@ export const pickActs = sqliteTable(
       .notNull()
       .references(() => seasons.id),
     sequence: integer().notNull(),
-    kind: text({ enum: ["close", "add"] }).notNull(),
+    kind: text({ enum: ["close", "close-counted", "reopen", "add"] }).notNull(),
     stratum: text().notNull(),
-    /** close: the unit whose picks are closed. */
+    /** close, close-counted, reopen: the unit whose picks are meant. */
     unit: integer(),
     /** add: how many entries are opened. */
     count: integer(),

@@ -1,0 +1,19 @@
+import * as accounts from "#shared/api/accounts.ts";
+import * as area from "#shared/api/area.ts";
+import type { Contract } from "#shared/api/contract.ts";
+import * as counts from "#shared/api/counts.ts";
+import * as draw from "#shared/api/draw.ts";
+import * as field from "#shared/api/field.ts";
+import * as frame from "#shared/api/frame.ts";
+import * as record from "#shared/api/record.ts";
+import * as surveys from "#shared/api/surveys.ts";
+
+/** Whether a thing that a module exports is a contract: schemas and constants stand beside them. */
+function isContract(thing: unknown): thing is Contract {
+  return typeof thing === "object" && thing !== null && "guard" in thing && "answer" in thing && "path" in thing;
+}
+
+/** Every endpoint there is, in the order of the layer words. */
+export const ALL_CONTRACTS: readonly Contract[] = [accounts, surveys, area, frame, draw, field, counts, record].flatMap(
+  (word) => Object.values<unknown>(word).filter(isContract),
+);
