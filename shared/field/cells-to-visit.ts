@@ -1,4 +1,5 @@
 import type { Entry } from "#shared/draw/draw.ts";
+import { groupByUnit } from "./in-use.ts";
 
 /** One cell that a crew goes to, however often it was picked. */
 export interface CellToVisit {
@@ -22,12 +23,7 @@ export function cellsToVisit(
   strata: readonly { readonly stratum: string; readonly inUse: readonly Entry[] }[],
 ): CellToVisit[] {
   return strata.flatMap(({ stratum, inUse }) => {
-    const byUnit = new Map<number, Entry[]>();
-    for (const entry of inUse.toSorted((a, b) => a.position - b.position)) {
-      const known = byUnit.get(entry.unit);
-      if (known === undefined) byUnit.set(entry.unit, [entry]);
-      else known.push(entry);
-    }
+    const byUnit = groupByUnit(inUse.toSorted((a, b) => a.position - b.position));
     return [...byUnit].map(([unit, entries]) => {
       const orders = entries.map((entry) => entry.position);
       const [order = 0] = orders;

@@ -44,6 +44,7 @@ export interface EntriesInUse {
 
 interface State {
   readonly entries: readonly Entry[];
+  readonly byUnit: ReadonlyMap<number, readonly Entry[]>;
   openedTo: number;
   unfilled: number;
   readonly closedUnits: Set<number>;
@@ -51,6 +52,17 @@ interface State {
   readonly replaced: Set<number>;
   readonly opened: Opening[];
   readonly passedOver: PassedOver[];
+}
+
+/** The entries of each unit, in the order given. */
+export function groupByUnit(entries: readonly Entry[]): Map<number, Entry[]> {
+  const byUnit = new Map<number, Entry[]>();
+  for (const entry of entries) {
+    const known = byUnit.get(entry.unit);
+    if (known === undefined) byUnit.set(entry.unit, [entry]);
+    else known.push(entry);
+  }
+  return byUnit;
 }
 
 function openNext(state: State, because: number | null): void {
@@ -72,7 +84,7 @@ function openNext(state: State, because: number | null): void {
 
 function close(state: State, unit: number, opensReserves: boolean): void {
   if (state.closedUnits.has(unit)) return;
-  const picks = state.entries.slice(0, state.openedTo).filter((entry) => entry.unit === unit);
+  const picks = (state.byUnit.get(unit) ?? []).filter((entry) => entry.position <= state.openedTo);
   if (picks.length === 0) {
     throw new Problem("pick-not-in-use", `No pick in use is of unit ${unit}. Close a cell that is to be visited.`);
   }
@@ -118,6 +130,7 @@ export function entriesInUse(entries: readonly Entry[], picks: number, acts: rea
   }
   const state: State = {
     entries,
+    byUnit: groupByUnit(entries),
     openedTo: picks,
     unfilled: 0,
     closedUnits: new Set(),
