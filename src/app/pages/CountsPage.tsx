@@ -1,0 +1,9 @@
+import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+
+export function CountsPage() {
+  return (
+    <ReadingPage title="Counts">
+      <></>
+    </ReadingPage>
+  );
+}

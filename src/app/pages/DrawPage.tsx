@@ -1,0 +1,9 @@
+import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+
+export function DrawPage() {
+  return (
+    <ReadingPage title="Draw">
+      <></>
+    </ReadingPage>
+  );
+}

@@ -1,0 +1,9 @@
+import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+
+export function EstimatePage() {
+  return (
+    <ReadingPage title="Estimate">
+      <></>
+    </ReadingPage>
+  );
+}

@@ -1,0 +1,9 @@
+import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+
+export function FieldPage() {
+  return (
+    <ReadingPage title="Field">
+      <></>
+    </ReadingPage>
+  );
+}

@@ -1,0 +1,9 @@
+import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+
+export function ReplayPage() {
+  return (
+    <ReadingPage title="Replay">
+      <></>
+    </ReadingPage>
+  );
+}

@@ -1,0 +1,25 @@
+import type { Stage } from "#shared/api/surveys.ts";
+
+/** Patterns for the router. */
+export const patterns = {
+  signIn: "/sign-in",
+  surveys: "/surveys",
+  newSurvey: "/surveys/new",
+  survey: "/surveys/:surveyId",
+  people: "/surveys/:surveyId/people",
+  account: "/account",
+  replay: "/replay",
+} as const;
+
+/** Every address of the app, filled in. */
+export const paths = {
+  home: "/surveys",
+  signIn: patterns.signIn,
+  surveys: patterns.surveys,
+  newSurvey: patterns.newSurvey,
+  account: patterns.account,
+  replay: patterns.replay,
+  survey: (surveyId: string) => `/surveys/${encodeURIComponent(surveyId)}`,
+  stage: (surveyId: string, stage: Stage) => `/surveys/${encodeURIComponent(surveyId)}/${stage}`,
+  people: (surveyId: string) => `/surveys/${encodeURIComponent(surveyId)}/people`,
+} as const;
