@@ -1,8 +1,14 @@
 import type { Position } from "#shared/projection/transformer.ts";
 
-/** How a file says where its coordinates are; "asked" carries what the file lacks, in a sentence. */
+/** How a file says where its coordinates are; "missing" carries what it lacks, in a sentence. */
 export type StatedCrs =
-  | { readonly kind: "stated"; readonly text: string; readonly howKnown: string }
+  | {
+      readonly kind: "stated";
+      readonly text: string;
+      readonly howKnown: string;
+      /** False where only the format's rule says it, and the file itself says nothing: then an answer goes before it. */
+      readonly byFile: boolean;
+    }
   | { readonly kind: "missing"; readonly why: string };
 
 /** What a reader took from a file, before anything is checked: rings as they came, closed or not. */

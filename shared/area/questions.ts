@@ -1,4 +1,4 @@
-import { Problem } from "#shared/problem.ts";
+import { Problem, type ProblemCode } from "#shared/problem.ts";
 import type { LngLat } from "#shared/units/metric.ts";
 
 export type Magnitude = "degrees" | "metres" | "unknown";
@@ -18,7 +18,9 @@ export type AreaQuestion =
       readonly why: string;
       readonly asWritten: LngLat | null;
       readonly exchanged: LngLat | null;
-    };
+    }
+  /** Nothing to answer: a place to show on the map beside the refusal. */
+  | { readonly kind: "place"; readonly why: string; readonly at: LngLat };
 
 /** Answers to the questions, as the client sends them with the file. */
 export interface AreaAnswers {
@@ -50,4 +52,10 @@ export function askAxes(why: string, asWritten: LngLat | null, exchanged: LngLat
     `${why} Write the file again with longitude (east) first, then latitude (north).`,
     question,
   );
+}
+
+/** A refusal that is about one place; the client shows it on the map. */
+export function askPlace(code: ProblemCode, why: string, at: LngLat): Problem {
+  const question = { kind: "place", why, at } as const satisfies AreaQuestion;
+  return new Problem(code, why, question);
 }

@@ -1,3 +1,6 @@
+import type { CheckedArea } from "#shared/area/check.ts";
+import type { FoundPolygons } from "#shared/area/found.ts";
+
 /** What an import found, mended and left aside; kept with the file for ever. The same shape as importReport of the API. */
 export interface ImportReport {
   format: string;
@@ -20,4 +23,43 @@ export interface ImportReport {
   mended: string[];
   ignored: string[];
   notes: string[];
+}
+
+export interface ReportInput {
+  readonly found: FoundPolygons;
+  readonly checked: CheckedArea;
+  readonly source: { readonly fileName: string; readonly bytes: number; readonly sha256: string };
+  readonly howKnown: string;
+  readonly notes: readonly string[];
+}
+
+/** Puts an import's facts together; counts are of what was taken, after mending. */
+export function buildReport({ found, checked, source, howKnown, notes }: ReportInput): ImportReport {
+  const { crs, polygons } = checked.area;
+  const rings = polygons.flat();
+  const [west, south, east, north] = checked.bounds;
+  return {
+    format: found.format,
+    ...source,
+    crs: { name: crs.name, epsg: crs.epsg, text: crs.text, howKnown },
+    features: found.features,
+    parts: polygons.length,
+    rings: rings.length,
+    holes: rings.length - polygons.length,
+    vertices: rings.reduce((sum, ring) => sum + ring.length, 0),
+    geodesicAreaM2: checked.geodesicAreaM2,
+    bounds: [west, south, east, north],
+    mended: [...checked.mended],
+    ignored: [...found.ignored, ...leftAside(found)],
+    notes: [...notes],
+  };
+}
+
+function leftAside({ others, heights }: FoundPolygons): string[] {
+  const told: string[] = [];
+  if (others.points > 0) told.push(`${others.points} ${others.points === 1 ? "point" : "points"}, which are no area.`);
+  if (others.lines > 0) told.push(`${others.lines} ${others.lines === 1 ? "line" : "lines"}, which are no area.`);
+  if (others.empty > 0) told.push(`${others.empty} ${others.empty === 1 ? "feature" : "features"} without a geometry.`);
+  if (heights > 0) told.push(`The heights of ${heights} ${heights === 1 ? "vertex" : "vertices"}.`);
+  return told;
 }
