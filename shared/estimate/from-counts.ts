@@ -1,5 +1,14 @@
-import type { CellCount } from "#shared/counts/count.ts";
-import type { EstimateResult, EstimatedDesign, LimitKind } from "./result.ts";
+import { NOT_VISITED, checkValue, valueOf, type CellCount } from "#shared/counts/count.ts";
+import { Problem } from "#shared/problem.ts";
+import { distributionOf } from "./distribution.ts";
+import { farAbove } from "./far-above.ts";
+import { allZeroLimits } from "./limits-all-zero.ts";
+import { missingBounds } from "./missing-bounds.ts";
+import { carefulSum } from "./moments.ts";
+import { precisionOf, quantities } from "./quantities.ts";
+import { ESTIMATE_FORMAT, type EstimateResult, type EstimatedDesign, type LimitKind } from "./result.ts";
+import { srsEstimate, type SimpleRandomEstimate } from "./simple-random.ts";
+import { countedOutOfOrder, missingPicks, stateNumbers } from "./states.ts";
 
 /** One entry of the draw. */
 export interface Pick {
@@ -29,6 +38,122 @@ export interface EstimateInput {
   readonly limits: LimitKind;
 }
 
+/** A pick with the number that it brings into the estimate. */
+export interface ValuedPick extends Pick {
+  readonly value: number;
+}
+
+const distinctUnits = (picks: readonly Pick[]): number => new Set(picks.map((pick) => pick.unit)).size;
+
+function checkInput({ units, picks, closedPicks }: EstimateInput): void {
+  const orders = new Set<number>();
+  for (const { order, unit } of [...picks, ...closedPicks]) {
+    if (!Number.isSafeInteger(unit) || unit < 1 || unit > units) {
+      throw new Problem("estimate-impossible", `Pick ${order} is of unit ${unit}; the frame has units 1 to ${units}.`);
+    }
+    if (orders.has(order)) throw new RangeError(`pick ${order} stands twice among the picks`);
+    orders.add(order);
+  }
+}
+
+function valuedPicks(picks: readonly Pick[], counts: ReadonlyMap<number, CellCount>): ValuedPick[] {
+  return picks.flatMap((pick) => {
+    const read = valueOf(counts.get(pick.unit) ?? NOT_VISITED);
+    return read.known ? [{ ...pick, value: checkValue(read.value) }] : [];
+  });
+}
+
+function estimateOf(input: EstimateInput, valued: readonly ValuedPick[]): SimpleRandomEstimate {
+  const values = valued.map((pick) => pick.value);
+  return srsEstimate({ design: input.design, units: input.units, values, distinct: distinctUnits(valued) });
+}
+
+/** The sum over distinct cells: what was seen, each cell once. */
+function numberSeen(valued: readonly ValuedPick[]): number {
+  const byUnit = new Map(valued.map((pick) => [pick.unit, pick.value]));
+  return carefulSum([...byUnit.values()].sort((a, b) => a - b));
+}
+
+/** The estimate again with the counts that were amended away, so that both can be shown. */
+function withAmendedAsCounted(
+  input: EstimateInput,
+  valued: readonly ValuedPick[],
+): EstimateResult["withAmendedAsCounted"] {
+  const back = [...input.picks, ...input.closedPicks].flatMap((pick): ValuedPick[] => {
+    const value = input.countedBefore.get(pick.unit);
+    const known = valueOf(input.counts.get(pick.unit) ?? NOT_VISITED).known;
+    return value === undefined || known ? [] : [{ ...pick, value: checkValue(value) }];
+  });
+  if (back.length === 0) return { kind: "none-amended" };
+  const estimate = estimateOf(input, [...valued, ...back]);
+  const error = estimate.standardErrorOfMean;
+  return {
+    kind: "amended",
+    picks: back.length,
+    mean: estimate.mean,
+    total: input.units * estimate.mean,
+    standardErrorOfTotal: error.kind === "known" ? { kind: "known", value: input.units * error.value } : error,
+  };
+}
+
+/** Upper limits under a model: where all is zero and not every cell was seen. */
+function allZero(input: EstimateInput, seen: number, distinct: number): EstimateResult["allZero"] {
+  if (seen > 0 || distinct >= input.units) return { kind: "not-all-zero" };
+  return allZeroLimits(input.units, distinct, input.level);
+}
+
+/**
+ * The whole estimate of a simple random draw from its picks and their counts: total, mean and density with their
+ * precision, the picks that have no number and what they leave open, and the distribution of the counts. A pure function
+ * of its input, whatever the order of picks: a record is replayed by calling it again.
+ *
+ * Each pick enters with its cell's number, a repeat as often as it was picked. A cell that is not in the population enters
+ * as 0. Picks without a value are left out and named; the estimate takes them to be like the rest.
+ * @throws Problem `estimate-impossible` while there is no count at all, for repeats without replacement and units that the
+ * frame doesn't have; `input-invalid` for a level, N or area that cannot be.
+ */
 export function estimateFromCounts(input: EstimateInput): EstimateResult {
-  throw new RangeError(`not built yet: ${input.design}`);
+  checkInput(input);
+  const valued = valuedPicks(input.picks, input.counts);
+  if (valued.length === 0) {
+    throw new Problem(
+      "estimate-impossible",
+      `None of the ${input.picks.length} picks has a count. Enter counts first.`,
+    );
+  }
+  const estimate = estimateOf(input, valued);
+  const values = valued.map((pick) => pick.value);
+  const distinctCells = distinctUnits(valued);
+  const seen = numberSeen(valued);
+  const precision = precisionOf(estimate, input.level);
+  const missing = missingPicks(input);
+  return {
+    format: ESTIMATE_FORMAT,
+    design: input.design,
+    estimator: "expansion",
+    units: input.units,
+    picksInUse: input.picks.length,
+    picksCounted: valued.length,
+    distinctCells,
+    cellsInUse: distinctUnits(input.picks),
+    countIn: input.countIn,
+    level: input.level,
+    declaredLimits: input.limits,
+    complete: estimate.complete,
+    sampleVariance: estimate.variance,
+    degreesOfFreedom: estimate.degreesOfFreedom,
+    tQuantile: precision.t,
+    coefficientOfVariation: precision.coefficientOfVariation,
+    logNormalFactor: precision.logNormalFactor,
+    ...quantities(estimate, precision, input.units, input.areaM2),
+    allZero: allZero(input, seen, distinctCells),
+    seen,
+    states: stateNumbers(input),
+    missing,
+    missingBounds: missing.length === 0 ? { kind: "none-missing" } : missingBounds(input.units, values, missing.length),
+    countedOutOfOrder: countedOutOfOrder(input),
+    withAmendedAsCounted: withAmendedAsCounted(input, valued),
+    farAbove: farAbove(input.units, valued),
+    distribution: distributionOf(values),
+  };
 }

@@ -56,6 +56,7 @@ export interface MissingPick {
 
 /** What the missing picks leave open: the total if each of them held none, and if each held a high count. */
 export interface MissingBounds {
+  readonly kind: "bounds";
   readonly picks: number;
   readonly atZero: number;
   /** The 95th percentile of the counts in use. */
@@ -65,6 +66,7 @@ export interface MissingBounds {
 
 /** Upper limits of the total where every count is zero, under a Poisson model. */
 export interface AllZeroLimits {
+  readonly kind: "all-zero";
   readonly model: "poisson";
   /** Distinct cells in which none was found. */
   readonly cells: number;
@@ -102,6 +104,7 @@ export interface Distribution {
 
 /** A count at least ten times the next largest: kept, and named with what it does to the total. */
 export interface FarAbove {
+  readonly kind: "far-above";
   readonly unit: number;
   readonly label: string;
   readonly value: number;

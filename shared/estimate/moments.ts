@@ -1,0 +1,43 @@
+/**
+ * A sum that keeps what rounding drops (Neumaier 1974): each addition's exact error goes into a second sum that is
+ * added at the end. The result's relative error stays near 2⁻⁵² for numbers of one sign.
+ */
+export function carefulSum(values: Iterable<number>): number {
+  let sum = 0;
+  let dropped = 0;
+  for (const value of values) {
+    const next = sum + value;
+    dropped += Math.abs(sum) >= Math.abs(value) ? sum - next + value : value - next + sum;
+    sum = next;
+  }
+  return sum + dropped;
+}
+
+export interface Moments {
+  readonly mean: number;
+  /** Σ(y − ȳ)²/(n − 1); "undefined" for a single value. */
+  readonly variance: number | "undefined";
+}
+
+/**
+ * Mean ȳ = Σy/n and variance s² = Σ(y − ȳ)²/(n − 1), without cancellation: the values are shifted by their middle one
+ * first, then s² = (Σd² − (Σd)²/n)/(n − 1) with d the distance from the shifted mean, so that Σd is only rounding
+ * (two-pass algorithm with correction: Chan, Golub & LeVeque 1983). Values are sorted first: their order changes nothing.
+ * @throws RangeError for no values, or one that is not finite.
+ */
+export function moments(values: readonly number[]): Moments {
+  const wrong = values.find((value) => !Number.isFinite(value));
+  if (wrong !== undefined) throw new RangeError(`moments need finite values, got ${wrong}`);
+  const sorted = values.toSorted((a, b) => a - b);
+  const n = sorted.length;
+  const shift = sorted[Math.floor(n / 2)];
+  if (shift === undefined) throw new RangeError("moments need at least one value, got none");
+  const mean = carefulSum(sorted) / n;
+  if (n === 1) return { mean, variance: "undefined" };
+  const shifted = sorted.map((value) => value - shift);
+  const shiftedMean = carefulSum(shifted) / n;
+  const distances = shifted.map((value) => value - shiftedMean);
+  const left = carefulSum(distances);
+  const squares = carefulSum(distances.map((distance) => distance * distance));
+  return { mean, variance: Math.max(0, (squares - (left * left) / n) / (n - 1)) };
+}
