@@ -1,9 +1,10 @@
-import { useVirtualizer } from "@tanstack/react-virtual";
 import { useRef, type KeyboardEvent, type ReactNode } from "react";
 import { classes } from "./classes.ts";
 import type { DataColumn, RowTone } from "./data-column.ts";
-import { SortableHead } from "./SortableHead.tsx";
+import { DataTableHead } from "./DataTableHead.tsx";
+import { DataTableRow } from "./DataTableRow.tsx";
 import { useSortedRows, type SortState } from "./use-sorted-rows.ts";
+import { useVisibleLines } from "./use-visible-lines.ts";
 
 interface DataTableProps<Row extends object> {
   /** What the table holds, for screen readers. */
@@ -24,11 +25,15 @@ interface DataTableProps<Row extends object> {
   readonly dense?: boolean;
 }
 
-const VIRTUAL_ABOVE = 200;
+interface Line<Row> {
+  readonly key: string;
+  readonly id: string;
+  readonly row: Row;
+  readonly index: number;
+  readonly detail: ReactNode;
+}
 
-type Line<Row> = { readonly key: string; readonly row: Row; readonly index: number; readonly detail: ReactNode };
-
-/** Moves the focus to the next or previous row, first or last; true where the key was one of those. */
+/** Moves the focus to the next or previous row, the first or the last; true where the key was one of those. */
 function moveFocus(
   event: KeyboardEvent<HTMLTableRowElement>,
   index: number,
@@ -45,121 +50,86 @@ function moveFocus(
   return true;
 }
 
-/** A sortable table over any number of rows. Lists above 200 rows keep only the rows in sight in the page. */
-export function DataTable<Row extends object>(props: DataTableProps<Row>) {
-  const {
-    caption,
-    columns,
-    rowId,
-    chosen = null,
-    onChoose,
-    tone,
-    detail,
-    initialSort,
-    empty,
-    maxHeight = 560,
-    dense = false,
-  } = props;
-  const { rows, sorted, sortBy } = useSortedRows(props.rows, columns, initialSort);
-  const frame = useRef<HTMLDivElement>(null);
-  const lines: Line<Row>[] = rows.flatMap((row, index) => {
+/** Rows, each with what is open below it as a line of its own. */
+function linesOf<Row>(
+  rows: readonly Row[],
+  rowId: (row: Row) => string,
+  detail: ((row: Row) => ReactNode) | undefined,
+): Line<Row>[] {
+  return rows.flatMap((row, index) => {
+    const id = rowId(row);
+    const line = { key: id, id, row, index, detail: undefined };
     const below = detail?.(row);
-    const line = { key: rowId(row), row, index, detail: undefined };
     return below === undefined || below === null || below === false
       ? [line]
-      : [line, { ...line, key: `${line.key}/detail`, detail: below }];
+      : [line, { ...line, key: `${id}/detail`, detail: below }];
   });
-  const virtual = lines.length > VIRTUAL_ABOVE;
-  const virtualizer = useVirtualizer({
-    count: lines.length,
-    getScrollElement: () => frame.current,
-    estimateSize: () => 33,
-    overscan: 12,
-    enabled: virtual,
-    getItemKey: (index) => lines[index]?.key ?? index,
-  });
-  const items = virtual ? virtualizer.getVirtualItems() : lines.map((_, index) => ({ index }));
-  const before = virtual ? (virtualizer.getVirtualItems()[0]?.start ?? 0) : 0;
-  const after = virtual ? virtualizer.getTotalSize() - (virtualizer.getVirtualItems().at(-1)?.end ?? 0) : 0;
+}
+
+/** A sortable table over any number of rows. Lists above 200 rows keep only the rows in sight in the page. */
+export function DataTable<Row extends object>(props: DataTableProps<Row>) {
+  const { caption, columns, rowId, chosen = null, onChoose, tone, empty, maxHeight = 560, dense = false } = props;
+  const { rows, sorted, sortBy } = useSortedRows(props.rows, columns, props.initialSort);
+  const frame = useRef<HTMLDivElement>(null);
+  const lines = linesOf(rows, rowId, props.detail);
+  const { virtual, indices, before, after, measure, scrollTo } = useVisibleLines(
+    lines.map((line) => line.key),
+    frame,
+  );
   const focusable = Math.max(
     0,
     rows.findIndex((row) => rowId(row) === chosen),
   );
-  const show = (row: number) => {
-    if (virtual) virtualizer.scrollToIndex(lines.findIndex((line) => line.index === row));
-  };
+  const show = (row: number) => scrollTo(lines.findIndex((line) => line.index === row));
+  const choice = (line: Line<Row>) =>
+    onChoose === undefined
+      ? null
+      : {
+          chosen: line.id === chosen,
+          focusable: line.index === focusable,
+          choose: () => onChoose(line.id, line.row),
+          move: (event: KeyboardEvent<HTMLTableRowElement>) => moveFocus(event, line.index, rows.length, show),
+        };
+  const scrolls = virtual
+    ? { style: { maxHeight }, role: "group", "aria-label": caption, ...(onChoose === undefined && { tabIndex: 0 }) }
+    : {};
   return (
-    <div
-      ref={frame}
-      className="q-table-scroll q-table-sticky"
-      style={virtual ? { maxHeight } : undefined}
-      tabIndex={virtual && onChoose === undefined ? 0 : undefined}
-      role="group"
-      aria-label={virtual ? caption : undefined}
-    >
+    <div ref={frame} className="q-table-scroll q-table-sticky" {...scrolls}>
       <table
         className={classes("q-table", dense && "q-table-dense")}
         role={onChoose === undefined ? undefined : "grid"}
         aria-rowcount={virtual ? rows.length + 1 : undefined}
       >
         <caption className="sr-only">{caption}</caption>
-        <thead className="q-data-head">
-          <tr>
-            {columns.map((column) =>
-              column.sortBy === undefined ? (
-                <th key={column.id} scope="col" className={column.numeric === true ? "q-num" : undefined}>
-                  {column.head}
-                </th>
-              ) : (
-                <SortableHead
-                  key={column.id}
-                  sorted={sorted(column.id)}
-                  onSort={() => sortBy(column.id)}
-                  numeric={column.numeric === true}
-                >
-                  {column.head}
-                </SortableHead>
-              ),
-            )}
-          </tr>
-        </thead>
+        <DataTableHead columns={columns} sorted={sorted} sortBy={sortBy} />
         <tbody>
-          {before > 0 && <Gap height={before} columns={columns.length} />}
-          {items.map(({ index }) => {
+          <Gap height={before} columns={columns.length} />
+          {indices.map((index) => {
             const line = lines[index];
             if (line === undefined) return null;
-            return line.detail === undefined ? (
-              <tr
-                key={line.key}
-                ref={virtual ? virtualizer.measureElement : undefined}
-                data-index={index}
-                data-row={line.index}
-                data-tone={tone?.(line.row)}
-                data-pickable={onChoose === undefined ? undefined : ""}
-                aria-rowindex={virtual ? line.index + 2 : undefined}
-                aria-selected={onChoose === undefined ? undefined : line.key === chosen}
-                tabIndex={onChoose === undefined ? undefined : line.index === focusable ? 0 : -1}
-                onClick={() => onChoose?.(line.key, line.row)}
-                onKeyDown={(event) => {
-                  if (onChoose === undefined || event.target !== event.currentTarget) return;
-                  if (event.key === "Enter" || event.key === " ") onChoose(line.key, line.row);
-                  else if (!moveFocus(event, line.index, rows.length, show)) return;
-                  event.preventDefault();
-                }}
-              >
-                {columns.map((column) => (
-                  <td key={column.id} className={column.numeric === true ? "q-num" : undefined}>
-                    {column.cell(line.row)}
-                  </td>
-                ))}
-              </tr>
-            ) : (
-              <tr key={line.key} ref={virtual ? virtualizer.measureElement : undefined} data-index={index}>
+            if (line.detail === undefined) {
+              return (
+                <DataTableRow
+                  key={line.key}
+                  ref={measure}
+                  row={line.row}
+                  id={line.id}
+                  index={line.index}
+                  line={index}
+                  columns={columns}
+                  tone={tone?.(line.row)}
+                  choice={choice(line)}
+                  numbered={virtual}
+                />
+              );
+            }
+            return (
+              <tr key={line.key} ref={measure} data-index={index}>
                 <td colSpan={columns.length}>{line.detail}</td>
               </tr>
             );
           })}
-          {after > 0 && <Gap height={after} columns={columns.length} />}
+          <Gap height={after} columns={columns.length} />
           {rows.length === 0 && empty !== undefined && (
             <tr>
               <td colSpan={columns.length}>{empty}</td>
@@ -173,6 +143,7 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
 
 /** The room of the rows out of sight. */
 function Gap({ height, columns }: { readonly height: number; readonly columns: number }) {
+  if (height <= 0) return null;
   return (
     <tr aria-hidden="true">
       <td colSpan={columns} style={{ height, padding: 0, border: 0 }} />

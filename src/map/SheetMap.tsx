@@ -1,0 +1,120 @@
+import "leaflet/dist/leaflet.css";
+import { useId, useMemo, useRef, useState, type ReactNode } from "react";
+import type { LngLatOf } from "./planes.ts";
+import { SheetBorder } from "./SheetBorder.tsx";
+import { SheetContext, type Sheet, type SheetSlot } from "./sheet-context.ts";
+import { SheetFoot } from "./SheetFoot.tsx";
+import type { PlaneBounds } from "./sheet-geometry.ts";
+import { SheetGrid } from "./SheetGrid.tsx";
+import { marginsFor } from "./sheet-margins.ts";
+import { SheetTools } from "./SheetTools.tsx";
+import { useElementSize } from "./use-element-size.ts";
+import { usePlanarMap, type PlanarMap } from "./use-planar-map.ts";
+import { usePress } from "./use-press.ts";
+
+interface SheetMapProps {
+  /** What the sheet shows, for screen readers; the same is in a table or list beside it. */
+  readonly label: string;
+  /** The area to show whole, in metres of the plane. */
+  readonly bounds: PlaneBounds;
+  /** The plane's CRS; null for a plane of its own before one is chosen: then only the graticule is drawn. */
+  readonly crsName: string | null;
+  readonly lngLatOf?: LngLatOf | undefined;
+  /** Below the sheet: LegendEntry elements. */
+  readonly legend?: ReactNode;
+  /** Height in px; without it the sheet takes the height of its place. */
+  readonly height?: number | undefined;
+  /** Layers: AreaOutline, FrameCellsLayer, PicksLayer, CountsLayer … */
+  readonly children?: ReactNode;
+}
+
+const UPPER_SLOTS: readonly SheetSlot[] = ["hole", "fill", "drawn", "boundary", "figures", "chosen"];
+
+/** px from the view's anchor to px of the sheet. */
+function shiftOf({ view, window }: PlanarMap): string {
+  return `translate(${(view.anchorEast - window.west) * window.scale} ${(window.north - view.anchorNorth) * window.scale})`;
+}
+
+/** What the layers are told, once map and slots are there; the same object until the view changes. */
+function useSheetValue(
+  planar: PlanarMap | null,
+  under: SVGSVGElement | null,
+  over: SVGSVGElement | null,
+): Sheet | null {
+  const id = useId().replaceAll(":", "");
+  const map = planar?.map;
+  const view = planar?.view;
+  const onPress = usePress(map);
+  return useMemo(() => {
+    if (map === undefined || view === undefined || under === null || over === null) return null;
+    const slot = (name: SheetSlot) =>
+      (name === "tint" ? under : over).querySelector<SVGGElement>(`g[data-slot="${name}"]`);
+    return { map, view, slot, id, onPress };
+  }, [map, view, under, over, id, onPress]);
+}
+
+/** The map as a printed sheet: neat line, alternating bar, figures in the margin, scale bar, north, legend; it needs no base map and no network. */
+export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, children }: SheetMapProps) {
+  const paper = useRef<HTMLDivElement>(null);
+  const container = useRef<HTMLDivElement>(null);
+  const [under, setUnder] = useState<SVGSVGElement | null>(null);
+  const [over, setOver] = useState<SVGSVGElement | null>(null);
+  const size = useElementSize(paper);
+  const margins = marginsFor(size.width, lngLatOf !== undefined);
+  const planar = usePlanarMap(container, bounds);
+  const sheet = useSheetValue(planar, under, over);
+  const seen = planar?.window;
+  const shift = planar === null ? undefined : shiftOf(planar);
+  const inMetres = crsName !== null;
+  return (
+    <figure className="q-sheet" style={height === undefined ? undefined : { height }} aria-label={label}>
+      <div ref={paper} className="q-sheet-paper">
+        <div
+          className="q-sheet-inner"
+          style={{ left: margins.left, right: margins.right, top: margins.top, bottom: margins.bottom }}
+        >
+          <svg ref={setUnder} className="q-sheet-under" aria-hidden="true">
+            {seen !== undefined && <SheetGrid window={seen} inMetres={inMetres} lngLatOf={lngLatOf} />}
+            <g transform={shift}>
+              <g data-slot="tint" />
+            </g>
+          </svg>
+          <div
+            ref={container}
+            className="q-sheet-map"
+            role="application"
+            aria-label={`${label}. Arrow keys move the map, plus and minus zoom.`}
+          />
+          <svg ref={setOver} className="q-sheet-over" role="group" aria-label={`On the map: ${label}`}>
+            <g transform={shift}>
+              {UPPER_SLOTS.map((name) => (
+                <g key={name} data-slot={name} />
+              ))}
+            </g>
+          </svg>
+        </div>
+        {seen !== undefined && (
+          <SheetBorder window={seen} margins={margins} size={size} inMetres={inMetres} lngLatOf={lngLatOf} />
+        )}
+        {planar !== null && (
+          <SheetTools
+            map={planar.map}
+            onWhole={() => container.current?.dispatchEvent(new Event("sheet:whole"))}
+            margins={margins}
+            compact={margins.compact}
+          />
+        )}
+        {sheet !== null && <SheetContext value={sheet}>{children}</SheetContext>}
+      </div>
+      {seen !== undefined && (
+        <SheetFoot
+          scale={seen.scale}
+          compact={margins.compact}
+          crsName={crsName}
+          legend={legend}
+          inSight={inMetres ? seen : null}
+        />
+      )}
+    </figure>
+  );
+}
