@@ -9,6 +9,7 @@ interface Parsed {
   readonly units?: string;
   readonly axis?: string;
   readonly nadgrids?: string;
+  readonly datumCode?: string;
   readonly a?: number;
   readonly b?: number;
   readonly datum?: { readonly datum_type: number };
@@ -127,7 +128,8 @@ const remainder = (a: number, b: number): number => {
 /** A note on how good the datum shift is. @throws Problem crs-unsupported where the shift would be left out. */
 function datumNote(parsed: Parsed, name: string): string | null {
   const type = parsed.datum?.datum_type ?? NOTHING_KNOWN;
-  if (parsed.nadgrids === "@null") return null;
+  // "+nadgrids=@null" says that latitudes on the sphere are those of WGS 84 (Web Mercator); proj4 notes it so.
+  if (parsed.datumCode === "none") return null;
   if (type === SHIFT_GRID) throw gridMissing(name, parsed.nadgrids ?? "a grid file");
   if (type === NOTHING_KNOWN && !isModernEllipsoid(parsed)) {
     throw new Problem(
