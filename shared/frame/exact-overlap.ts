@@ -39,7 +39,9 @@ export function clippedOverlap(edge: UpwardEdge, left: number, width: number, bo
   const numerator =
     2n * wide * (p - low * deltaX) * deltaY + (q - p) * (2n * (right - x1) * deltaY - (p + q - 2n * base));
   const denominator = deltaX * deltaY;
-  return numerator % denominator === 0n ? { numerator: numerator / denominator, denominator: 1n } : { numerator, denominator };
+  return numerator % denominator === 0n
+    ? { numerator: numerator / denominator, denominator: 1n }
+    : { numerator, denominator };
 }
 
 /** The sum; whole numbers are added first, fractions pairwise, so that denominators stay short. */

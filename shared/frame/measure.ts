@@ -1,5 +1,6 @@
 import type { PlaneArea } from "#shared/geometry/rings.ts";
 import { Problem } from "#shared/problem.ts";
+import { WHOLE_CELL } from "#shared/units/metric.ts";
 import { checkCellSpec, type CellSpec } from "./cell-spec.ts";
 import type { MeasuredCells } from "./cells.ts";
 import { crossCentreLines } from "./centre-crossings.ts";
@@ -65,6 +66,7 @@ export function measureCells(area: PlaneArea, spec: CellSpec, onProgress?: Progr
     rowStart[i + 1] = pieces.count;
   }
   if (doubtful.row.length > 0) settleDoubtful(rings, lattice, doubtful, pieces);
+  checkShares(pieces.share, pieces.count);
   return {
     spec: checked,
     leftColumn: lattice.leftColumn,
@@ -78,4 +80,11 @@ export function measureCells(area: PlaneArea, spec: CellSpec, onProgress?: Progr
     centreIn: pieces.centreIn.slice(0, pieces.count),
     twiceAreaMm2: rings.twiceAreaMm2,
   };
+}
+
+function checkShares(share: Int32Array, count: number): void {
+  for (let piece = 0; piece < count; piece += 1) {
+    const value = share[piece] ?? 0;
+    if (value < 0 || value > WHOLE_CELL) throw new RangeError(`the rings overlap: a cell has ${value} billionths`);
+  }
 }

@@ -32,8 +32,7 @@ const DOUBT_OF_DIVISION = 1e-6;
  * the cell's side, which makes a piece's area off by at most 12·2⁻⁵³ of the cell; each addition rounds a sum of at most m
  * cells. With 2⁻⁵³·10⁹ ≈ 1.1e-7: less than 1.4e-6·m + 2.3e-7·m².
  */
-const doubtOf = (parts: number, partsSquared: number): number =>
-  DOUBT_OF_DIVISION + 2e-6 * parts + 4e-7 * partsSquared;
+const doubtOf = (parts: number, partsSquared: number): number => DOUBT_OF_DIVISION + 2e-6 * parts + 4e-7 * partsSquared;
 
 /**
  * One row from west to east. `cover` is the height of the row, with sign, that the boundary has taken so far: 0 outside,
@@ -60,7 +59,7 @@ export function sweepRow(
   let partsSquared = 0;
   let centreIn = 0;
   let next = -1;
-  for (let i = sorted.rowStart[row] ?? 0; i < end; ) {
+  for (let i = sorted.rowStart[row] ?? 0; i < end;) {
     const column = records.column[sorted.order[i] ?? 0] ?? 0;
     if (column !== next) {
       // Between touched cells nothing is open: the cover is a whole number of heights, and earlier roundings are gone.

@@ -56,9 +56,19 @@ function walkCorners(
         addPiece(records, column, row, cover, cover * (x1 - left + (x2 - left)), 0);
       } else if (y1 < y2) walkUp(x1, y1, x2, y2, upSign, lattice, records);
       else walkUp(x2, y2, x1, y1, -upSign, lattice, records);
-    }
+    } else walkLevel(Math.min(x1, x2), Math.max(x1, x2), y1, lattice, records);
     x1 = x2;
     y1 = y2;
+  }
+}
+
+/** A level edge adds nothing, but the cells that it passes through are touched; along a side of cells it is no matter. */
+function walkLevel(west: number, east: number, y: number, lattice: Lattice, records: WalkRecords): void {
+  const { width, height } = lattice;
+  const row = Math.floor(y / height);
+  if (row * height === y) return;
+  for (let column = Math.floor(west / width); column * width < east; column += 1) {
+    addPiece(records, column, row, 0, 0, 0);
   }
 }
 
