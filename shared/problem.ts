@@ -57,6 +57,7 @@ export const PROBLEMS = {
   "reason-needed": { status: 422, title: "A reason is needed" },
   // field
   "cell-not-drawn": { status: 422, title: "This cell is not drawn" },
+  "nothing-to-export": { status: 409, title: "There is no cell to export" },
   "names-clash": { status: 422, title: "Waypoint names clash" },
   "pick-not-in-use": { status: 409, title: "This pick is not in use" },
   "reserves-used-up": { status: 409, title: "No reserve is left" },

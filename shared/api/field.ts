@@ -119,6 +119,8 @@ export const exportWaypoints = contract({
   body: z.object({
     format: z.enum(["gpx", "csv"]),
     nameLength: z.int().check(z.minimum(4), z.maximum(30)),
+    /** What a waypoint is named by; the cell's label where nothing is said. */
+    scheme: z.optional(z.enum(["label", "unit", "order"])),
     prefix: z.string().check(z.trim(), z.maxLength(8), z.regex(/^[A-Za-z0-9]*$/, "holds letters and digits only")),
     /** Only the cells of this member, or null for all. */
     memberId: z.nullable(id),
