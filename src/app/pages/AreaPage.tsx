@@ -1,0 +1,3 @@
+export function AreaPage() {
+  return null;
+}

@@ -1,0 +1,3 @@
+export function FramePage() {
+  return null;
+}

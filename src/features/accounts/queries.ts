@@ -1,0 +1,36 @@
+import { queryOptions, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import { readSession, signIn, signOut, type Session } from "#shared/api/accounts.ts";
+import { call } from "../../api/call.ts";
+import { sessionKey } from "../../api/keys.ts";
+
+export const sessionQuery = queryOptions({
+  queryKey: sessionKey,
+  queryFn: ({ signal }) => call(readSession, { signal }),
+  staleTime: 60_000,
+});
+
+export function useSession() {
+  return useQuery(sessionQuery);
+}
+
+/** Another person's answers must not stay: everything that was asked before is dropped. */
+function useNewSession() {
+  const queries = useQueryClient();
+  return (session: Session) => {
+    queries.removeQueries({ predicate: ({ queryKey }) => queryKey[0] !== sessionKey[0] });
+    queries.setQueryData(sessionKey, session);
+  };
+}
+
+export function useSignIn() {
+  const begin = useNewSession();
+  return useMutation({
+    mutationFn: (body: { email: string; password: string }) => call(signIn, { body }),
+    onSuccess: begin,
+  });
+}
+
+export function useSignOut() {
+  const begin = useNewSession();
+  return useMutation({ mutationFn: () => call(signOut), onSuccess: begin });
+}

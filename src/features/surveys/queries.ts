@@ -1,0 +1,56 @@
+import { queryOptions, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import type * as z from "zod/mini";
+import { addMember, createSurvey, listMembers, listSurveys, readSurvey } from "#shared/api/surveys.ts";
+import { call } from "../../api/call.ts";
+import { surveyKey, surveysKey } from "../../api/keys.ts";
+
+export type NewSurvey = z.input<typeof createSurvey.body>;
+export type NewMember = z.input<typeof addMember.body>;
+
+const surveysQuery = queryOptions({
+  queryKey: surveysKey,
+  queryFn: ({ signal }) => call(listSurveys, { signal }),
+  select: ({ surveys }) => surveys,
+});
+
+export function useSurveys() {
+  return useQuery(surveysQuery);
+}
+
+export function useSurvey(surveyId: string) {
+  return useQuery({
+    queryKey: surveyKey(surveyId),
+    queryFn: ({ signal }) => call(readSurvey, { params: { surveyId }, signal }),
+  });
+}
+
+export function useCreateSurvey() {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (body: NewSurvey) => call(createSurvey, { body }),
+    onSuccess: (survey) => {
+      queries.setQueryData(surveyKey(survey.id), survey);
+      return queries.invalidateQueries({ queryKey: surveysKey });
+    },
+  });
+}
+
+export function useMembers(surveyId: string) {
+  return useQuery({
+    queryKey: surveyKey(surveyId, "people"),
+    queryFn: ({ signal }) => call(listMembers, { params: { surveyId }, signal }),
+    select: ({ members }) => members,
+  });
+}
+
+export function useAddMember(surveyId: string) {
+  const queries = useQueryClient();
+  return useMutation({
+    meta: { keeps: true },
+    mutationFn: (body: NewMember) => call(addMember, { params: { surveyId }, body }),
+    onSuccess: (answer) => {
+      queries.setQueryData(surveyKey(surveyId, "people"), answer);
+      return queries.invalidateQueries({ queryKey: surveyKey(surveyId) });
+    },
+  });
+}
