@@ -11,7 +11,7 @@ import { srsEstimate, type SimpleRandomEstimate } from "./simple-random.ts";
 import { countedOutOfOrder, missingPicks, stateNumbers } from "./states.ts";
 
 /** One entry of the draw. */
-export interface Pick {
+export interface DrawnPick {
   readonly order: number;
   readonly unit: number;
   readonly label: string;
@@ -22,9 +22,9 @@ export interface EstimateInput {
   /** N, the units in the frame. */
   readonly units: number;
   /** The picks in use, in draw order; a cell that was picked twice stands here twice. */
-  readonly picks: readonly Pick[];
+  readonly picks: readonly DrawnPick[];
   /** Closed picks, and reserves that were passed over because they fell on a closed cell. */
-  readonly closedPicks: readonly Pick[];
+  readonly closedPicks: readonly DrawnPick[];
   /** What is known of each unit; a unit that is not in here was not visited yet. */
   readonly counts: ReadonlyMap<number, CellCount>;
   /** Units that were amended from a count to a closed state, with the count that was in force before. */
@@ -39,11 +39,11 @@ export interface EstimateInput {
 }
 
 /** A pick with the number that it brings into the estimate. */
-export interface ValuedPick extends Pick {
+export interface ValuedPick extends DrawnPick {
   readonly value: number;
 }
 
-const distinctUnits = (picks: readonly Pick[]): number => new Set(picks.map((pick) => pick.unit)).size;
+const distinctUnits = (picks: readonly DrawnPick[]): number => new Set(picks.map((pick) => pick.unit)).size;
 
 function checkInput({ units, picks, closedPicks }: EstimateInput): void {
   const orders = new Set<number>();
@@ -56,7 +56,7 @@ function checkInput({ units, picks, closedPicks }: EstimateInput): void {
   }
 }
 
-function valuedPicks(picks: readonly Pick[], counts: ReadonlyMap<number, CellCount>): ValuedPick[] {
+function valuedPicks(picks: readonly DrawnPick[], counts: ReadonlyMap<number, CellCount>): ValuedPick[] {
   return picks.flatMap((pick) => {
     const read = valueOf(counts.get(pick.unit) ?? NOT_VISITED);
     return read.known ? [{ ...pick, value: checkValue(read.value) }] : [];
@@ -98,7 +98,7 @@ function withAmendedAsCounted(
 
 /** Upper limits under a model: where all is zero and not every cell was seen. */
 function allZero(input: EstimateInput, seen: number, distinct: number): EstimateResult["allZero"] {
-  if (seen > 0 || distinct >= input.units) return { kind: "not-all-zero" };
+  if (seen > 0 || distinct >= input.units) return { kind: "not-needed" };
   return allZeroLimits(input.units, distinct, input.level);
 }
 

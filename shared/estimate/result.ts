@@ -149,7 +149,8 @@ export interface EstimateResult {
   readonly mean: Quantity;
   /** Per hectare of the area spoken for. */
   readonly density: ({ readonly kind: "known"; readonly areaM2: number } & Quantity) | None;
-  readonly allZero: AllZeroLimits | { readonly kind: "not-all-zero" };
+  /** not-needed: something was found, or every cell of the frame was counted. */
+  readonly allZero: AllZeroLimits | { readonly kind: "not-needed" };
   /** The number seen: the sum over distinct counted cells. The total can't be lower. */
   readonly seen: number;
   /** How many picks and cells are in each state, those in use and those closed together. */
