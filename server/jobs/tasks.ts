@@ -1,10 +1,54 @@
-/** The kinds of heavy work: what goes in and what comes out. Each runs in server/jobs/worker.ts. */
+import type { CrsChoice } from "#shared/api/area.ts";
+import type { FrameSpec, FrameSummary } from "#shared/api/frame.ts";
+import type { ImportReport } from "#shared/area/report.ts";
+import type { EntriesTask, PlacedEntry } from "./place-entries.ts";
+
+/** The kinds of heavy work: what goes in and what comes out. Each runs in a worker thread (server/jobs/worker.ts). */
 export interface JobTasks {
-  ping: { readonly text: string };
+  "read-area": {
+    readonly name: string;
+    readonly bytes: Uint8Array;
+    readonly answers: { readonly crs?: string | undefined; readonly layer?: string | undefined };
+  };
+  "make-plane": { readonly geometry: string; readonly epsg: number };
+  "seal-frame": {
+    readonly rings: string;
+    readonly spec: FrameSpec;
+    readonly crs: { readonly text: string; readonly epsg: number };
+    readonly source: { readonly sha256: string; readonly crs: string };
+    readonly mending: readonly string[];
+    readonly salt: string;
+  };
+  "place-entries": EntriesTask;
 }
 
 export interface JobResults {
-  ping: string;
+  "read-area": {
+    readonly geometry: string;
+    readonly report: ImportReport;
+    readonly outline: [number, number][][][];
+    readonly outlineSimplified: boolean;
+    readonly suggestedCrs: CrsChoice[];
+  };
+  "make-plane": {
+    readonly crsName: string;
+    readonly crsText: string;
+    readonly rings: string;
+    readonly ringsSha256: string;
+    readonly planeAreaSquareMetres: number;
+    readonly geodesicAreaSquareMetres: number;
+    readonly notes: string[];
+    readonly net: [number, number, number, number][];
+  };
+  "seal-frame": {
+    readonly statement: string;
+    readonly frameSha256: string;
+    readonly listSha256: string;
+    readonly units: number;
+    readonly cells: Uint8Array;
+    readonly summary: FrameSummary;
+  };
+  "place-entries": PlacedEntry[];
 }
 
 export type JobName = keyof JobTasks;

@@ -1,11 +1,18 @@
 import { Problem } from "#shared/problem.ts";
 import type { JobAnswer } from "./jobs.ts";
+import { makePlaneTask } from "./make-plane.ts";
+import { placeEntries } from "./place-entries.ts";
+import { readAreaTask } from "./read-area.ts";
+import { sealFrameTask } from "./seal-frame.ts";
 import type { JobName, JobResults, JobTasks } from "./tasks.ts";
 
 type Work = { [N in JobName]: (task: JobTasks[N]) => JobResults[N] | Promise<JobResults[N]> };
 
 const work: Work = {
-  ping: ({ text }) => text,
+  "read-area": readAreaTask,
+  "make-plane": makePlaneTask,
+  "seal-frame": sealFrameTask,
+  "place-entries": placeEntries,
 };
 
 /** Runs one task in a worker thread; a refusal comes back as a value, since errors lose their class on the way. */

@@ -13,7 +13,10 @@ interface NewAccount {
 }
 
 /** Makes an account; the address must be free. Returns its id. */
-export async function createAccount(platform: Platform, wanted: NewAccount): Promise<string> {
+export async function createAccount(
+  platform: Pick<Platform, "db" | "now" | "random">,
+  wanted: NewAccount,
+): Promise<string> {
   const email = wanted.email.trim().toLowerCase();
   const passwordHash = await hashPassword(wanted.password);
   return writeTx(platform.db, (tx) => {

@@ -65,7 +65,6 @@ export const frameVersion = z.object({
       listSha256: sha256Hex,
       frameSha256: sha256Hex,
       summary: frameSummary,
-      labelColumns: z.int(),
     }),
   ),
   draws: z.int(),
