@@ -58,6 +58,8 @@ export interface TableVerdict {
   readonly notes: readonly string[];
 }
 
+const MOST_NAMED = 4;
+
 const list = (words: readonly (string | number)[]): string =>
   words.length < 2 ? words.join("") : `${words.slice(0, -1).join(", ")} and ${words.at(-1) ?? ""}`;
 
@@ -77,9 +79,12 @@ function besideEachOther(rows: readonly ReadRow[]): ReadRow[] {
         : `The same as row ${first.row}: it enters once.`;
     return rows.map((row) => (later.has(row) ? { ...row, verdict: "same" as const, message: why } : row));
   }
-  const numbers = saying.map((row) => `${row.count === undefined ? "" : countWords(row.count)} in row ${row.row}`);
-  const twice = orders.length > 1 ? `one count serves picks ${list(orders)}. ` : "";
-  const message = `The same cell with different numbers: ${list(numbers)}; ${twice}Say which is the count and which is a recount.`;
+  const numbers = saying
+    .slice(0, MOST_NAMED)
+    .map((row) => `${row.count === undefined ? "" : countWords(row.count)} in row ${row.row}`);
+  const more = saying.length > MOST_NAMED ? [`${saying.length - MOST_NAMED} more`] : [];
+  const twice = orders.length > 1 ? `One count serves picks ${list(orders)}. ` : "";
+  const message = `The same cell with different numbers: ${list([...numbers, ...more])}. ${twice}Say which is the count and which is a recount.`;
   return rows.map((row) => (row.count !== undefined ? { ...row, verdict: "different" as const, message } : row));
 }
 
