@@ -1,0 +1,100 @@
+import type { CellCount } from "#shared/counts/count.ts";
+import { areaSpokenForM2 } from "#shared/estimate/density.ts";
+import { type DrawnPick, estimateFromCounts } from "#shared/estimate/from-counts.ts";
+import type { EstimateResult } from "#shared/estimate/result.ts";
+import type { Entry } from "#shared/draw/draw.ts";
+import type { FrameCells } from "#shared/frame/cells.ts";
+import { labelOf, unitAt } from "#shared/frame/list.ts";
+import type { CountPayload } from "#shared/record/events.ts";
+import type { ReplayRun } from "./check.ts";
+import { type Declared, declaredOf, type StoredDraw } from "./declared.ts";
+import type { RebuiltFrame } from "./frame-rebuilt.ts";
+import { countsStanding, listsStanding } from "./standing.ts";
+
+export interface EstimateOf {
+  readonly seasonId: string;
+  readonly targetId: string;
+  /** As it stood after this event. */
+  readonly until: number;
+}
+
+/**
+ * The estimate again, from the events alone: the season's draw that was live then, its picks in use, the counts in force,
+ * N and the area from the frame made again, level and limits as declared. Null where one of these is not known.
+ * @throws Problem `estimate-impossible` where nothing was counted
+ */
+export function estimateAgain(run: ReplayRun, of: EstimateOf): EstimateResult | null {
+  const declared = liveDrawAt(run, of);
+  const frame = declared === null ? undefined : run.frames.get(declared.draw.frameId);
+  if (declared?.value == null || frame?.cells == null || frame.statement === null) return null;
+  const lists = listsStanding(run, declared, of.until);
+  if (lists.length === 0) return null;
+  const counts = countsStanding(run, { ...of, frameId: declared.draw.frameId }, of.until);
+  const picks = picksOf(frame.cells);
+  return estimateFromCounts({
+    design: declared.value.design.kind,
+    units: frame.cells.units,
+    picks: lists.flatMap(({ use }) => use.inUse.map(picks)),
+    closedPicks: lists.flatMap(({ use, entries }) => [
+      ...use.closed.map(picks),
+      ...use.passedOver.flatMap(({ position }) => entries.slice(position - 1, position).map(picks)),
+    ]),
+    counts: new Map([...counts].map(([unit, { inForce }]) => [unit, cellCount(inForce)])),
+    countedBefore: new Map(
+      [...counts].flatMap(([unit, { countedBefore }]) => (countedBefore === null ? [] : [[unit, countedBefore]])),
+    ),
+    countIn: frame.statement.countIn,
+    areaM2: areaOf(frame.statement, frame.cells),
+    level: Number(declared.value.level),
+    limits: declared.value.limits,
+  });
+}
+
+/** The newest draw of the season that was made and not withdrawn at that event. */
+function liveDrawAt(
+  run: ReplayRun,
+  { seasonId, until }: EstimateOf,
+): (Declared & { readonly draw: StoredDraw }) | null {
+  const made = new Map(run.events.of("draw-made").map(({ sequence, payload }) => [payload.drawId, sequence]));
+  const ended = new Map(run.events.of("draw-withdrawn").map(({ sequence, payload }) => [payload.drawId, sequence]));
+  return (
+    declaredOf(run.record)
+      .flatMap((one) => (one.draw === null || one.stored.seasonId !== seasonId ? [] : [{ ...one, draw: one.draw }]))
+      .findLast(({ draw }) => {
+        const sequence = made.get(draw.id);
+        return sequence !== undefined && sequence <= until && (ended.get(draw.id) ?? Infinity) > until;
+      }) ?? null
+  );
+}
+
+function picksOf(cells: FrameCells): (entry: Entry) => DrawnPick {
+  return ({ position, unit }) => {
+    const { column, row } = unitAt(cells, unit);
+    return { order: position, unit, label: labelOf(cells, column, row) };
+  };
+}
+
+export function cellCount({ state, value }: Pick<CountPayload, "state" | "value">): CellCount {
+  if (state !== "counted") return { state };
+  if (value === null) throw new RangeError("a counted cell has a number");
+  return { state, value };
+}
+
+function areaOf(statement: NonNullable<RebuiltFrame["statement"]>, cells: FrameCells): number {
+  const { widthMm, heightMm } = statement.cells;
+  return areaSpokenForM2({
+    countIn: statement.countIn,
+    units: cells.units,
+    cellAreaMm2: BigInt(widthMm) * BigInt(heightMm),
+    shareSumBillionths: sumOfShares(cells),
+  });
+}
+
+/** Sum of the listed shares, in billionths. */
+function sumOfShares({ first, last, share }: FrameCells): bigint {
+  let sum = 0n;
+  for (const [piece, each] of share.entries()) {
+    sum += BigInt(each) * BigInt((last[piece] ?? 0) - (first[piece] ?? 0) + 1);
+  }
+  return sum;
+}
