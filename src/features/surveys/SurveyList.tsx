@@ -4,7 +4,7 @@ import { formatDay, formatList } from "../../components/ui/format.ts";
 import type { Stage } from "../../components/ui/stage-state.ts";
 import { StageLine } from "../../components/ui/StageLine.tsx";
 import { Table } from "../../components/ui/Table.tsx";
-import { SurveyThumbnail } from "./SurveyThumbnail.tsx";
+import { SmallOutline } from "../../map/SmallOutline.tsx";
 
 /** A survey with what the app knows of it: where it leads, its stations and the one that matters. */
 export interface SurveyRow {
@@ -35,7 +35,7 @@ export function SurveyList({ rows }: { readonly rows: readonly SurveyRow[] }) {
           {rows.map(({ survey, to, stations, note, attention }) => (
             <tr key={survey.id}>
               <td className="q-survey-outline">
-                <SurveyThumbnail outline={survey.outline} />
+                <SmallOutline polygons={survey.outline} degrees />
               </td>
               <td className="q-survey-name">
                 <Link to={to}>{survey.name}</Link>
