@@ -18,17 +18,15 @@ export type JobAnswer<T> =
 /** Starts the pool: the built worker beside the built server, or the source through tsx in development and tests. */
 export function startJobs(): Jobs {
   const built = new URL("./jobs/worker.js", import.meta.url);
-  const source = new URL("./worker.ts", import.meta.url);
-  const isBuilt = existsSync(fileURLToPath(built));
-  const worker = isBuilt ? built : source;
-  const execArgv = isBuilt ? [] : ["--import", "tsx"];
+  const source = new URL("./worker-from-source.mjs", import.meta.url);
+  const worker = existsSync(fileURLToPath(built)) ? built : source;
   const pool = new Piscina({
     filename: worker.href,
     name: "runTask",
     minThreads: 1,
     maxThreads: 2,
     idleTimeout: 60_000,
-    execArgv,
+    execArgv: [],
   });
   return {
     async run(name, task, signal) {

@@ -1,5 +1,5 @@
 import { outlineForMap } from "#shared/area/outline.ts";
-import { suggestFrameCrs } from "#shared/area/suggest.ts";
+import { suggestFrameCrs } from "#shared/projection/suggest.ts";
 import { readArea } from "#shared/exchange/read-area.ts";
 import { epsgLookup } from "./epsg.ts";
 import type { JobResults, JobTasks } from "./tasks.ts";
@@ -13,6 +13,6 @@ export function readAreaTask({ name, bytes, answers }: JobTasks["read-area"]): J
     report: value.report,
     outline: outline.polygons,
     outlineSimplified: outline.simplified,
-    suggestedCrs: suggestFrameCrs(value.area),
+    suggestedCrs: suggestFrameCrs(value.report.bounds),
   };
 }

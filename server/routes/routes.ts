@@ -1,9 +1,19 @@
 import type { Mount } from "../http/mount.ts";
 import { accountRoutes } from "./accounts.ts";
+import { areaRoutes } from "./area.ts";
+import { frameRoutes } from "./frame.ts";
+import { countRoutes } from "./counts.ts";
+import { drawRoutes } from "./draw.ts";
+import { fieldRoutes } from "./field.ts";
 import { surveyRoutes } from "./surveys.ts";
 
 /** Every route there is, in the order of the layer words. */
 export function routes(mount: Mount): void {
   accountRoutes(mount);
   surveyRoutes(mount);
+  areaRoutes(mount);
+  frameRoutes(mount);
+  drawRoutes(mount);
+  fieldRoutes(mount);
+  countRoutes(mount);
 }
