@@ -103,8 +103,8 @@ function isSpike(
 }
 
 function turn(ring: SourceRing, outer: boolean, tally: Tally): SourceRing {
-  const counterClockwise = twiceSignedArea(ring) > 0;
-  if (counterClockwise === outer) return ring;
+  const size = twiceSignedArea(ring);
+  if (size === 0 || size > 0 === outer) return ring;
   tally.turned += 1;
   return ring.toReversed();
 }

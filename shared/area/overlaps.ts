@@ -99,7 +99,7 @@ function overlappingPair(area: ImportedArea, plane: Crs): readonly [number, numb
 
 /** Lambert's azimuthal equal-area projection about the middle: areas are true, and any place has one. */
 function equalAreaPlane([west, south, east, north]: Bounds): Crs {
-  const text = `+proj=laea +lat_0=${(south + north) / 2} +lon_0=${(west + east) / 2} +datum=WGS84 +units=m +no_defs`;
+  const text = `+proj=laea +lat_0=${(south + north) / 2} +lon_0=${(west + east) / 2} +x_0=0 +y_0=0 +datum=WGS84 +units=m +no_defs`;
   return { text, epsg: null, name: "an equal-area plane", kind: "projected", metresPerUnit: 1, note: null };
 }
 

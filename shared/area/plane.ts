@@ -54,13 +54,14 @@ export function projectedRings(
   onProgress?: (share: number) => void,
 ): { rings: Ring[]; added: number } {
   const { forward } = transformer(area.crs, frameCrs);
+  const sameSystem = area.crs.text === frameCrs.text;
   const source = splitAtTouchingVertices(area).flat();
   const before = area.polygons.flat().reduce((sum, ring) => sum + ring.length, 0);
   const total = source.reduce((sum, ring) => sum + ring.length, 0);
   let done = 0;
   let made = 0;
   const rings = source.map((ring) => {
-    const plane = projectRing(ring, forward);
+    const plane = sameSystem ? ring.flat() : projectRing(ring, forward);
     done += ring.length;
     made += plane.length / 2;
     onProgress?.(done / total);

@@ -44,7 +44,7 @@ export function crsFromText(text: string, lookup: EpsgLookup = noLookup): Crs {
     return crsFromEpsg(4326, lookup);
   const code = codeIn(cleaned);
   if (code !== null) return crsFromEpsg(code, lookup);
-  if (/^\+|\+proj=/.test(cleaned)) return crsFromDefinition(cleaned.replace(/\s+/g, " "), null);
+  if (/^\+|\+proj=/.test(cleaned)) return crsFromDefinition(withOrigin(cleaned.replace(/\s+/g, " ")));
   if (/^(PROJCS|GEOGCS|COMPD_CS|PROJCRS|GEOGCRS|GEODCRS|GEODETICCRS|PROJECTEDCRS)\s*\[/i.test(cleaned))
     return crsFromWkt(cleaned, lookup);
   throw new Problem(
@@ -97,10 +97,16 @@ function codeIn(text: string): number | null {
   return match?.[1] === undefined ? null : Number(match[1]);
 }
 
-function crsFromDefinition(text: string, epsg: number | null): Crs {
+/** PROJ takes a missing false origin as zero; the converter here wants it written. */
+function withOrigin(text: string): string {
+  const missing = ["+x_0", "+y_0"].filter((key) => !text.includes(key));
+  return /\+proj=(longlat|latlong|utm)\b/.test(text) ? text : [text, ...missing.map((key) => `${key}=0`)].join(" ");
+}
+
+function crsFromDefinition(text: string): Crs {
   const title = /\+title=(.*?)(?=\s\+|$)/.exec(text)?.[1];
   const projection = /\+proj=(\S+)/.exec(text)?.[1] ?? "unknown projection";
-  return inspectDefinition({ text, epsg, name: title ?? `system given as PROJ text (${projection})` });
+  return inspectDefinition({ text, epsg: null, name: title ?? `system given as PROJ text (${projection})` });
 }
 
 /** A WKT with an EPSG code of its own is taken by that code where the list has it, since the list states the datum shift. */
