@@ -11,6 +11,7 @@ export interface JobTasks {
     readonly answers: { readonly crs?: string | undefined; readonly layer?: string | undefined };
   };
   "make-plane": { readonly geometry: string; readonly epsg: number };
+  "search-crs": { readonly text: string; readonly projectedOnly: boolean };
   "seal-frame": {
     readonly rings: string;
     readonly spec: FrameSpec;
@@ -40,6 +41,7 @@ export interface JobResults {
     readonly notes: string[];
     readonly net: [number, number, number, number][];
   };
+  "search-crs": CrsChoice[];
   "seal-frame": {
     readonly statement: string;
     readonly frameSha256: string;

@@ -1,5 +1,6 @@
 import { Problem } from "#shared/problem.ts";
 import type { JobAnswer } from "./jobs.ts";
+import { searchEpsg } from "./epsg.ts";
 import { makePlaneTask } from "./make-plane.ts";
 import { placeEntries } from "./place-entries.ts";
 import { readAreaTask } from "./read-area.ts";
@@ -11,6 +12,7 @@ type Work = { [N in JobName]: (task: JobTasks[N]) => JobResults[N] | Promise<Job
 const work: Work = {
   "read-area": readAreaTask,
   "make-plane": makePlaneTask,
+  "search-crs": ({ text, projectedOnly }) => searchEpsg(text, 20, { projectedOnly }),
   "seal-frame": sealFrameTask,
   "place-entries": placeEntries,
 };

@@ -1,6 +1,5 @@
 import * as api from "#shared/api/area.ts";
 import type { Mount } from "../http/mount.ts";
-import { searchEpsg } from "../jobs/epsg.ts";
 import { presentArea, presentPlane } from "../presenters/area.ts";
 import { importArea } from "../services/import-area.ts";
 import { makePlane } from "../services/make-plane.ts";
@@ -28,7 +27,8 @@ export function areaRoutes(mount: Mount): void {
 
   mount.survey(api.readPlane, (ctx, { params }) => presentPlane(readPlane(ctx, params.areaId, Number(params.epsg))));
 
-  mount.signedIn(api.searchCrs, (_ctx, { query }) => ({
-    systems: searchEpsg(query.text, 20, { projectedOnly: query.projected === "yes" }),
-  }));
+  mount.signedIn(api.searchCrs, async (ctx, { query, signal }) => {
+    const task = { text: query.text, projectedOnly: query.projected === "yes" };
+    return { systems: await ctx.jobs.run("search-crs", task, signal) };
+  });
 }
