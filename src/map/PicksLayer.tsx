@@ -84,7 +84,7 @@ export function PicksLayer({ picks, spec, clip, chosen = null, onChoose }: Picks
       </SheetLayer>
       <SheetLayer slot="figures">
         {side >= FIGURES_FROM && <Orders picks={drawn} spec={spec} />}
-        {side >= 6 && <Badges drawn={drawn} spec={spec} />}
+        {side >= 6 && <Badges picks={picks} spec={spec} />}
       </SheetLayer>
       {chosen !== null && <ChosenPick pick={picks.find((pick) => pick.key === chosen)} spec={spec} />}
       {onChoose !== undefined && <CellKeys cells={named} grid={spec} chosen={chosen} onChoose={onChoose} />}
@@ -121,13 +121,13 @@ function Orders({ picks, spec }: { readonly picks: readonly SheetPick[]; readonl
   );
 }
 
-function Badges({ drawn, spec }: { readonly drawn: readonly SheetPick[]; readonly spec: CellGrid }) {
+function Badges({ picks, spec }: { readonly picks: readonly SheetPick[]; readonly spec: CellGrid }) {
   const { view } = useSheet();
-  const places = useMemo(() => new Set(drawn.map((pick) => `${pick.column},${pick.row}`)), [drawn]);
+  const places = useMemo(() => new Set(picks.map((pick) => `${pick.column},${pick.row}`)), [picks]);
   return (
     <>
-      {drawn
-        .filter((pick) => pick.times > 1 && isNear(pick, spec, view.near))
+      {picks
+        .filter((pick) => pick.times > 1 && !pick.reserve && isNear(pick, spec, view.near))
         .map((pick) => {
           const box = cellBox(spec, pick.column, pick.row, view);
           const place = badgePlace(pick, box.width, box.height, (column, row) => places.has(`${column},${row}`));

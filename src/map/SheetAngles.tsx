@@ -17,6 +17,11 @@ function Angle({ text }: { readonly text: string }) {
   );
 }
 
+/** Half the width of a figure in px, about: what would pass the corner of the sheet is left out. */
+function roomOf(text: string): number {
+  return 6 + 3.4 * text.length;
+}
+
 /** Longitude below the sheet, latitude at its right. */
 export function SheetAngles({
   window,
@@ -32,7 +37,7 @@ export function SheetAngles({
   return (
     <g className="q-sheet-angles">
       {graticule.lower
-        .filter((tick) => x(tick.at) > left + 24 && x(tick.at) < right - 24)
+        .filter((tick) => x(tick.at) > left + roomOf(tick.text) && x(tick.at) < right - roomOf(tick.text))
         .map((tick) => (
           <Fragment key={tick.seconds}>
             <path d={`M${x(tick.at)} ${bottom + 5}v6`} stroke="var(--map-neatline)" />
@@ -42,7 +47,7 @@ export function SheetAngles({
           </Fragment>
         ))}
       {graticule.right
-        .filter((tick) => y(tick.at) < bottom - 24 && y(tick.at) > top + 24)
+        .filter((tick) => y(tick.at) < bottom - roomOf(tick.text) && y(tick.at) > top + roomOf(tick.text))
         .map((tick) => (
           <Fragment key={tick.seconds}>
             <path d={`M${right + 5} ${y(tick.at)}h6`} stroke="var(--map-neatline)" />

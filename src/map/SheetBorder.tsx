@@ -71,9 +71,9 @@ export function SheetBorder({ window, margins, size, inMetres, lngLatOf }: Sheet
     x: (value: number) => left + (value - west) * scale,
     y: (value: number) => top + (north - value) * scale,
   };
-  const step = gridStep(Math.max(east - west, north - south) / (margins.compact ? 0.5 : 1));
-  const columns = inMetres ? gridLines(west, east, step, "m\u00a0E", 60 / scale) : [];
-  const rows = inMetres ? gridLines(south, north, step, "m\u00a0N", 60 / scale) : [];
+  const step = gridStep(scale);
+  const columns = inMetres ? gridLines(west, east, step, "m\u202fE", 60 / scale) : [];
+  const rows = inMetres ? gridLines(south, north, step, "m\u202fN", 60 / scale) : [];
   return (
     <svg className="q-sheet-border" width={size.width} height={size.height} aria-hidden="true">
       <rect

@@ -14,7 +14,7 @@ export function SheetGrid({ window, inMetres, lngLatOf }: SheetGridProps) {
   let verticals: number[] = [];
   let horizontals: number[] = [];
   if (inMetres) {
-    const step = gridStep(Math.max(east - west, north - south));
+    const step = gridStep(scale);
     verticals = gridLines(west, east, step, "", 0).map((line) => line.value);
     horizontals = gridLines(south, north, step, "", 0).map((line) => line.value);
   } else if (lngLatOf !== undefined) {

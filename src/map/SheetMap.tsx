@@ -1,6 +1,7 @@
 import "leaflet/dist/leaflet.css";
 import { useId, useMemo, useRef, useState, type ReactNode } from "react";
 import type { LngLatOf } from "./planes.ts";
+import { ScaleBar } from "./ScaleBar.tsx";
 import { SheetBorder } from "./SheetBorder.tsx";
 import { SheetContext, type Sheet, type SheetSlot } from "./sheet-context.ts";
 import { SheetFoot } from "./SheetFoot.tsx";
@@ -104,16 +105,15 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
             compact={margins.compact}
           />
         )}
+        {seen !== undefined && margins.compact && (
+          <div className="q-sheet-scale-inside">
+            <ScaleBar scale={seen.scale} widest={90} parts={1} />
+          </div>
+        )}
         {sheet !== null && <SheetContext value={sheet}>{children}</SheetContext>}
       </div>
       {seen !== undefined && (
-        <SheetFoot
-          scale={seen.scale}
-          compact={margins.compact}
-          crsName={crsName}
-          legend={legend}
-          inSight={inMetres ? seen : null}
-        />
+        <SheetFoot scale={seen.scale} compact={margins.compact} crsName={crsName} legend={legend} />
       )}
     </figure>
   );

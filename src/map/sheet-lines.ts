@@ -10,13 +10,16 @@ export interface GridLine {
   readonly tail: string;
 }
 
-/** The step of 1, 2 or 5 · 10^k metres that puts 5 to 9 lines, or as near as can be, across so many metres. */
-export function gridStep(span: number): number {
-  if (!(span > 0)) throw new RangeError(`needs a span above zero, got ${span}`);
-  const rough = span / 9;
-  const power = 10 ** Math.floor(Math.log10(rough));
-  const step = [1, 2, 5, 10].find((factor) => factor * power >= rough * 0.999) ?? 10;
-  return step * power;
+/** The closest grid lines on a sheet, in px: a step puts about 5 to 9 of them across it. */
+const CLOSEST = 64;
+
+/** The smallest step of 1, 2 or 5 · 10^k metres that is at least 64 px on the sheet, at so many px a metre. */
+export function gridStep(scale: number): number {
+  if (!(scale > 0)) throw new RangeError(`needs a scale above zero, got ${scale}`);
+  const least = CLOSEST / scale;
+  const power = 10 ** Math.floor(Math.log10(least));
+  const factor = [1, 2, 5].find((one) => one * power >= least * 0.999999) ?? 10;
+  return factor * power;
 }
 
 /**
@@ -44,7 +47,7 @@ function figures(value: number, step: number, suffix: string): Omit<GridLine, "v
   const fraction = step < 1 ? (Math.abs(value) % 1).toFixed(Math.min(3, Math.ceil(-Math.log10(step)))).slice(1) : "";
   const thousands = digits.slice(0, -3);
   const last = thousands === "" ? digits : digits.slice(-3);
-  const full = suffix === "" ? "" : `\u00a0${suffix}`;
+  const full = suffix === "" ? "" : `\u202f${suffix}`;
   if (step >= 1000 && thousands !== "") {
     return {
       lead: full === "" ? "" : sign + thousands.slice(0, -3),
@@ -53,7 +56,7 @@ function figures(value: number, step: number, suffix: string): Omit<GridLine, "v
     };
   }
   return {
-    lead: full === "" || thousands === "" ? (thousands === "" ? sign : "") : `${sign}${thousands}\u00a0`,
+    lead: full === "" || thousands === "" ? (thousands === "" ? sign : "") : `${sign}${thousands}\u202f`,
     bold: last + fraction,
     tail: full,
   };

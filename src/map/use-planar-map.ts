@@ -101,7 +101,9 @@ export function usePlanarMap(element: RefObject<HTMLDivElement | null>, bounds: 
     map.on("moveend zoomend resize", onSettled);
     container.addEventListener("sheet:whole", fit);
     const observer = new ResizeObserver(() => {
+      fitting = true;
       map.invalidateSize({ animate: false, pan: false });
+      fitting = false;
       if (untouched) fit();
     });
     observer.observe(container);

@@ -96,7 +96,7 @@ export function AppShell({
         {here !== undefined && <span className="q-header-rule" aria-hidden="true" />}
         <nav className="q-crumbs" aria-label="Where you are">
           {crumbs.map((crumb) => (
-            <span key={crumb.to} className="contents">
+            <span key={crumb.to} className="q-crumb">
               <Link to={crumb.to}>{crumb.label}</Link>
               <span aria-hidden="true">/</span>
             </span>

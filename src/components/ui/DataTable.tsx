@@ -20,7 +20,7 @@ interface DataTableProps<Row extends object> {
   readonly detail?: (row: Row) => ReactNode;
   readonly initialSort?: SortState;
   readonly empty?: ReactNode;
-  /** Above 200 rows the table scrolls in a frame of this height in px and holds only the rows in sight. */
+  /** The table scrolls in a frame of at most this height in px; above 200 rows it always does (560) and holds only the rows in sight. */
   readonly maxHeight?: number;
   readonly dense?: boolean;
 }
@@ -68,7 +68,7 @@ function linesOf<Row>(
 
 /** A sortable table over any number of rows. Lists above 200 rows keep only the rows in sight in the page. */
 export function DataTable<Row extends object>(props: DataTableProps<Row>) {
-  const { caption, columns, rowId, chosen = null, onChoose, tone, empty, maxHeight = 560, dense = false } = props;
+  const { caption, columns, rowId, chosen = null, onChoose, tone, empty, maxHeight, dense = false } = props;
   const { rows, sorted, sortBy } = useSortedRows(props.rows, columns, props.initialSort);
   const frame = useRef<HTMLDivElement>(null);
   const lines = linesOf(rows, rowId, props.detail);
@@ -90,9 +90,16 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
           choose: () => onChoose(line.id, line.row),
           move: (event: KeyboardEvent<HTMLTableRowElement>) => moveFocus(event, line.index, rows.length, show),
         };
-  const scrolls = virtual
-    ? { style: { maxHeight }, role: "group", "aria-label": caption, ...(onChoose === undefined && { tabIndex: 0 }) }
-    : {};
+  const height = maxHeight ?? (virtual ? 560 : undefined);
+  const scrolls =
+    height === undefined
+      ? {}
+      : {
+          style: { maxHeight: height },
+          role: "group",
+          "aria-label": caption,
+          ...(onChoose === undefined && { tabIndex: 0 }),
+        };
   return (
     <div ref={frame} className="q-table-scroll q-table-sticky" {...scrolls}>
       <table

@@ -9,13 +9,15 @@ interface ReadingPageProps {
   readonly lead?: ReactNode;
   /** Buttons at the right of the title; at a phone's width they lie at the foot. */
   readonly actions?: ReactNode;
+  /** Across page and margin, under the title: a Ledger, Facts, a Banner. */
+  readonly band?: ReactNode;
   readonly children: ReactNode;
   /** Notes beside the text as in a book: elements with an h3 each. */
   readonly margin?: ReactNode;
 }
 
 /** A reading stage: the sentence first, then the figures, then how they came about; notes in a margin column. */
-export function ReadingPage({ title, answer = false, lead, actions, children, margin }: ReadingPageProps) {
+export function ReadingPage({ title, answer = false, lead, actions, band, children, margin }: ReadingPageProps) {
   const body = <div className="q-reading-body">{children}</div>;
   return (
     <div className="q-reading">
@@ -26,6 +28,7 @@ export function ReadingPage({ title, answer = false, lead, actions, children, ma
         </div>
         {actions !== undefined && <div className="q-reading-acts">{actions}</div>}
       </div>
+      {band !== undefined && <div className="q-reading-band">{band}</div>}
       {margin === undefined ? (
         body
       ) : (
