@@ -9,8 +9,15 @@ const entry = (position: number, unit: number, reserve = false): Entry => ({ pos
 
 describe("states of a visit", () => {
   test("only refused, unsafe, not reached and lost close a cell", () => {
+    expect(VISIT_STATES.map((state) => [state, isClosing(state)])).toEqual([
+      ["counted", false],
+      ["not-in-population", false],
+      ["refused", true],
+      ["unsafe", true],
+      ["not-reached", true],
+      ["lost", true],
+    ]);
     expect(VISIT_STATES.filter(isClosing)).toEqual([...CLOSING_STATES]);
-    expect(VISIT_STATES.filter((state) => !isClosing(state))).toEqual(["counted", "not-in-population"]);
   });
 });
 

@@ -126,6 +126,20 @@ describe("added, amended and reopened picks", () => {
     expect(state.passedOver).toEqual([]);
   });
 
+  // Position 4 fell on unit 3 and 5 opened in its place: when 3 closes again nothing is missing.
+  test("an entry passed over, reopened and closed again opens nothing", () => {
+    const acts: FieldAct[] = [close(3), { kind: "reopen", unit: 3 }, close(3)];
+    const state = entriesInUse(listOf([7, 3, 9, 3, 5, 2], 3), 3, acts);
+    expect(state.opened).toEqual([{ position: 5, because: 2 }]);
+    expect(positions(state.inUse)).toEqual([1, 3, 5]);
+  });
+
+  // The amendment opened no reserve; saying later "unsafe" instead of "refused" opens none either.
+  test("an amended cell closed again for another reason opens no reserve", () => {
+    const acts: FieldAct[] = [{ kind: "close-counted", unit: 3 }, close(3)];
+    expect(entriesInUse(listOf([7, 3, 9, 5], 3), 3, acts)).toMatchObject({ opened: [], openedTo: 3 });
+  });
+
   test("a list at its end says how many openings it lacks, and a longer list fills them alike", () => {
     const frame = { sha256: "a".repeat(64), units: 30 };
     const list = (reserves: number) =>
