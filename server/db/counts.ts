@@ -66,6 +66,18 @@ export function entriesInForce(reader: Reader, seasonId: string, targetId: strin
   return new Map(rows.map(({ entry }) => [entry.visitId, entry]));
 }
 
+/** First counts of one target in a season and their amendments, as they came. */
+export function firstCountsOf(reader: Reader, seasonId: string, targetId: string): CountRow[] {
+  return reader
+    .select({ entry: countEntries })
+    .from(countEntries)
+    .innerJoin(visits, eq(visits.id, countEntries.visitId))
+    .where(and(eq(visits.seasonId, seasonId), eq(countEntries.targetId, targetId), eq(countEntries.purpose, "first")))
+    .orderBy(...inOrder)
+    .all()
+    .map((row) => row.entry);
+}
+
 /** Every entry of a survey, oldest first. */
 export function entriesOfSurvey(reader: Reader, surveyId: string): CountRow[] {
   return reader

@@ -1,6 +1,7 @@
 import { type Declaration, declaration, DECLARATION_FORMAT, declarationSha256 } from "#shared/draw/declaration.ts";
 import { checkDesign, type Design } from "#shared/draw/design.ts";
 import type { GeneratorName } from "#shared/draw/generator.ts";
+import { checkLevel } from "#shared/estimate/level.ts";
 import { Problem } from "#shared/problem.ts";
 import { canonicalText } from "#shared/record/chain.ts";
 import type { Context } from "../context.ts";
@@ -34,6 +35,7 @@ export function declareDraw(ctx: Context, wanted: Wanted): string {
     const frame = sealedFrame(tx, ctx.surveyId, wanted.frameId);
     expectFreeSeason(tx, ctx.surveyId, seasonId, wanted.note);
     checkDesign(wanted.design, frame.units, wanted.reserves);
+    checkLevel(Number(wanted.level));
     const declared = checked({
       format: DECLARATION_FORMAT,
       surveyId: ctx.surveyId,

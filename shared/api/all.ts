@@ -3,6 +3,7 @@ import * as area from "#shared/api/area.ts";
 import type { Contract } from "#shared/api/contract.ts";
 import * as counts from "#shared/api/counts.ts";
 import * as draw from "#shared/api/draw.ts";
+import * as estimate from "#shared/api/estimate.ts";
 import * as field from "#shared/api/field.ts";
 import * as frame from "#shared/api/frame.ts";
 import * as record from "#shared/api/record.ts";
@@ -14,6 +15,14 @@ function isContract(thing: unknown): thing is Contract {
 }
 
 /** Every endpoint there is, in the order of the layer words. */
-export const ALL_CONTRACTS: readonly Contract[] = [accounts, surveys, area, frame, draw, field, counts, record].flatMap(
-  (word) => Object.values<unknown>(word).filter(isContract),
-);
+export const ALL_CONTRACTS: readonly Contract[] = [
+  accounts,
+  surveys,
+  area,
+  frame,
+  draw,
+  field,
+  counts,
+  estimate,
+  record,
+].flatMap((word) => Object.values<unknown>(word).filter(isContract));
