@@ -7,6 +7,7 @@ import { createApp } from "./app.ts";
 import type { Platform } from "./context.ts";
 import { anyAccount } from "./db/accounts.ts";
 import { closeDb, openDb } from "./db/open.ts";
+import { demoTable, ensureDemo } from "./demo.ts";
 import { readEnv } from "./env.ts";
 import { startJobs } from "./jobs/jobs.ts";
 import { projectRoot, version } from "./project.ts";
@@ -18,8 +19,9 @@ async function main(): Promise<void> {
   const root = projectRoot();
   const env = readEnv(process.env, root);
   const secrets = readSecrets(env);
-  const db = openDb(env.databaseFile);
   const jobs = startJobs();
+  const demo = await ensureDemo(env, { jobs, signingKey: secrets.signingKey, version: version(root) });
+  const db = openDb(env.databaseFile);
   const platform: Platform = {
     db,
     jobs,
@@ -42,6 +44,7 @@ async function main(): Promise<void> {
   const server = app.listen(env.port, env.host, () => {
     const { port } = server.address() as AddressInfo;
     say(`Quillet is at http://${env.host}:${port}/`);
+    if (demo) say(demoTable(demo, `http://${env.host}:${port}/`));
     if (!env.demo && !anyAccount(db)) {
       say("There is no account yet. Make the first owner: npm run -s quillet -- create-owner --email YOU@EXAMPLE.ORG");
     }

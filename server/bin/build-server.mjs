@@ -5,6 +5,7 @@ await build({
   entryPoints: { main: "server/main.ts", quillet: "server/cli/quillet.ts", "jobs/worker": "server/jobs/worker.ts" },
   outdir: "dist/server",
   bundle: true,
+  splitting: true, // so that a command or the demo is loaded when it is asked for
   packages: "external",
   platform: "node",
   format: "esm",
