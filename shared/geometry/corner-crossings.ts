@@ -1,4 +1,5 @@
 import type { GridPoint } from "#shared/units/metric.ts";
+import { CornerNumbers } from "./corner-numbers.ts";
 import type { Ring, Segment } from "./rings.ts";
 import { turn } from "./turn.ts";
 
@@ -34,8 +35,9 @@ const wayIn = ({ fromX, fromY, x, y }: Passing): Segment => ({ fromX, fromY, toX
 
 /** Corners that rings pass more than once. */
 function sharedCorners(rings: readonly Ring[]): Passing[][] {
-  const first = new Map<string, Passing>();
-  const shared = new Map<string, Passing[]>();
+  const corners = new CornerNumbers(rings.reduce((sum, ring) => sum + ring.length / 2, 0));
+  const first: Passing[] = [];
+  const shared = new Map<number, Passing[]>();
   for (const ring of rings) {
     const { length } = ring;
     for (let i = 0; i < length; i += 2) {
@@ -47,10 +49,10 @@ function sharedCorners(rings: readonly Ring[]): Passing[][] {
         toX: ring[(i + 2) % length] ?? 0,
         toY: ring[(i + 3) % length] ?? 0,
       };
-      const key = `${passing.x},${passing.y}`;
-      const before = first.get(key);
-      if (before === undefined) first.set(key, passing);
-      else shared.set(key, [...(shared.get(key) ?? [before]), passing]);
+      const corner = corners.numberOf(passing.x, passing.y);
+      const before = first[corner];
+      if (before === undefined) first[corner] = passing;
+      else shared.set(corner, [...(shared.get(corner) ?? [before]), passing]);
     }
   }
   return [...shared.values()];

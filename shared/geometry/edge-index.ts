@@ -8,6 +8,9 @@ export interface EdgeIndex {
   readonly owner: Int32Array;
   /** minX, minY, maxX, maxY of each box. */
   readonly boxes: Float64Array;
+  /** By edge: the last search that met it, so that an edge with several boxes is visited once. */
+  readonly met: Uint32Array;
+  searches: number;
 }
 
 /** How slanted an edge is: the smaller side of its box, in mm. Level and upright edges have none. */
@@ -17,13 +20,14 @@ function slant(ends: Float64Array, edge: number): number {
   return Math.min(deltaX, deltaY);
 }
 
-/** Null where there are no edges. */
-export function indexEdges({ count, ends }: EdgeSet): EdgeIndex | null {
+/**
+ * The index of edges, in at most `wanted` boxes more than there are edges. Null where there are no edges.
+ */
+export function indexEdges({ count, ends }: EdgeSet, wanted = count): EdgeIndex | null {
   if (count === 0) return null;
   let slants = 0;
   for (let edge = 0; edge < count; edge += 1) slants += slant(ends, edge);
-  // Boxes of about twice the mean: at most 3/2 boxes an edge altogether, plus one.
-  const step = Math.max(1, (2 * slants) / count);
+  const step = Math.max(1, slants / wanted);
   const parts = Int32Array.from({ length: count }, (_, edge) => Math.max(1, Math.ceil(slant(ends, edge) / step)));
   const total = parts.reduce((sum, part) => sum + part, 0);
   const tree = new Flatbush(total);
@@ -39,7 +43,7 @@ export function indexEdges({ count, ends }: EdgeSet): EdgeIndex | null {
     }
   });
   tree.finish();
-  return { tree, owner, boxes };
+  return { tree, owner, boxes, met: new Uint32Array(count), searches: 0 };
 }
 
 /** The box of an edge between two fractions of its length, a millimetre wider where that is rounded. */
@@ -86,11 +90,13 @@ export function visitEdges(
   maxY: number,
   visit: (edge: number) => void,
 ): void {
-  const seen = new Set<number>();
-  index.tree.search(minX, minY, maxX, maxY, (box) => {
-    const edge = index.owner[box] ?? 0;
-    if (!seen.has(edge)) {
-      seen.add(edge);
+  const { tree, owner, met } = index;
+  index.searches += 1;
+  const search = index.searches;
+  tree.search(minX, minY, maxX, maxY, (box) => {
+    const edge = owner[box] ?? 0;
+    if (met[edge] !== search) {
+      met[edge] = search;
       visit(edge);
     }
     return false;

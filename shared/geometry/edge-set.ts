@@ -53,7 +53,7 @@ function compareEdges(ends: Float64Array, a: number, b: number): number {
  * nothing from nothing.
  */
 export function oddEdges({ count, ends }: EdgeSet): EdgeSet {
-  const order = Int32Array.from({ length: count }, (_, index) => index).sort((a, b) => compareEdges(ends, a, b));
+  const order = new Int32Array(count).map((_, index) => index).sort((a, b) => compareEdges(ends, a, b));
   const kept = new Float64Array(4 * count);
   let size = 0;
   for (let i = 0; i < count;) {

@@ -29,7 +29,7 @@ export function nodeRings(rings: readonly Ring[]): PlaneArea {
       return false;
     });
     if (cuts.edge.length === 0 && cuts.rounded.length === 0) return assemble(edges, index);
-    edges = oddEdges(cutEdges(edges, cuts.rounded.length === 0 ? cuts : snapCuts(edges, index, cuts.rounded)));
+    edges = oddEdges(cutEdges(edges, cuts.rounded.length === 0 ? cuts : snapCuts(edges, cuts.rounded)));
   }
   throw new RangeError(`rings with ${edges.count} edges still cross after ${MOST_ROUNDS} rounds`);
 }

@@ -1,15 +1,21 @@
-import { visitEdges, type EdgeIndex } from "./edge-index.ts";
+import { indexEdges, visitEdges } from "./edge-index.ts";
 import { writeEdge, type EdgeSet } from "./edge-set.ts";
 import { noCuts, type Cuts } from "./meetings.ts";
 import { turn } from "./turn.ts";
+
+const MOST_BOXES = 2_000_000;
 
 /**
  * Snap rounding (Hobby 1999): every whole-millimetre place with an end or a rounded crossing is *hot*, and each edge is bent to
  * the middle of every hot square millimetre [x − ½, x + ½) × [y − ½, y + ½) that it passes through. Edges then meet at hot places only, and
  * none moves by more than 0.71 mm.
  */
-export function snapCuts({ count, ends }: EdgeSet, index: EdgeIndex, rounded: readonly number[]): Cuts {
+export function snapCuts(edges: EdgeSet, rounded: readonly number[]): Cuts {
+  const { count, ends } = edges;
   const cuts = noCuts();
+  // One search a hot place: the more there are, the smaller the boxes may be.
+  const index = indexEdges(edges, count + Math.min(rounded.length, MOST_BOXES));
+  if (index === null) return cuts;
   const hot = new Map<number, Set<number>>();
   const heat = (x: number, y: number): void => {
     const column = hot.get(x) ?? new Set<number>();

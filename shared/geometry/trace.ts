@@ -1,3 +1,4 @@
+import { CornerNumbers } from "./corner-numbers.ts";
 import type { EdgeIndex } from "./edge-index.ts";
 import type { EdgeSet } from "./edge-set.ts";
 import { visitCrossedWest } from "./ray.ts";
@@ -31,21 +32,29 @@ interface HalfEdges {
 const upperHalf = (x: number, y: number): boolean => y > 0 || (y === 0 && x > 0);
 
 function halfEdgesOf({ count, ends }: EdgeSet): HalfEdges {
-  const x = (half: number): number => ends[2 * half] ?? 0;
-  const y = (half: number): number => ends[2 * half + 1] ?? 0;
-  const around = Int32Array.from({ length: 2 * count }, (_, half) => half);
-  around.sort((a, b) => x(a) - x(b) || y(a) - y(b) || compareDirections(ends, a, b));
+  const corners = new CornerNumbers(2 * count);
   const origin = new Int32Array(2 * count);
-  const place = new Int32Array(2 * count);
-  const start: number[] = [];
-  around.forEach((half, at) => {
-    const before = around[at - 1];
-    if (before === undefined || x(before) !== x(half) || y(before) !== y(half)) start.push(at);
-    origin[half] = start.length - 1;
-    place[half] = at;
+  for (let half = 0; half < 2 * count; half += 1) {
+    origin[half] = corners.numberOf(ends[2 * half] ?? 0, ends[2 * half + 1] ?? 0);
+  }
+  const start = new Int32Array(corners.count + 1);
+  for (const corner of origin) start[corner + 1] = (start[corner + 1] ?? 0) + 1;
+  for (let corner = 0; corner < corners.count; corner += 1)
+    start[corner + 1] = (start[corner + 1] ?? 0) + (start[corner] ?? 0);
+  const around = new Int32Array(2 * count);
+  const filled = start.slice();
+  origin.forEach((corner, half) => {
+    around[filled[corner] ?? 0] = half;
+    filled[corner] = (filled[corner] ?? 0) + 1;
   });
-  start.push(2 * count);
-  return { origin, start: Int32Array.from(start), around, place };
+  for (let corner = 0; corner < corners.count; corner += 1) {
+    const from = start[corner] ?? 0;
+    const to = start[corner + 1] ?? 0;
+    if (to - from > 2) around.subarray(from, to).sort((a, b) => compareDirections(ends, a, b));
+  }
+  const place = new Int32Array(2 * count);
+  around.forEach((half, at) => (place[half] = at));
+  return { origin, start, around, place };
 }
 
 /** Counter-clockwise from due east, of two half-edges that leave one corner. */
