@@ -26,8 +26,8 @@ export function readLevel(text: string): number {
     throw new Problem("input-invalid", `“${text}” is no confidence level. Give one such as 0.95 or 95 %.`);
   }
   const percent = found[2] === "%" || value > 1;
-  // 95 / 100 is the double nearest to 0.95, as is every level that has a short decimal form.
-  return checkLevel(percent ? value / 100 : value);
+  // Through decimal text: 99.9 / 100 alone is not the double nearest to 0.999.
+  return checkLevel(percent ? Number((value / 100).toPrecision(12)) : value);
 }
 
 /** A level as per cent, "95" or "99.9", without the sign. */

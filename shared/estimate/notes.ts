@@ -2,7 +2,6 @@ import { STATE_WORDS } from "#shared/counts/count.ts";
 import { countText, figuresText, listText, numberText } from "./number-text.ts";
 import type { EstimateResult, MissingPick } from "./result.ts";
 import { estimateText, printedLimitsOf } from "./rounding.ts";
-import { levelText } from "./sentence.ts";
 
 /** Something to know about an estimate. "look" is for what may change how it is read. */
 export interface EstimateNote {
@@ -44,7 +43,7 @@ function missingNote(result: EstimateResult): EstimateNote[] {
 }
 
 function precisionNotes(result: EstimateResult): EstimateNote[] {
-  const { total, level, declaredLimits, seen } = result;
+  const { total, declaredLimits, seen } = result;
   const t = total.limits.t;
   const printed = printedLimitsOf(result, "total", declaredLimits);
   return [
@@ -75,7 +74,7 @@ function precisionNotes(result: EstimateResult): EstimateNote[] {
     ...when(t.kind === "interval" && t.lower < 0, () =>
       look(
         "t-below-zero",
-        `The t limits reach below zero. With clumped counts the truth lies above them more often than ${levelText(1 - level)}.`,
+        `The t limits reach below zero. With clumped counts the truth lies above such limits more often than the level says.`,
       ),
     ),
     ...when(printed !== "none" && printed.raised, () =>
