@@ -1,9 +1,8 @@
-import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+import { RecordStage } from "../../features/record/RecordStage.tsx";
+import { useCurrentSurvey } from "../current-survey.ts";
+import { paths } from "../paths.ts";
 
 export function RecordPage() {
-  return (
-    <ReadingPage title="Record">
-      <></>
-    </ReadingPage>
-  );
+  const survey = useCurrentSurvey();
+  return <RecordStage surveyId={survey.id} replayTo={paths.replay} />;
 }

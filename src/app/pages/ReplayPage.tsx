@@ -1,9 +1,5 @@
-import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+import { ReplayStage } from "../../features/record/ReplayStage.tsx";
 
 export function ReplayPage() {
-  return (
-    <ReadingPage title="Replay">
-      <></>
-    </ReadingPage>
-  );
+  return <ReplayStage />;
 }
