@@ -11,6 +11,9 @@ import { transformer, type Position } from "#shared/projection/transformer.ts";
  * little smaller: a smooth curve departs by at most a few per cent more between the places.
  */
 const MAX_DEPARTURE_METRES = 0.0045;
+/** A piece this short that departs this little in its middle is smooth enough to need no further look: its bow is a parabola's. */
+const SHORT_METRES = 2000;
+const SMOOTH_METRES = 0.001;
 /** Longer pieces are always halved, so that no curve hides between the places looked at. */
 const MAX_PIECE_METRES = 20_000;
 const MAX_DEPTH = 40;
@@ -47,11 +50,15 @@ export function makePlaneRings(
   return { area: noded, notes: frameCrs.note === null ? notes : [...notes, frameCrs.note] };
 }
 
-/** The rings in whole millimetres before noding, one for each source ring, in the same order. */
+/**
+ * The rings in whole millimetres before noding, one for each source ring, in the same order.
+ * @param maxDeparture metres that a piece may depart from its true image; a frame's own limit unless given.
+ */
 export function projectedRings(
   area: ImportedArea,
   frameCrs: Crs,
   onProgress?: (share: number) => void,
+  maxDeparture = MAX_DEPARTURE_METRES,
 ): { rings: Ring[]; added: number } {
   const { forward } = transformer(area.crs, frameCrs);
   const sameSystem = area.crs.text === frameCrs.text;
@@ -61,7 +68,7 @@ export function projectedRings(
   let done = 0;
   let made = 0;
   const rings = source.map((ring) => {
-    const plane = sameSystem ? ring.flat() : projectRing(ring, forward);
+    const plane = sameSystem ? ring.flat() : projectRing(ring, { forward, maxDeparture });
     done += ring.length;
     made += plane.length / 2;
     onProgress?.(done / total);
@@ -70,8 +77,13 @@ export function projectedRings(
   return { rings, added: made - before };
 }
 
-function projectRing(ring: SourceRing, forward: (position: Position) => Position): number[] {
-  const images = ring.map(forward);
+interface Projection {
+  readonly forward: (position: Position) => Position;
+  readonly maxDeparture: number;
+}
+
+function projectRing(ring: SourceRing, projection: Projection): number[] {
+  const images = ring.map(projection.forward);
   const flat: number[] = [];
   ring.forEach((from, i) => {
     const next = (i + 1) % ring.length;
@@ -79,7 +91,7 @@ function projectRing(ring: SourceRing, forward: (position: Position) => Position
     if (to === undefined || image === undefined || nextImage === undefined)
       throw new RangeError(`ring without vertex ${next}`);
     flat.push(image[0], image[1]);
-    flat.push(...verticesBetween(from, to, image, nextImage, forward));
+    flat.push(...verticesBetween(from, to, image, nextImage, projection));
   });
   return flat;
 }
@@ -93,31 +105,32 @@ function verticesBetween(
   to: Position,
   fromImage: Position,
   toImage: Position,
-  forward: (position: Position) => Position,
+  projection: Projection,
 ): number[] {
   if (to[0] < from[0] || (to[0] === from[0] && to[1] < from[1])) {
-    const backwards = verticesBetween(to, from, toImage, fromImage, forward);
+    const backwards = verticesBetween(to, from, toImage, fromImage, projection);
     return Array.from(
       { length: backwards.length },
       (_, i) => backwards[backwards.length - (i % 2 === 0 ? i + 2 : i)] ?? 0,
     );
   }
+  const { forward, maxDeparture } = projection;
   const at = (t: number): Position => forward([from[0] + t * (to[0] - from[0]), from[1] + t * (to[1] - from[1])]);
   const flat: number[] = [];
   const halve = (start: number, end: number, startImage: Position, endImage: Position, depth: number): void => {
     const step = (end - start) / 8;
     const middle = at(start + 4 * step);
+    const length = Math.hypot(endImage[0] - startImage[0], endImage[1] - startImage[1]);
+    if (length <= SHORT_METRES && departure(middle, startImage, endImage) <= SMOOTH_METRES) return;
     const inside = [1, 2, 3]
       .map((k) => at(start + k * step))
       .concat(
         [middle],
         [5, 6, 7].map((k) => at(start + k * step)),
       );
-    const length = Math.hypot(endImage[0] - startImage[0], endImage[1] - startImage[1]);
     if (
       depth >= MAX_DEPTH ||
-      (length <= MAX_PIECE_METRES &&
-        inside.every((point) => departure(point, startImage, endImage) <= MAX_DEPARTURE_METRES))
+      (length <= MAX_PIECE_METRES && inside.every((point) => departure(point, startImage, endImage) <= maxDeparture))
     )
       return;
     halve(start, start + 4 * step, startImage, middle, depth + 1);

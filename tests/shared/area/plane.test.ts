@@ -46,7 +46,7 @@ const star = (lng: number, lat: number, reach: number, radii: readonly number[])
     return [lng + reach * radius * Math.cos(angle), lat + reach * radius * Math.sin(angle)];
   });
 
-describe("rings on a frame's plane (R1)", () => {
+describe("rings on a frame's plane (R1)", { timeout: 30_000 }, () => {
   // R1: 5 mm, and rounding to whole millimetres moves a corner by at most 0.71 mm, noding by as much again.
   test("every point of an edge's true image lies within 5 mm and rounding of the rings, and no two edges cross", () => {
     const radii = fc.array(fc.double({ min: 0.3, max: 1, noNaN: true }), { minLength: 3, maxLength: 9 });
@@ -100,7 +100,9 @@ describe("rings on a frame's plane (R1)", () => {
     expect(area.polygons[0]?.[0]).toHaveLength(8);
     expect(squareMetresOf(area)).toBe(80_000 * 90_000);
   });
+});
 
+describe("vertices added and edges dissolved on the plane", { timeout: 30_000 }, () => {
   // A parallel of 51° over 6 minutes (7 km) bows by L²/(8R)·tan φ ≈ 1.2 m in UTM: vertices are needed.
   test("get vertices where a straight edge of the source is bent on the plane", () => {
     const { area, notes } = makePlaneRings(
@@ -163,7 +165,9 @@ describe("rings on a frame's plane (R1)", () => {
     const { area } = makePlaneRings(areaIn(4326, [south], [north]), crsFromEpsg(32632));
     expect(area.polygons.map((polygon) => polygon.length)).toEqual([1]);
   });
+});
 
+describe("plane rings as a whole", { timeout: 30_000 }, () => {
   // geodesic_areas.json: area on the plane (PROJ 9.1.1, vertices only) over area on the ellipsoid.
   test.each(geodesicAreas.filter(({ id }) => id === "augusta" || id === "falklands"))(
     "of $id have the plane area that PROJ gives, to 5e-5",
@@ -212,7 +216,7 @@ describe("rings on a frame's plane (R1)", () => {
   });
 });
 
-describe("the outline for a map", () => {
+describe("the outline for a map", { timeout: 30_000 }, () => {
   test("is the area's vertices in WGS 84", () => {
     const { polygons, simplified } = outlineForMap(
       areaIn(32633, [

@@ -6,7 +6,7 @@ import { box, geojson, inSystem, read, refused } from "./read.ts";
 
 const made = (name: string): Uint8Array => imported(`made/${name}`);
 
-describe("what a file leaves open is asked, and the answer settles it", () => {
+describe("what a file leaves open is asked, and the answer settles it", { timeout: 30_000 }, () => {
   test("metres without a system", () => {
     const { code, question } = refused(made("metres_no_crs.geojson"));
     expect([code, question?.kind, question?.["looksLike"]]).toEqual(["area-question", "crs", "metres"]);

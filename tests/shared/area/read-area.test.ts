@@ -7,7 +7,7 @@ import { read, refused } from "./read.ts";
 
 const made = (name: string): Uint8Array => imported(`made/${name}`);
 
-describe("a good boundary file", () => {
+describe("a good boundary file", { timeout: 30_000 }, () => {
   test("gives the area and a report with all counts, the hash of the bytes, and how the system was known", () => {
     const bytes = made("good_polygon_hole.geojson");
     const { value } = read(bytes, {}, "good.geojson");
@@ -73,7 +73,7 @@ describe("a good boundary file", () => {
   });
 });
 
-describe.skipIf(!outsideExists)("files of other programs", () => {
+describe.skipIf(!outsideExists)("files of other programs", { timeout: 30_000 }, () => {
   // expected.json: areas of the two on the equal-area plane of EPSG:5070, as GDAL computes them. The edges, up to 20 km long,
   // are straight in a different system each time, so the areas are not quite the same.
   test("two counties in six systems have the same area on the ellipsoid to one part in 10,000", () => {

@@ -7,7 +7,7 @@ import { box, geojson, inSystem, read, refused } from "./read.ts";
 const made = (name: string): Uint8Array => imported(`made/${name}`);
 
 // Each kind of bad boundary file, and what its sender is told.
-describe("a boundary that cannot be used", () => {
+describe("a boundary that cannot be used", { timeout: 30_000 }, () => {
   test.each([
     ["an empty file", made("empty.geojson"), "file-empty", /empty\. Nothing was changed/],
     ["an image", made("picture.geojson"), "file-unknown", /an image \(PNG\).*GeoJSON/],
@@ -80,7 +80,7 @@ describe("a boundary that cannot be used", () => {
   });
 });
 
-describe("rings that contradict each other", () => {
+describe("rings that contradict each other", { timeout: 30_000 }, () => {
   const outer = box(400_000, 5_700_000, 400_100, 5_700_100);
 
   // Two squares of 100 m that share 100 × 40 m.

@@ -11,7 +11,7 @@ import { makeShp, rectangle } from "./make-shapefile.ts";
 const read = (zip: Uint8Array, layer?: string) => readZippedShapefile(zip, listZip(zip), { layer });
 const shp = makeShp([[rectangle(0, 0, 10, 10)]]);
 
-describe("a zipped shapefile", () => {
+describe("a zipped shapefile", { timeout: 30_000 }, () => {
   // expected.json of the import files: GDAL reads 2 features, 28 parts, no holes, 1731 vertices; first vertex as stored.
   test("in a folder with a file manager's leftovers is one layer", () => {
     const found = read(imported("made/zip_with_folder_and_mac_junk.zip"));
@@ -60,7 +60,7 @@ describe("a zipped shapefile", () => {
   });
 });
 
-describe("the records of a .shp", () => {
+describe("the records of a .shp", { timeout: 30_000 }, () => {
   test("are refused at any shorter length", () => {
     const whole = makeShp([[rectangle(0, 0, 1, 1)], [rectangle(2, 0, 3, 1)]]);
     expect(readShp(whole, "a").polygons).toHaveLength(2);
@@ -147,7 +147,7 @@ describe("the records of a .shp", () => {
 });
 
 // expected.json of the import files: GDAL 3.6.2, first vertex of the first polygon as stored and in WGS 84.
-describe.skipIf(!outsideExists)("shapefiles in other systems", () => {
+describe.skipIf(!outsideExists)("shapefiles in other systems", { timeout: 30_000 }, () => {
   test.each([
     ["crs_conus_albers", -75.78317260742188, 36.225193023681655],
     ["crs_utm18_nad83", -75.78317260742188, 36.225193023681655],

@@ -22,7 +22,7 @@ const SIZE = 24;
 const FLAGS_AND_METHOD = 8;
 const CRC = 16;
 
-describe("the files of a zip archive", () => {
+describe("the files of a zip archive", { timeout: 30_000 }, () => {
   test("are listed without folders and the leftovers of file managers", () => {
     expect(listZip(imported("made/zip_with_folder_and_mac_junk.zip")).map(({ name }) => name)).toEqual([
       "survey/ms_two_states.shp",
@@ -54,7 +54,7 @@ describe("the files of a zip archive", () => {
   });
 });
 
-describe("a hostile or broken archive", () => {
+describe("a hostile or broken archive", { timeout: 30_000 }, () => {
   // 100 MB of zeros pack to about 100 kB.
   test("of more than 60 MB in all is refused before anything is unpacked", () => {
     const zip = zipSync({

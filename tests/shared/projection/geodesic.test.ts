@@ -66,7 +66,7 @@ function geodesic([lng1, lat1]: readonly [number, number], [lng2, lat2]: readonl
 const ringArea = (ring: readonly (readonly [number, number])[]) =>
   Math.abs(areaOnEllipsoid(ring.slice(1).map((vertex, i) => geodesic(ring[i] ?? vertex, vertex))));
 
-describe("area on the ellipsoid", () => {
+describe("area on the ellipsoid", { timeout: 30_000 }, () => {
   // GeographicLib 2.1.2, Planimeter, edges as geodesics; here the edges are geodesics too (above), the integral is the product's.
   test.each(geodesicAreas.filter(({ id }) => id !== "nc_dare"))(
     "of $id equals GeographicLib's to 1e-9",
