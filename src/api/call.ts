@@ -47,7 +47,7 @@ export function addressOf<P extends Schema, Q extends Schema, B extends Schema, 
     return encodeURIComponent(value);
   });
   const query = new URLSearchParams();
-  for (const [name, value] of Object.entries((input.query ?? {}) as Record<string, unknown>)) {
+  for (const [name, value] of Object.entries(input.query ?? {})) {
     if (typeof value === "string" || typeof value === "number") query.set(name, String(value));
   }
   return query.size === 0 ? path : `${path}?${query.toString()}`;

@@ -11,6 +11,6 @@ export function surveyKey(surveyId: string, ...rest: readonly (string | number)[
 }
 
 /** What never changes once it is there (sealed cells, files): not touched by acts on the survey. */
-export function foreverKey(surveyId: string, ...rest: readonly (string | number)[]): readonly (string | number)[] {
+export function foreverKey(surveyId: string, ...rest: readonly unknown[]): readonly unknown[] {
   return ["forever", surveyId, ...rest];
 }

@@ -18,7 +18,7 @@ interface NewSurveyFormProps {
 
 /** Everything that a survey starts with. Whoever starts it is its planner. */
 export function NewSurveyForm({ now, onStarted }: NewSurveyFormProps) {
-  const zone = useMemo(ownTimeZone, []);
+  const zone = useMemo(() => ownTimeZone(), []);
   const zones = useMemo(() => timeZones(zone), [zone]);
   const create = useCreateSurvey();
   const form = useForm<NewSurveyFields>({
