@@ -106,10 +106,17 @@ describe("how often nominal 95 % limits hold the truth, clumped counts drawn wit
       const random = uniform(20_311_203);
       const samples = 4000;
       const t = tQuantile(0.95, n - 1);
-      const t = tQuantile(0.95, n - 1);
       const held = { t: 0, logNormal: 0 };
       for (let i = 0; i < samples; i += 1) {
-        const { limits } = valuesOf(Array.from({ length: n }, () => negativeBinomial(mean, k, random))).mean;
+        const values = Array.from({ length: n }, () => negativeBinomial(mean, k, random));
+        const sample = srsEstimate({ design: "srs-wr", units: 1000, values, distinct: n });
+        const error = numberOf(sample.standardErrorOfMean);
+        // An all-zero sample holds nothing: a miss.
+        if (error === 0) continue;
+        const limits = {
+          t: tLimits(sample.mean, error, t),
+          logNormal: logNormalLimits(sample.mean, logNormalFactor(error / sample.mean, t)),
+        };
         for (const kind of ["t", "logNormal"] as const) {
           const found = limits[kind];
           if (found.kind === "interval" && found.lower <= mean && mean <= found.upper) held[kind] += 1;
