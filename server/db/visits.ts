@@ -1,6 +1,7 @@
 import { and, asc, eq, inArray, max } from "drizzle-orm";
 import type { Reader, Tx } from "./open.ts";
 import { accounts, members } from "./schema/accounts.ts";
+import { draws } from "./schema/draw.ts";
 import { assignments, pickActs, visits } from "./schema/field.ts";
 
 export type VisitRow = typeof visits.$inferSelect;
@@ -115,4 +116,16 @@ export function unassign(tx: Tx, visitIds: readonly string[]): void {
   tx.delete(assignments)
     .where(inArray(assignments.visitId, [...visitIds]))
     .run();
+}
+
+/** Every act on the draws of a survey, in order within each draw. */
+export function allPickActs(reader: Reader, surveyId: string): PickActRow[] {
+  return reader
+    .select({ act: pickActs })
+    .from(pickActs)
+    .innerJoin(draws, eq(draws.id, pickActs.drawId))
+    .where(eq(draws.surveyId, surveyId))
+    .orderBy(asc(draws.number), asc(pickActs.seasonId), asc(pickActs.sequence))
+    .all()
+    .map((row) => row.act);
 }

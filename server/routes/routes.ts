@@ -4,7 +4,9 @@ import { areaRoutes } from "./area.ts";
 import { frameRoutes } from "./frame.ts";
 import { countRoutes } from "./counts.ts";
 import { drawRoutes } from "./draw.ts";
+import { estimateRoutes } from "./estimate.ts";
 import { fieldRoutes } from "./field.ts";
+import { recordRoutes } from "./record.ts";
 import { surveyRoutes } from "./surveys.ts";
 
 /** Every route there is, in the order of the layer words. */
@@ -16,4 +18,6 @@ export function routes(mount: Mount): void {
   drawRoutes(mount);
   fieldRoutes(mount);
   countRoutes(mount);
+  estimateRoutes(mount);
+  recordRoutes(mount);
 }

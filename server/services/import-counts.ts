@@ -1,12 +1,11 @@
 import { sha256 } from "@noble/hashes/sha2.js";
 import { bytesToHex } from "@noble/hashes/utils.js";
-import type { CellCount } from "#shared/counts/count.ts";
 import { type ColumnChoice, guessColumns } from "#shared/counts/guess-columns.ts";
 import { type CountToWrite, matchTable, type TableVerdict } from "#shared/counts/match-table.ts";
 import { type CsvTable, readCsv } from "#shared/exchange/csv.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
-import { type CountRow, importsOf, insertImport } from "../db/counts.ts";
+import { importsOf, insertImport } from "../db/counts.ts";
 import { appendEvent } from "../db/events.ts";
 import { type Reader, type Tx, writeTx } from "../db/open.ts";
 import { type TargetRow, targetsOf } from "../db/surveys.ts";
@@ -15,6 +14,7 @@ import { keepFirstCount } from "./enter-counts.ts";
 import type { Said } from "./keep-entry.ts";
 import { newId } from "./new-id.ts";
 import { newUuid } from "./new-uuid.ts";
+import { cellCount } from "./read-estimate.ts";
 import { listVisits, type VisitView } from "./read-visits.ts";
 
 interface Wanted {
@@ -96,12 +96,6 @@ function targetHere(reader: Reader, surveyId: string, targetId: string): TargetR
   const target = targetsOf(reader, surveyId).find((row) => row.id === targetId);
   if (!target) throw new Problem("count-invalid", "This survey does not count that target. Choose one of its targets.");
   return target;
-}
-
-function cellCount({ state, value }: CountRow): CellCount {
-  if (state !== "counted") return { state };
-  if (value === null) throw new Error("a counted cell without a value");
-  return { state, value };
 }
 
 function writeRows(
