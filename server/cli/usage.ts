@@ -18,7 +18,12 @@ type Options = NonNullable<ParseArgsConfig["options"]>;
 /** node:util parseArgs, whose complaints are wrong usage. */
 export function options<T extends Options>(args: readonly string[], known: T, positionals: number) {
   try {
-    const parsed = parseArgs({ args: [...args], options: known, allowPositionals: positionals > 0, strict: true });
+    const parsed = parseArgs({
+      args: withNegativeValues(args),
+      options: known,
+      allowPositionals: positionals > 0,
+      strict: true,
+    });
     if (parsed.positionals.length > positionals) throw new UsageError(`What is "${parsed.positionals.at(-1) ?? ""}"?`);
     return parsed;
   } catch (error) {
@@ -26,6 +31,18 @@ export function options<T extends Options>(args: readonly string[], known: T, po
     const [line = ""] = (error as Error).message.split(/\n|\. To specify/);
     throw new UsageError(line);
   }
+}
+
+/** "--origin -30,10" as "--origin=-30,10": a value may begin with a minus and a digit. */
+function withNegativeValues(args: readonly string[]): string[] {
+  const joined: string[] = [];
+  for (const arg of args) {
+    const before = joined.at(-1);
+    if (/^-\d/.test(arg) && before !== undefined && /^--[a-z-]+$/.test(before))
+      joined[joined.length - 1] = `${before}=${arg}`;
+    else joined.push(arg);
+  }
+  return joined;
 }
 
 export function needed(value: string | undefined, option: string): string {

@@ -55,7 +55,7 @@ export function summarise(run: ReplayRun, checks: readonly Check[]): ReplaySumma
   const { record } = run;
   const number = (outcome: Check["outcome"]): number => checks.filter((check) => check.outcome === outcome).length;
   const newest = record.events.at(-1);
-  const declared = declaredOf(record);
+  const declared = declaredOf(record, run.events);
   const last = declared.findLast(({ draw }) => draw !== null);
   const made = number("passed") + number("failed");
   return {
@@ -140,7 +140,7 @@ function meaningOf(checks: readonly Check[]): string {
 
 function recipeOf(run: ReplayRun): DrawRecipe | null {
   const { record } = run;
-  const last = declaredOf(record).findLast(({ draw }) => draw !== null);
+  const last = declaredOf(record, run.events).findLast(({ draw }) => draw !== null);
   const frame = run.frames.get(last?.stored.frameId ?? "");
   const seed = last?.stored.seed;
   if (!last?.value || !seed || frame?.sealedSha256 == null || frame.sealedUnits === null) return null;

@@ -91,7 +91,7 @@ export function replay(value: unknown, given: ReplayGiven = {}, onProgress?: Rep
   done = 2;
   what = "the frames";
   const frames = fitsTogether ? rebuildFrames(record, events, tell) : new Map();
-  const lists = fitsTogether ? repeatDraws(record, frames, tell) : new Map();
+  const lists = fitsTogether ? repeatDraws(record, events, frames, tell) : new Map();
   const run: ReplayRun = { record, given, events, frames, lists, tell };
   const checks = [format];
   for (const [name, check] of fitsTogether ? all : CHAIN_STEPS) {

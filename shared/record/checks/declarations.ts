@@ -18,7 +18,7 @@ const TITLE = "What was declared is what was hashed";
  * its numbers, generator, reserves, limits, level and the seed's source, so none of these can have been chosen later.
  */
 export function checkDeclarations(run: ReplayRun): Check[] {
-  const declared = declaredOf(run.record);
+  const declared = declaredOf(run.record, run.events);
   const broken = run.events.brokenAmong(["draw-declared"]);
   if (broken !== null) return [notChecked("declarations", TITLE, `Not compared: ${broken} is not whole.`)];
   if (declared.length === 0) return [notChecked("declarations", TITLE, "Nothing is declared yet.")];
@@ -32,7 +32,7 @@ function compare(run: ReplayRun, { name, stored, value }: Declared): Difference 
   return firstDifference([
     () => differ(`${name}, hash of the declaration`, stored.sha256, canonicalSha256(stored.declaration)),
     () => differ(`${name}, hash in its event`, stored.sha256, event?.payload.declarationSha256),
-    () => differ(`${name}, format`, value === null ? "another" : value.format, "quillet-declaration/1"),
+    () => (value === null ? { where: name, found: "another format", expected: "quillet-declaration/1" } : null),
     () => differ(`${name}, survey`, value?.surveyId, run.record.survey.id),
     () => differ(`${name}, season`, value?.seasonId, stored.seasonId),
     () => differ(`${name}, hash of the frame`, value?.frameSha256, frame?.sealedSha256),

@@ -23,7 +23,7 @@ import type { RebuiltFrame } from "./frame-rebuilt.ts";
  * abandoned declaration would have picked once its seed is public (rule R7).
  */
 export function checkDraws(run: ReplayRun): Check[] {
-  return declaredOf(run.record).flatMap((declared) => {
+  return declaredOf(run.record, run.events).flatMap((declared) => {
     if (declared.draw !== null) return [checkDraw(run, declared, declared.draw)];
     return declared.stored.seed === null ? [] : [listAbandoned(run, declared)];
   });

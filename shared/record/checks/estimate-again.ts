@@ -35,10 +35,10 @@ export function estimateAgain(run: ReplayRun, of: EstimateOf): EstimateResult | 
     design: declared.value.design.kind,
     units: frame.cells.units,
     picks: lists.flatMap(({ use }) => use.inUse.map(picks)),
-    closedPicks: lists.flatMap(({ use, entries }) => [
-      ...use.closed.map(picks),
-      ...use.passedOver.flatMap(({ position }) => entries.slice(position - 1, position).map(picks)),
-    ]),
+    closedPicks: lists.flatMap(({ use, entries }) => {
+      const closed = new Set([...use.closed, ...use.passedOver].map(({ position }) => position));
+      return entries.filter(({ position }) => closed.has(position)).map(picks);
+    }),
     counts: new Map([...counts].map(([unit, { inForce }]) => [unit, cellCount(inForce)])),
     countedBefore: new Map(
       [...counts].flatMap(([unit, { countedBefore }]) => (countedBefore === null ? [] : [[unit, countedBefore]])),
@@ -58,11 +58,12 @@ function liveDrawAt(
   const made = new Map(run.events.of("draw-made").map(({ sequence, payload }) => [payload.drawId, sequence]));
   const ended = new Map(run.events.of("draw-withdrawn").map(({ sequence, payload }) => [payload.drawId, sequence]));
   return (
-    declaredOf(run.record)
+    declaredOf(run.record, run.events)
       .flatMap((one) => (one.draw === null || one.stored.seasonId !== seasonId ? [] : [{ ...one, draw: one.draw }]))
       .findLast(({ draw }) => {
         const sequence = made.get(draw.id);
-        return sequence !== undefined && sequence <= until && (ended.get(draw.id) ?? Infinity) > until;
+        const end = ended.get(draw.id);
+        return sequence !== undefined && sequence <= until && (end === undefined || end > until);
       }) ?? null
   );
 }

@@ -24,7 +24,7 @@ export function checkOrderOfProof(run: ReplayRun): Check[] {
     "declaration-abandoned",
   ]);
   if (broken !== null) return [notChecked("order", TITLE, `Not compared: ${broken} is not whole.`)];
-  const all = declaredOf(run.record).map((one) => ({ one, steps: stepsOf(run, one) }));
+  const all = declaredOf(run.record, run.events).map((one) => ({ one, steps: stepsOf(run, one) }));
   if (all.length === 0) return [notChecked("order", TITLE, "Nothing is declared yet.")];
   const difference =
     all.map(({ one, steps }) => orderDifference(one, steps)).find((found) => found !== null) ?? overlap(all);

@@ -23,7 +23,9 @@ const TITLE = "Reserves were opened in order";
 export function checkReserves(run: ReplayRun): Check[] {
   const broken = run.events.brokenAmong(["pick-closed", "count-amended", "draw-made"]);
   if (broken !== null) return [notChecked("reserves", TITLE, `Not compared: ${broken} is not whole.`)];
-  const drawn = declaredOf(run.record).flatMap((one) => (one.draw === null ? [] : [{ ...one, draw: one.draw }]));
+  const drawn = declaredOf(run.record, run.events).flatMap((one) =>
+    one.draw === null ? [] : [{ ...one, draw: one.draw }],
+  );
   if (drawn.length === 0) return [notChecked("reserves", TITLE, "No cells are drawn yet.")];
   let opened = 0;
   let closings = 0;

@@ -7,7 +7,7 @@ import { type Declared, declaredOf, nameOf } from "./declared.ts";
 export function checkSeeds(run: ReplayRun): Check[] {
   const broken = run.events.brokenAmong(["seed-given"]);
   const given = new Set(run.events.of("seed-given").map(({ payload }) => payload.declarationId));
-  return declaredOf(run.record)
+  return declaredOf(run.record, run.events)
     .filter(({ stored }) => stored.seed !== null || given.has(stored.id))
     .map((declared) => {
       const id = `seed-${declared.number}`;
@@ -23,14 +23,15 @@ function compare(run: ReplayRun, { name, stored, value }: Declared): Difference 
   return firstDifference([
     () => differ(`${name}, seed`, seed?.text, event?.payload.seed),
     () => differ(`${name}, source of the seed`, seed?.source, event?.payload.source),
-    () => differ(`${name}, source of the seed as declared`, seed?.source, value?.seedSource.kind),
+    () =>
+      value === null ? null : differ(`${name}, source of the seed as declared`, seed?.source, value.seedSource.kind),
     () => differ(`${name}, seed given at`, seed?.at, event?.at),
     () => differ(`${name}, seed given by`, seed?.member, event?.member),
   ]);
 }
 
 function detail(run: ReplayRun, { stored, value }: Declared): string {
-  if (stored.seed === null || value === null) return "";
+  if (stored.seed === null || value === null) return "Its declaration is not the one that was sealed.";
   const name = nameOf(run.record, stored.seed.member);
   return `${quotedSeed(stored.seed.text)}. ${seedSourceSentence(value.seedSource, name)}`;
 }

@@ -23,6 +23,7 @@ export function checkTold(run: ReplayRun): Check[] {
     () => missing(run),
     ...draws.map((draw, place) => () => differ(`draw ${draw.number}, its number`, draw.number, place + 1)),
     ...draws.map((draw) => () => withdrawal(run, draw)),
+    ...draws.map((draw) => () => useInSeason(run, draw)),
     ...declarations.map((stored, place) => () => abandonment(run, stored, place + 1)),
   ]);
   const withdrawn = draws.filter((draw) => draw.withdrawn !== null).length;
@@ -61,6 +62,18 @@ type Ending = { readonly reason: string; readonly at: string; readonly member: s
 function withdrawal(run: ReplayRun, draw: ReplayRun["record"]["draws"][number]): Difference | null {
   const event = run.events.of("draw-withdrawn").find(({ payload }) => payload.drawId === draw.id);
   return endings(`draw ${draw.number}, withdrawn`, draw.withdrawn, event);
+}
+
+/** The season that took a draw when it was made, and let it go when it was withdrawn. */
+function useInSeason(run: ReplayRun, draw: ReplayRun["record"]["draws"][number]): Difference | null {
+  const stored = run.record.declarations.find(({ id }) => id === draw.declarationId);
+  const taken = run.record.seasonDraws.find(({ drawId }) => drawId === draw.id);
+  const where = `draw ${draw.number}`;
+  return firstDifference([
+    () => differ(`${where}, season that uses it`, taken?.seasonId, stored?.seasonId),
+    () => differ(`${where}, in use from`, taken?.takenAt, draw.drawnAt),
+    () => differ(`${where}, in use until`, taken?.endedAt ?? null, draw.withdrawn?.at ?? null),
+  ]);
 }
 
 function abandonment(

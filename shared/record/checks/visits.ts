@@ -55,7 +55,7 @@ const keyOf = (season: string, frame: string, unit: number): string => `${season
 /** When each cell was first put in use, by season, frame and unit; null where a list could not be made again. */
 function openedUnits(run: ReplayRun): Map<string, string> | null {
   const opened = new Map<string, string>();
-  for (const { stored, draw, ...rest } of declaredOf(run.record)) {
+  for (const { stored, draw, ...rest } of declaredOf(run.record, run.events)) {
     if (draw === null) continue;
     if (!Array.isArray(run.lists.get(stored.id))) return null;
     const made = run.events.of("draw-made").find(({ payload }) => payload.drawId === draw.id);
