@@ -23,7 +23,7 @@ let frame: SealedFrame;
 beforeAll(async () => {
   server = await startTestServer();
   team = await startTeam(server);
-});
+}, 60_000);
 afterAll(() => server.stop());
 beforeEach(async () => {
   team = await anotherSurvey(team);
