@@ -1,6 +1,6 @@
 import L from "leaflet";
 import type { CellRows } from "#shared/frame/cells.ts";
-import { paintCells, type CellColours } from "./cell-paint.ts";
+import { flatRings, paintCells, thinnedRings, type CellColours, type FlatRing } from "./cell-paint.ts";
 import type { CellGrid, PlaneRing } from "./sheet-geometry.ts";
 import { createTileQueue } from "./tile-queue.ts";
 
@@ -17,6 +17,9 @@ const SIDE = 256;
 /** The cells of a frame as canvas tiles, painted from rows of runs, a few ms of them an animation frame. */
 export class CellTiles extends L.GridLayer {
   private content: CellTilesContent;
+  private rings: readonly FlatRing[] | null;
+  /** The rings as they are needed at one scale. */
+  private thinned: { readonly scale: number; readonly rings: readonly FlatRing[] } | null = null;
   private readonly queue = createTileQueue();
   private readonly gone = new WeakSet<HTMLElement>();
 
@@ -32,11 +35,16 @@ export class CellTiles extends L.GridLayer {
       maxZoom: 12,
     });
     this.content = content;
+    this.rings = content.clip === null ? null : flatRings(content.clip);
     this.on("tileunload", (event: L.TileEvent) => this.gone.add(event.tile));
   }
 
   /** Other cells, grid, cut or colours: all tiles are painted anew. */
   show(content: CellTilesContent): void {
+    if (content.clip !== this.content.clip) {
+      this.rings = content.clip === null ? null : flatRings(content.clip);
+      this.thinned = null;
+    }
     this.content = content;
     this.queue.clear();
     this.redraw();
@@ -60,11 +68,17 @@ export class CellTiles extends L.GridLayer {
         const pen = canvas.getContext("2d");
         if (pen !== null) {
           pen.scale(ratio, ratio);
-          paintCells(pen, this.content.cells, this.content.grid, place, this.content.colours, this.content.clip);
+          paintCells(pen, this.content.cells, this.content.grid, place, this.content.colours, this.cutAt(place.scale));
         }
         done(undefined, canvas);
       },
     });
     return canvas;
+  }
+
+  private cutAt(scale: number): readonly FlatRing[] | null {
+    if (this.rings === null) return null;
+    if (this.thinned?.scale !== scale) this.thinned = { scale, rings: thinnedRings(this.rings, scale) };
+    return this.thinned.rings;
   }
 }

@@ -1,6 +1,6 @@
 import type { LngLatOf } from "./planes.ts";
 import { SheetAngles } from "./SheetAngles.tsx";
-import { gridLines, gridStep, type GridLine } from "./sheet-lines.ts";
+import { gridLines, gridStep, sheetGraticule, type GridLine } from "./sheet-lines.ts";
 import type { SheetMargins } from "./sheet-margins.ts";
 import type { ElementSize } from "./use-element-size.ts";
 import type { SheetWindow } from "./use-planar-map.ts";
@@ -33,24 +33,51 @@ function Figures({ line }: { readonly line: GridLine }) {
   );
 }
 
+/** Where dark and light change: each line of the grid begins a dark half. */
+interface BarRhythm {
+  readonly step: number;
+  /** The place of any one line. */
+  readonly phase: number;
+}
+
 /** The dark halves of the bar: from each line half a step on. */
-function barsAlong(low: number, high: number, step: number): [number, number][] {
+function barsAlong(low: number, high: number, { step, phase }: BarRhythm): [number, number][] {
   const bars: [number, number][] = [];
-  for (let k = Math.floor(low / step); k * step < high; k += 1) {
-    if ((k + 0.5) * step > low) bars.push([Math.max(low, k * step), Math.min(high, (k + 0.5) * step)]);
+  for (let k = Math.floor((low - phase) / step); phase + k * step < high; k += 1) {
+    if (phase + (k + 0.5) * step > low)
+      bars.push([Math.max(low, phase + k * step), Math.min(high, phase + (k + 0.5) * step)]);
   }
   return bars;
 }
 
+/** The rhythm of the lines that are drawn: the CRS's grid, or the graticule where there is none. */
+function rhythms(
+  window: SheetWindow,
+  inMetres: boolean,
+  lngLatOf: LngLatOf | undefined,
+): { across: BarRhythm; up: BarRhythm } {
+  const step = gridStep(window.scale);
+  const metres = { step, phase: 0 };
+  if (inMetres || lngLatOf === undefined) return { across: metres, up: metres };
+  const { lower, right } = sheetGraticule(window, lngLatOf);
+  const of = (ticks: readonly { at: number }[]) => {
+    const [first, second] = ticks;
+    return first === undefined || second === undefined
+      ? metres
+      : { step: Math.abs(second.at - first.at), phase: first.at };
+  };
+  return { across: of(lower), up: of(right) };
+}
+
 function barPath(
-  { west, east, south, north }: SheetWindow,
-  step: number,
+  window: SheetWindow,
+  rhythm: ReturnType<typeof rhythms>,
   { left, top, right, bottom, x, y }: BorderPlace,
 ): string {
-  const across = barsAlong(west, east, step).map(
+  const across = barsAlong(window.west, window.east, rhythm.across).map(
     ([from, to]) => `M${x(from)} ${top - 2.5}H${x(to)}M${x(from)} ${bottom + 2.5}H${x(to)}`,
   );
-  const up = barsAlong(south, north, step).map(
+  const up = barsAlong(window.south, window.north, rhythm.up).map(
     ([from, to]) => `M${left - 2.5} ${y(from)}V${y(to)}M${right + 2.5} ${y(from)}V${y(to)}`,
   );
   return across.join("") + up.join("");
@@ -94,7 +121,11 @@ export function SheetBorder({ window, margins, size, inMetres, lngLatOf }: Sheet
         stroke="var(--map-neatline)"
         strokeWidth="1.6"
       />
-      <path d={barPath(window, step, border)} stroke="var(--map-neatline)" strokeWidth="2.2" />
+      <path
+        d={barPath(window, rhythms(window, inMetres, lngLatOf), border)}
+        stroke="var(--map-neatline)"
+        strokeWidth="2.2"
+      />
       <g className="q-sheet-figures">
         {columns.map((line) =>
           line.bold === "" || border.x(line.value) > right - 12 ? null : (

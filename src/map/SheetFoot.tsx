@@ -6,12 +6,14 @@ import { gridStep } from "./sheet-lines.ts";
 interface SheetFootProps {
   readonly scale: number;
   readonly compact: boolean;
+  /** Beside a list: less room for the bar. */
+  readonly narrow: boolean;
   readonly crsName: string | null;
   readonly legend: ReactNode;
 }
 
 /** Below the sheet: scale bar and CRS, legend, north. On a phone the bar lies inside the sheet and only the legend below it. */
-export function SheetFoot({ scale, compact, crsName, legend }: SheetFootProps) {
+export function SheetFoot({ scale, compact, narrow, crsName, legend }: SheetFootProps) {
   if (compact)
     return legend === undefined ? null : (
       <figcaption className="q-sheet-foot q-sheet-foot-compact">{legend}</figcaption>
@@ -21,7 +23,7 @@ export function SheetFoot({ scale, compact, crsName, legend }: SheetFootProps) {
   return (
     <figcaption className="q-sheet-foot">
       <div>
-        <ScaleBar scale={scale} widest={200} parts={4} />
+        <ScaleBar scale={scale} widest={narrow ? 130 : 200} parts={4} />
         <p>{crsName === null ? "Longitude and latitude, WGS\u00a084" : `${crsName}, lines every ${every}`}</p>
       </div>
       <div className="q-sheet-legend">{legend}</div>

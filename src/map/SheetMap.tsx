@@ -113,7 +113,13 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
         {sheet !== null && <SheetContext value={sheet}>{children}</SheetContext>}
       </div>
       {seen !== undefined && (
-        <SheetFoot scale={seen.scale} compact={margins.compact} crsName={crsName} legend={legend} />
+        <SheetFoot
+          scale={seen.scale}
+          compact={margins.compact}
+          narrow={size.width < 680}
+          crsName={crsName}
+          legend={legend}
+        />
       )}
     </figure>
   );

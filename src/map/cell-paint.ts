@@ -87,7 +87,7 @@ export function paintCells(
   grid: CellGrid,
   tile: TilePlace,
   colours: CellColours,
-  clip: readonly PlaneRing[] | null,
+  clip: readonly FlatRing[] | null,
 ): void {
   const width = (grid.widthMm / 1000) * tile.scale;
   const height = (grid.heightMm / 1000) * tile.scale;
@@ -125,40 +125,73 @@ export function paintCells(
   pen.restore();
 }
 
+/** Rings in metres, x0, y0, x1, y1 …: what many tiles are cut to, without an object a vertex. */
+export type FlatRing = Float64Array;
+
+export function flatRings(rings: readonly PlaneRing[]): FlatRing[] {
+  return rings.map((ring) => {
+    const flat = new Float64Array(2 * ring.length);
+    ring.forEach(([x, y], index) => {
+      flat[2 * index] = x / 1000;
+      flat[2 * index + 1] = y / 1000;
+    });
+    return flat;
+  });
+}
+
+/** The rings without vertices nearer than 0.3 px to the one before, for one scale; done once for all tiles of a zoom. */
+export function thinnedRings(rings: readonly FlatRing[], scale: number): FlatRing[] {
+  const near = 0.3 / scale;
+  return rings.map((ring) => {
+    const kept = new Float64Array(ring.length);
+    let length = 0;
+    let lastX = NaN;
+    let lastY = NaN;
+    for (let i = 0; i < ring.length; i += 2) {
+      const x = ring[i] ?? 0;
+      const y = ring[i + 1] ?? 0;
+      if (Math.abs(x - lastX) < near && Math.abs(y - lastY) < near) continue;
+      kept[length] = x;
+      kept[length + 1] = y;
+      length += 2;
+      lastX = x;
+      lastY = y;
+    }
+    return kept.slice(0, length);
+  });
+}
+
 /** On which outer sides of the tile a place lies: 1 west, 2 east, 4 north, 8 south. */
 function sides(x: number, y: number, size: number): number {
   return (x < -2 ? 1 : x > size + 2 ? 2 : 0) | (y < -2 ? 4 : y > size + 2 ? 8 : 0);
 }
 
 /**
- * Clips to the inside of the rings (even–odd). A vertex that lies with both its neighbours beyond the same side of the tile, or less
- * than 0.3 px from the one before, is left out: inside the tile nothing changes, and a long boundary costs only what is near.
+ * Clips to the inside of the rings (even–odd). A vertex that lies with both its neighbours beyond the same side of the tile is left
+ * out: inside the tile nothing changes, and a long boundary costs only what is near.
  */
-function clipTo(pen: Pen, rings: readonly PlaneRing[], tile: TilePlace): void {
+function clipTo(pen: Pen, rings: readonly FlatRing[], tile: TilePlace): void {
   pen.beginPath();
   for (const ring of rings) clipRing(pen, ring, tile);
   pen.clip("evenodd");
 }
 
-function clipRing(pen: Pen, ring: PlaneRing, tile: TilePlace): void {
-  const place = (vertex: readonly [number, number]) => {
-    const x = (vertex[0] / 1000 - tile.west) * tile.scale;
-    const y = (tile.north - vertex[1] / 1000) * tile.scale;
-    return { x, y, sides: sides(x, y, tile.size) };
-  };
-  let last: ReturnType<typeof place> | null = null;
-  for (let index = 0; index < ring.length; index += 1) {
-    const vertex = ring[index];
-    if (vertex === undefined) break;
-    const here = place(vertex);
-    if (last === null) pen.moveTo(here.x, here.y);
-    else {
-      const next = place(ring[(index + 1) % ring.length] ?? vertex);
-      if ((here.sides & last.sides & next.sides) !== 0) continue;
-      if (Math.abs(here.x - last.x) < 0.3 && Math.abs(here.y - last.y) < 0.3) continue;
-      pen.lineTo(here.x, here.y);
-    }
-    last = here;
+function clipRing(pen: Pen, ring: FlatRing, { west, north, scale, size }: TilePlace): void {
+  let x = ((ring[0] ?? 0) - west) * scale;
+  let y = (north - (ring[1] ?? 0)) * scale;
+  let here = sides(x, y, size);
+  let kept = -1;
+  for (let i = 0; i < ring.length; i += 2) {
+    const next = (i + 2) % ring.length;
+    const nextX = ((ring[next] ?? 0) - west) * scale;
+    const nextY = (north - (ring[next + 1] ?? 0)) * scale;
+    const there = sides(nextX, nextY, size);
+    if (kept < 0) pen.moveTo(x, y);
+    else if ((kept & here & there) === 0) pen.lineTo(x, y);
+    if (kept < 0 || (kept & here & there) === 0) kept = here;
+    x = nextX;
+    y = nextY;
+    here = there;
   }
   pen.closePath();
 }

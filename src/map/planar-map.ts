@@ -50,7 +50,7 @@ export function fittingScale(bounds: PlaneBounds, width: number, height: number,
 /** Shows the whole of the bounds. */
 export function fitWhole(map: L.Map, bounds: PlaneBounds): void {
   const size = map.getSize();
-  const margin = Math.min(36, 0.06 * Math.min(size.x, size.y));
+  const margin = Math.min(26, 0.05 * Math.min(size.x, size.y));
   const zoom = Math.min(NEAREST, Math.max(FARTHEST, Math.log2(fittingScale(bounds, size.x, size.y, margin))));
   map.setView(place((bounds.west + bounds.east) / 2, (bounds.south + bounds.north) / 2), zoom, { animate: false });
 }

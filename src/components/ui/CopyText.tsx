@@ -28,7 +28,7 @@ export function CopyText({ text, label, children }: CopyTextProps) {
       <button type="button" className="q-copy" title={text} aria-label={`Copy ${label}: ${text}`} onClick={copy}>
         {children ?? text}
       </button>
-      <span role="status" className="ml-2 text-note text-ink-3">
+      <span role="status" className={said === "" ? "sr-only" : "ml-2 text-note text-ink-3"}>
         {said}
       </span>
     </>

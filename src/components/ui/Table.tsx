@@ -17,7 +17,7 @@ interface TableProps {
 export function Table({ caption, showCaption = false, dense = false, sticky = false, children }: TableProps) {
   return (
     <div
-      className={classes("q-table-scroll", sticky && "q-table-sticky")}
+      className={classes("q-table-scroll", sticky && "q-table-sticky q-table-named")}
       role="group"
       tabIndex={sticky ? 0 : undefined}
       aria-label={sticky && typeof caption === "string" ? caption : undefined}

@@ -19,7 +19,6 @@ export function TextInput({ unit, mono = false, end, type = "text", ...rest }: T
       <input {...field} {...rest} type={type} className={classes("q-input", mono && "q-input-mono")} />
       {unit !== undefined && <span className="q-unit">{unit}</span>}
       {end !== undefined && <span className="q-unit">{end}</span>}
-      {end}
     </span>
   );
 }
