@@ -39,7 +39,9 @@ function LoadedSurveys({ surveys }: { readonly surveys: readonly SurveySummary[]
           <p>
             {waiting.length === 0
               ? "Your surveys are below, open to read."
-              : "Each of them is the next step of a survey in which you have a part."}
+              : waiting.length === 1
+                ? "It is the next step of a survey in which you have a part."
+                : "Each of them is the next step of a survey in which you have a part."}
           </p>
         </div>
         {start}

@@ -32,7 +32,7 @@ export function CrsSearch({ projectedOnly = false, onChoose, suggestions = [], c
   return (
     <div className="grid gap-2">
       <Field label="EPSG code or name" help="“25831”, “UTM zone 31N”, “national grid”">
-        <TextInput type="search" autoComplete="off" value={typed} onChange={(event) => setTyped(event.target.value)} />
+        <TextInput autoComplete="off" value={typed} onChange={(event) => setTyped(event.target.value)} />
       </Field>
       {found.isError && text.length >= 2 && <Refusal error={found.error} />}
       {found.isFetching && found.data === undefined && <RuledLoading label="Searching" lines={2} />}

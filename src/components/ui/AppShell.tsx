@@ -38,7 +38,8 @@ function StagesOnAPhone({
   here,
 }: {
   stages: readonly Stage[];
-  current: Stage;
+  /** Undefined on a page beside the stages. */
+  current: Stage | undefined;
   foot: ReactNode;
   here: string;
 }) {
@@ -47,13 +48,23 @@ function StagesOnAPhone({
     <Radix.Root open={open} onOpenChange={setOpen}>
       <Radix.Trigger
         className="q-stage-button"
-        aria-label={`${current.name}, stage ${stages.indexOf(current) + 1} of ${stages.length}: show all stages`}
+        aria-label={
+          current === undefined
+            ? "Show all stages"
+            : `${current.name}, stage ${stages.indexOf(current) + 1} of ${stages.length}: show all stages`
+        }
       >
-        <StageMark state={current.state} />
-        {current.name}
-        <span>
-          {stages.indexOf(current) + 1} of {stages.length}
-        </span>
+        {current === undefined ? (
+          "Stages"
+        ) : (
+          <>
+            <StageMark state={current.state} />
+            {current.name}
+            <span>
+              {stages.indexOf(current) + 1} of {stages.length}
+            </span>
+          </>
+        )}
         <i aria-hidden="true" />
       </Radix.Trigger>
       <Radix.Portal>
@@ -62,7 +73,13 @@ function StagesOnAPhone({
             <Radix.Title className="flex-1 px-4 text-h3">{here}</Radix.Title>
             <Radix.Close className="q-stage-button">Close</Radix.Close>
           </div>
-          <StageRail stages={stages} current={current.id} layout="page" foot={foot} onGo={() => setOpen(false)} />
+          <StageRail
+            stages={stages}
+            current={current?.id ?? null}
+            layout="page"
+            foot={foot}
+            onGo={() => setOpen(false)}
+          />
         </Radix.Content>
       </Radix.Portal>
     </Radix.Root>
@@ -84,7 +101,7 @@ export function AppShell({
 }: AppShellProps) {
   const current = stages?.find((stage) => stage.id === currentStage);
   return (
-    <div className="q-shell" data-stages={current === undefined ? undefined : ""}>
+    <div className="q-shell" data-stages={stages === undefined ? undefined : ""}>
       <a className="q-skip" href="#main">
         To the content
       </a>
@@ -105,7 +122,7 @@ export function AppShell({
           {hereNote !== undefined && <span className="q-crumb-note">{hereNote}</span>}
         </nav>
         {end !== undefined && <div className="q-header-end">{end}</div>}
-        {stages !== undefined && current !== undefined && (
+        {stages !== undefined && (
           <StagesOnAPhone stages={stages} current={current} foot={railFoot} here={here ?? "Stages"} />
         )}
       </header>

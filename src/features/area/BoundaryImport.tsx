@@ -1,7 +1,7 @@
 import { MAX_AREA_FILE_BYTES } from "#shared/api/area.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { FileDrop } from "../../components/ui/FileDrop.tsx";
-import { formatBytes } from "../../components/ui/format.ts";
+import { formatBytes, formatNumber, formatUnit } from "../../components/ui/format.ts";
 import { Progress } from "../../components/ui/Progress.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { AreaQuestionForm } from "./AreaQuestionForm.tsx";
@@ -17,12 +17,13 @@ interface BoundaryImportProps {
 /** Choosing a boundary file, and answering what it leaves open. A refused file stays chosen. */
 export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
   const { file, reading, refusal, question } = boundary;
+  const canAnswer = question?.kind === "crs" || question?.kind === "layer";
   return (
     <div className="grid gap-3">
       {file !== null && (
         <FileRow name={file.name}>
           {formatBytes(file.size)}
-          {!reading && refusal !== null && (question === null ? ", refused" : ", an answer is open")}
+          {!reading && refusal !== null && (canAnswer ? ", an answer is open" : ", refused")}
         </FileRow>
       )}
       {reading && <Progress label="Reading the file" value={null} onCancel={boundary.cancel} />}
@@ -42,7 +43,7 @@ export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
       {!reading && (
         <FileDrop
           label={file === null ? "Drop the boundary file here" : "Another file"}
-          help={`GeoJSON, zipped shapefile or KML, at most ${formatBytes(MAX_AREA_FILE_BYTES)}.`}
+          help={`GeoJSON, zipped shapefile or KML, at most ${formatUnit(formatNumber(MAX_AREA_FILE_BYTES / 1_000_000), "MB")}.`}
           accept=".geojson,.json,.zip,.kml"
           primary={file === null}
           onFile={boundary.take}

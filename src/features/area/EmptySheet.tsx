@@ -2,7 +2,9 @@
 export function EmptySheet({ text }: { readonly text: string }) {
   return (
     <div className="q-empty-sheet">
-      <p>{text}</p>
+      <div>
+        <p>{text}</p>
+      </div>
     </div>
   );
 }

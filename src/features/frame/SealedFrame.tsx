@@ -10,6 +10,7 @@ import { KeyValues, type KeyValue } from "../../components/ui/KeyValues.tsx";
 import { MapPage } from "../../components/ui/MapPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
+import type { PlaneReference } from "../../workers/frame-preview-work.ts";
 import { FindCell } from "./FindCell.tsx";
 import { FrameAreas } from "./FrameAreas.tsx";
 import { presetOf } from "./frame-settings.ts";
@@ -51,10 +52,15 @@ function factsOf(frame: FrameVersion, seal: Seal): KeyValue[] {
   ];
 }
 
+/** A sealed frame's plane is there: it is only read. */
+function planeOf(surveyId: string, { spec }: FrameVersion): PlaneReference {
+  return { surveyId, areaId: spec.areaId, epsg: spec.epsg, mayMake: false };
+}
+
 /** The sheet of a sealed frame, once plane and cells are there. */
 function SealedSheet({ surveyId, surveyName, frame, chosen, onChoose }: SealedFrameProps & Chosen) {
   const { spec } = frame;
-  const plane = usePlane({ surveyId, areaId: spec.areaId, epsg: spec.epsg, mayMake: false });
+  const plane = usePlane(planeOf(surveyId, frame));
   const cells = useSealedCells(surveyId, frame.id);
   const error = plane.error ?? cells.error;
   if (plane.data === undefined || plane.isPlaceholderData) {
@@ -108,6 +114,7 @@ export function SealedFrame(props: SealedFrameProps) {
   const { surveyId, plural, frame, seal, mayReadFiles, onNewVersion, drawTo } = props;
   const [chosen, setChosen] = useState<CellAddress | null>(null);
   const cells = useSealedCells(surveyId, frame.id);
+  const plane = usePlane(planeOf(surveyId, frame));
   const preset = presetOf(frame.spec);
   return (
     <MapPage
@@ -124,7 +131,7 @@ export function SealedFrame(props: SealedFrameProps) {
       actionNote="Nothing is drawn yet by going there: design and seed come first."
     >
       {props.versions}
-      <p className="q-speak">{speaksFor(preset, seal.summary, plural, 0)}</p>
+      <p className="q-speak">{speaksFor(preset, seal.summary, plural, plane.data?.holes ?? 0)}</p>
       <div className="my-3">
         <KeyValues items={factsOf(frame, seal)} />
       </div>
