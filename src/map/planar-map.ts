@@ -23,6 +23,8 @@ export function createPlanarMap(element: HTMLElement, bounds: PlaneBounds): L.Ma
       north: Math.round((bounds.south + bounds.north) / 2),
     }),
     attributionControl: false,
+    // The sheet follows its own element's size; a second watcher would count as somebody moving the map.
+    trackResize: false,
     zoomControl: false,
     zoomAnimation: false,
     fadeAnimation: false,
