@@ -67,16 +67,12 @@ function findClashes(names: readonly string[], cells: readonly CellToName[]): { 
 
 /** The first remedy that works: a shorter prefix, a longer name, another scheme. */
 function remedy(cells: readonly CellToName[], settings: Required<NameSettings>): string {
-  const longest = (scheme: NameScheme) =>
-    fullNames(cells, scheme).reduce((most, name) => Math.max(most, name.length), 0);
   const works = (changed: Partial<NameSettings>) => named(cells, { ...settings, ...changed }).clashes.length === 0;
-  const needed = longest(settings.scheme);
-  const room = settings.length - needed;
   const prefix = plain(settings.prefix);
-  if (prefix.length > 0 && room >= 0 && works({ prefix: prefix.slice(0, room) })) {
-    return room === 0
-      ? "Leave the prefix out."
-      : `Use a prefix of at most ${room} ${room === 1 ? "character" : "characters"}.`;
+  for (let room = prefix.length - 1; room >= 0; room -= 1) {
+    if (!works({ prefix: prefix.slice(0, room) })) continue;
+    if (room === 0) return "Leave the prefix out.";
+    return `Use a prefix of at most ${room} ${room === 1 ? "character" : "characters"}.`;
   }
   const longer = NAME_LENGTHS.find((length) => length > settings.length && works({ length }));
   const shorter = (["unit", "order"] as const).find((scheme) => scheme !== settings.scheme && works({ scheme }));

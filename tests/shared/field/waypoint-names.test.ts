@@ -30,6 +30,22 @@ describe("waypoint names", () => {
     expect(waypointNames(cells, { length: 6, prefix: "S" }).nextStep).toBe("Leave the prefix out.");
   });
 
+  // ABC2701 and ABD2701 differ at the third character: with three more in front at the sixth, which a length of six
+  // keeps; with four in front at the seventh, which it cuts.
+  test("the longest prefix that keeps the names apart is told, though the labels are cut", () => {
+    const cells = [cell("ABC2701"), cell("ABD2701")];
+    expect(waypointNames(cells, { length: 6, prefix: "SKER" }).nextStep).toBe("Use a prefix of at most 3 characters.");
+    expect(waypointNames(cells, { length: 6, prefix: "SKE" }).names).toEqual(["SKEABC", "SKEABD"]);
+  });
+
+  // No prefix helps where the labels differ in their seventh character only.
+  test("where no prefix is short enough, longer names or another scheme are proposed", () => {
+    const cells = [cell("ABC2701", 1, 1), cell("ABC2702", 2, 2)];
+    expect(waypointNames(cells, { length: 6, prefix: "SKER" }).nextStep).toBe(
+      "Allow 14 characters if the unit does, or name the waypoints by unit number.",
+    );
+  });
+
   // AAAA10001 and AAAA10002 differ in the ninth character only.
   test("labels too long for the unit: longer names, or names by unit number", () => {
     const cells = [cell("AAAA10001", 123_456, 1), cell("AAAA10002", 123_457, 2)];
@@ -38,7 +54,9 @@ describe("waypoint names", () => {
     expect(named.nextStep).toBe("Allow 10 characters if the unit does, or name the waypoints by unit number.");
     expect(waypointNames(cells, { length: 8, scheme: "unit" }).names).toEqual(["123456", "123457"]);
   });
+});
 
+describe("names of other kinds and lengths", () => {
   test("names by place in the draw order have leading zeros, so that a unit sorts them", () => {
     const cells = [cell("A1", 9, 3), cell("B2", 1200, 12)];
     expect(waypointNames(cells, { length: 6, scheme: "order", prefix: "d" }).names).toEqual(["D03", "D12"]);
