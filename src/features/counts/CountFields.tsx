@@ -1,0 +1,50 @@
+import { STATE_WORDS } from "#shared/counts/count.ts";
+import { Field } from "../../components/ui/Field.tsx";
+import { NumberInput } from "../../components/ui/NumberInput.tsx";
+import { Select } from "../../components/ui/Select.tsx";
+import { TextInput } from "../../components/ui/TextInput.tsx";
+import { type CountTexts, type Reason, REASONS } from "./count-form.ts";
+
+interface CountFieldsProps {
+  readonly plural: string;
+  readonly texts: CountTexts;
+  readonly onTexts: (texts: CountTexts) => void;
+  readonly error: string | undefined;
+}
+
+/** A number, or one of the reasons why there is none; and a note. */
+export function CountFields({ plural, texts, onTexts, error }: CountFieldsProps) {
+  return (
+    <div className="grid gap-3 sm:grid-cols-2">
+      <Field
+        label="Count"
+        error={error}
+        help={texts.reason === null ? "Empty means not visited yet, never zero." : "No number belongs to this reason."}
+      >
+        <NumberInput
+          unit={plural}
+          value={texts.number}
+          disabled={texts.reason !== null}
+          onChange={(event) => onTexts({ ...texts, number: event.target.value })}
+        />
+      </Field>
+      <Field label="Or no count, because" help="A lead closes the pick afterwards, and the next reserve opens.">
+        <Select
+          value={texts.reason ?? ""}
+          onChange={(event) =>
+            onTexts({ ...texts, reason: event.target.value === "" ? null : (event.target.value as Reason) })
+          }
+          options={[
+            { value: "", label: "it was counted" },
+            ...REASONS.map((reason) => ({ value: reason, label: STATE_WORDS[reason] })),
+          ]}
+        />
+      </Field>
+      <div className="sm:col-span-2">
+        <Field label="Note" aside="may stay empty">
+          <TextInput value={texts.note} onChange={(event) => onTexts({ ...texts, note: event.target.value })} />
+        </Field>
+      </div>
+    </div>
+  );
+}

@@ -1,0 +1,213 @@
+import { useState } from "react";
+import type { Visit } from "#shared/api/field.ts";
+import { useVisits } from "../../api/visits.ts";
+import { isSettled } from "../../api/visit-words.ts";
+import { Banner } from "../../components/ui/Banner.tsx";
+import { Button } from "../../components/ui/Button.tsx";
+import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
+import { EmptyState } from "../../components/ui/EmptyState.tsx";
+import { formatCount, formatNumber } from "../../components/ui/format.ts";
+import { Ledger } from "../../components/ui/Ledger.tsx";
+import { MarginNote } from "../../components/ui/MarginNote.tsx";
+import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
+import { Refusal } from "../../components/ui/Refusal.tsx";
+import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
+import { Section } from "../../components/ui/Section.tsx";
+import { AssignBar } from "./AssignBar.tsx";
+import { ClosePickDialog } from "./ClosePickDialog.tsx";
+import { FieldMap } from "./FieldMap.tsx";
+import { useFieldMembers } from "./queries.ts";
+import { Safety } from "./Safety.tsx";
+import { shownVisits, type VisitFilter, VisitFilters } from "./VisitFilters.tsx";
+import { VisitTable, waitsForLead } from "./VisitTable.tsx";
+import { WaypointPanel } from "./WaypointPanel.tsx";
+
+export interface FieldStageProps {
+  readonly surveyId: string;
+  readonly surveyName: string;
+  readonly safetyNotes: string;
+  readonly mayAssign: boolean;
+  readonly mayClose: boolean;
+  readonly mayExport: boolean;
+  /** Sees only the cells that are theirs. */
+  readonly ownOnly: boolean;
+  readonly drawTo: string;
+  readonly countsTo: string;
+}
+
+type Visits = NonNullable<ReturnType<typeof useVisits>["data"]>;
+
+/** The cells to visit: who goes, waypoints, what is done, and what can't be counted. */
+export function FieldStage(props: FieldStageProps) {
+  const visits = useVisits(props.surveyId);
+  if (visits.data === undefined) {
+    return (
+      <div className="p-8">
+        {visits.error === null ? <RuledLoading label="Loading the cells to visit" /> : <Refusal error={visits.error} />}
+      </div>
+    );
+  }
+  if (visits.data.visits.length === 0) return <NothingToVisit {...props} />;
+  return <Field {...props} data={visits.data} />;
+}
+
+function NothingToVisit({ ownOnly, drawTo }: FieldStageProps) {
+  return (
+    <ReadingPage title="Field">
+      {ownOnly ? (
+        <EmptyState title="No cells are yours yet">
+          A field lead shares the drawn cells out. Yours appear here, with their waypoints.
+        </EmptyState>
+      ) : (
+        <EmptyState title="No cells drawn yet" action={<ButtonLink to={drawTo}>To the draw</ButtonLink>}>
+          Crews go to the cells of the live draw. Declare one and draw it first.
+        </EmptyState>
+      )}
+    </ReadingPage>
+  );
+}
+
+function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) {
+  const [filter, setFilter] = useState<VisitFilter>({ who: "", state: "" });
+  const [selected, setSelected] = useState<ReadonlySet<string>>(new Set());
+  const [chosen, setChosen] = useState<string | null>(null);
+  const [closing, setClosing] = useState<string | null>(null);
+  const members = useFieldMembers(props.surveyId, props.mayAssign);
+  const shown = shownVisits(data.visits, filter);
+  const toClose = data.visits.find(({ id }) => id === closing);
+  const chosenVisit = data.visits.find(({ id }) => id === chosen);
+  const reported = data.visits.filter(waitsForLead);
+  const select = (visitId: string, on: boolean) => {
+    setSelected((before) => {
+      const after = new Set(before);
+      if (on) after.add(visitId);
+      else after.delete(visitId);
+      return after;
+    });
+  };
+  return (
+    <ReadingPage
+      title={titleOf(data.visits, props.ownOnly)}
+      band={
+        <Ledger
+          items={ledgerOf(data, props.ownOnly)}
+          action={<ButtonLink to={props.countsTo}>Enter counts</ButtonLink>}
+        />
+      }
+      margin={
+        <>
+          {props.mayExport && (
+            <MarginNote title="Waypoints">
+              <WaypointPanel
+                surveyId={props.surveyId}
+                surveyName={props.surveyName}
+                visits={data.visits}
+                people={props.ownOnly ? [] : peopleOf(data.visits)}
+              />
+            </MarginNote>
+          )}
+          <Safety notes={props.safetyNotes} />
+        </>
+      }
+    >
+      {props.mayClose && reported.length > 0 && (
+        <Banner
+          tone="ochre"
+          title={`${formatCount(reported.length, "cell was", "cells were")} reported as not countable.`}
+        >
+          Close each with its reason, and the next reserve opens; or send somebody again.
+        </Banner>
+      )}
+      <FieldMap
+        surveyId={props.surveyId}
+        frameId={data.frameId}
+        visits={data.visits}
+        chosen={chosen}
+        onChoose={setChosen}
+      />
+      <Section
+        title="Cells to visit"
+        aside={<VisitFilters visits={data.visits} filter={filter} onFilter={setFilter} />}
+      >
+        {props.mayAssign && (
+          <AssignBar
+            surveyId={props.surveyId}
+            members={members.data ?? []}
+            selected={selected}
+            onDone={() => setSelected(new Set())}
+          />
+        )}
+        {props.mayAssign && (
+          <p className="my-2 flex flex-wrap gap-4">
+            <Button variant="link" onClick={() => setSelected(new Set(shown.map(({ id }) => id)))}>
+              {`Select all ${formatNumber(shown.length)} shown`}
+            </Button>
+            {selected.size > 0 && (
+              <Button variant="link" onClick={() => setSelected(new Set())}>
+                Select none
+              </Button>
+            )}
+          </p>
+        )}
+        {props.mayClose && chosenVisit !== undefined && (
+          <p className="my-2">
+            <Button
+              disabled={chosenVisit.state === "closed" || chosenVisit.count.state === "counted"}
+              onClick={() => setClosing(chosenVisit.id)}
+            >
+              {`Close ${chosenVisit.label}…`}
+            </Button>
+          </p>
+        )}
+        <VisitTable
+          visits={shown}
+          selected={props.mayAssign ? selected : null}
+          onSelect={select}
+          chosen={chosen}
+          onChoose={(id) => setChosen((before) => (before === id ? null : id))}
+        />
+      </Section>
+      {toClose !== undefined && (
+        <ClosePickDialog
+          surveyId={props.surveyId}
+          visit={toClose}
+          reservesLeft={data.reservesLeft}
+          onClose={() => setClosing(null)}
+        />
+      )}
+    </ReadingPage>
+  );
+}
+
+function titleOf(visits: readonly Visit[], ownOnly: boolean): string {
+  const settled = visits.filter(isSettled).length;
+  const whose = ownOnly ? "your " : "";
+  return `${formatNumber(settled)} of ${whose}${formatCount(visits.length, "cell")} settled`;
+}
+
+function ledgerOf(data: Visits, ownOnly: boolean) {
+  const counted = data.visits.filter(({ count }) => count.state === "counted").length;
+  const assigned = data.visits.filter(({ assignedTo }) => assignedTo !== null).length;
+  const own = [
+    { key: "Counted", value: formatNumber(counted) },
+    { key: "Not visited yet", value: formatNumber(data.visits.filter((visit) => !isSettled(visit)).length) },
+  ];
+  if (ownOnly) return own;
+  return [
+    ...own,
+    { key: "Shared out", value: `${formatNumber(assigned)} of ${formatNumber(data.visits.length)}` },
+    { key: "Reserves left", value: formatNumber(data.reservesLeft) },
+    { key: "If we stop tonight", value: prefixText(data) },
+  ];
+}
+
+function prefixText({ completePrefix, picks }: Visits): string {
+  if (completePrefix === 0) return "no pick is complete from the first on";
+  return completePrefix >= picks ? "every pick is settled" : `picks 1 to ${completePrefix} are complete`;
+}
+
+function peopleOf(visits: readonly Visit[]): { id: string; name: string }[] {
+  const people = new Map<string, string>();
+  for (const { assignedTo } of visits) if (assignedTo !== null) people.set(assignedTo.memberId, assignedTo.name);
+  return [...people].map(([id, name]) => ({ id, name }));
+}

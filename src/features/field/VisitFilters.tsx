@@ -1,0 +1,57 @@
+import type { Visit } from "#shared/api/field.ts";
+import { isSettled } from "../../api/visit-words.ts";
+import { Select } from "../../components/ui/Select.tsx";
+import { waitsForLead } from "./VisitTable.tsx";
+
+export interface VisitFilter {
+  /** A member's id, "nobody", or everybody where empty. */
+  readonly who: string;
+  readonly state: "" | "open" | "settled" | "reported";
+}
+
+export function shownVisits(visits: readonly Visit[], { who, state }: VisitFilter): Visit[] {
+  return visits.filter(
+    (visit) =>
+      (who === "" || (who === "nobody" ? visit.assignedTo === null : visit.assignedTo?.memberId === who)) &&
+      (state === "" ||
+        (state === "open" && !isSettled(visit)) ||
+        (state === "settled" && isSettled(visit)) ||
+        (state === "reported" && waitsForLead(visit))),
+  );
+}
+
+interface VisitFiltersProps {
+  readonly visits: readonly Visit[];
+  readonly filter: VisitFilter;
+  readonly onFilter: (filter: VisitFilter) => void;
+}
+
+export function VisitFilters({ visits, filter, onFilter }: VisitFiltersProps) {
+  const people = new Map<string, string>();
+  for (const { assignedTo } of visits) if (assignedTo !== null) people.set(assignedTo.memberId, assignedTo.name);
+  return (
+    <span className="flex flex-wrap gap-2">
+      <Select
+        aria-label="Whose cells"
+        value={filter.who}
+        onChange={(event) => onFilter({ ...filter, who: event.target.value })}
+        options={[
+          { value: "", label: "everybody’s" },
+          { value: "nobody", label: "nobody’s yet" },
+          ...[...people].map(([value, label]) => ({ value, label })),
+        ]}
+      />
+      <Select
+        aria-label="In which state"
+        value={filter.state}
+        onChange={(event) => onFilter({ ...filter, state: event.target.value as VisitFilter["state"] })}
+        options={[
+          { value: "", label: "in any state" },
+          { value: "open", label: "not visited yet" },
+          { value: "settled", label: "settled" },
+          { value: "reported", label: "reported, not closed" },
+        ]}
+      />
+    </span>
+  );
+}

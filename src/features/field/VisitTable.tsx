@@ -1,0 +1,103 @@
+import type { Visit } from "#shared/api/field.ts";
+import { markOf, ordersText } from "../../api/visit-words.ts";
+import type { DataColumn } from "../../components/ui/data-column.ts";
+import { DataTable } from "../../components/ui/DataTable.tsx";
+import { formatNumber } from "../../components/ui/format.ts";
+import { RepeatBadge } from "../../components/ui/RepeatBadge.tsx";
+import { VisitStateLabel } from "../../components/ui/VisitStateLabel.tsx";
+
+interface VisitTableProps {
+  readonly visits: readonly Visit[];
+  /** Selected for sharing out; null where nothing can be shared out. */
+  readonly selected: ReadonlySet<string> | null;
+  readonly onSelect: (visitId: string, on: boolean) => void;
+  readonly chosen: string | null;
+  readonly onChoose: (visitId: string) => void;
+}
+
+/** The cells to visit, one row a cell however often it was picked. */
+export function VisitTable({ visits, selected, onSelect, chosen, onChoose }: VisitTableProps) {
+  const columns: DataColumn<Visit>[] = [
+    { id: "cell", head: "Cell", sortBy: (visit) => visit.label, cell: (visit) => <b>{visit.label}</b> },
+    {
+      id: "unit",
+      head: "Unit",
+      numeric: true,
+      sortBy: (visit) => visit.unit,
+      cell: (visit) => formatNumber(visit.unit),
+    },
+    {
+      id: "order",
+      head: "Draw order",
+      sortBy: (visit) => visit.orders[0],
+      cell: (visit) => (
+        <span className="q-state">
+          {ordersText(visit.orders)}
+          {visit.orders.length > 1 && <RepeatBadge times={visit.orders.length} />}
+        </span>
+      ),
+    },
+    {
+      id: "who",
+      head: "Who and when",
+      sortBy: (visit) => visit.assignedTo?.name,
+      cell: (visit) => whoText(visit),
+    },
+    {
+      id: "state",
+      head: "State",
+      sortBy: (visit) => visit.count.state,
+      cell: (visit) => (
+        <span>
+          <VisitStateLabel state={markOf(visit.count)} />
+          {noteOf(visit) !== "" && <span className="q-help">{noteOf(visit)}</span>}
+        </span>
+      ),
+    },
+  ];
+  const select: DataColumn<Visit> = {
+    id: "select",
+    head: <span className="sr-only">Selected</span>,
+    cell: (visit) => (
+      <input
+        type="checkbox"
+        className="q-check"
+        aria-label={`Select ${visit.label}`}
+        checked={selected?.has(visit.id) ?? false}
+        onClick={(event) => event.stopPropagation()}
+        onChange={(event) => onSelect(visit.id, event.target.checked)}
+      />
+    ),
+  };
+  return (
+    <DataTable
+      dense
+      caption="Cells to visit"
+      columns={selected === null ? columns : [select, ...columns]}
+      rows={visits}
+      rowId={(visit) => visit.id}
+      chosen={chosen}
+      onChoose={onChoose}
+      tone={(visit) => (waitsForLead(visit) ? "attention" : undefined)}
+      initialSort={{ column: "order", direction: "ascending" }}
+      empty="No cell fits the filter."
+    />
+  );
+}
+
+function whoText(visit: Visit): string {
+  if (visit.assignedTo === null) return "nobody yet";
+  const { name, day } = visit.assignedTo;
+  return day === "" ? name : `${name}, ${day}`;
+}
+
+/** Reported as not countable, but not closed: no reserve has been opened for it. */
+export function waitsForLead(visit: Visit): boolean {
+  return visit.state === "in-use" && ["refused", "unsafe", "not-reached", "lost"].includes(visit.count.state);
+}
+
+function noteOf(visit: Visit): string {
+  if (waitsForLead(visit)) return "reported, not closed yet";
+  if (visit.state === "closed") return "closed";
+  return visit.openedFor === null ? "" : `reserve, opened for ${visit.openedFor}`;
+}
