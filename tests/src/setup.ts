@@ -3,6 +3,7 @@ import { afterEach, vi } from "vitest";
 
 // jsdom lays nothing out: lists that keep only the rows in sight read a height, and observers exist but never report.
 Object.defineProperty(HTMLElement.prototype, "clientHeight", { configurable: true, get: () => 560 });
+Object.defineProperty(HTMLElement.prototype, "clientWidth", { configurable: true, get: () => 800 });
 Object.defineProperty(HTMLElement.prototype, "offsetHeight", { configurable: true, get: () => 560 });
 Object.defineProperty(HTMLElement.prototype, "offsetWidth", { configurable: true, get: () => 800 });
 
@@ -18,6 +19,8 @@ class SilentObserver {
   }
 }
 
+/** As CSS.escape for the ids and names that React makes: every character but letters, digits, _ and - gets a backslash. */
+vi.stubGlobal("CSS", { escape: (text: string) => text.replaceAll(/[^\w-]/g, "\\$&") });
 vi.stubGlobal("ResizeObserver", SilentObserver);
 Element.prototype.scrollIntoView = () => undefined;
 Element.prototype.hasPointerCapture = () => false;

@@ -1,5 +1,5 @@
 import { Dialog as Radix } from "radix-ui";
-import type { ReactNode } from "react";
+import { useRef, type ReactNode } from "react";
 import { classes } from "./classes.ts";
 
 interface DialogProps {
@@ -17,12 +17,20 @@ interface DialogProps {
 
 /** A question that needs an answer before the page goes on. Escape and the scrim leave it; the focus returns to where it was. */
 export function Dialog({ open, onOpenChange, title, lead, children, actions, wide = false }: DialogProps) {
+  const opener = useRef<Element | null>(null);
   return (
     <Radix.Root open={open} onOpenChange={onOpenChange}>
       <Radix.Portal>
         <Radix.Overlay className="q-scrim" />
         <Radix.Content
           className={classes("q-dialog", wide && "q-dialog-wide")}
+          onOpenAutoFocus={() => {
+            opener.current = document.activeElement;
+          }}
+          onCloseAutoFocus={(event) => {
+            event.preventDefault();
+            if (opener.current instanceof HTMLElement) opener.current.focus();
+          }}
           {...(lead === undefined && { "aria-describedby": undefined })}
         >
           <Radix.Title asChild>

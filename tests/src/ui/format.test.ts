@@ -1,0 +1,115 @@
+import { describe, expect, it } from "vitest";
+import {
+  formatArea,
+  formatAsIs,
+  formatByError,
+  formatBytes,
+  formatCount,
+  formatHash,
+  formatHectares,
+  formatList,
+  formatMillimetres,
+  formatNumber,
+  formatPercent,
+  formatSeed,
+  formatSignificant,
+  formatTime,
+  formatTimeOfDay,
+  formatUnit,
+  formatWhole,
+} from "../../../src/components/ui/format.ts";
+
+describe("numbers on screen", () => {
+  it("parts thousands with U+202F from 1 000 up", () => {
+    expect(formatNumber(999)).toBe("999");
+    expect(formatNumber(1000)).toBe("1\u202f000");
+    expect(formatNumber(104_932_400)).toBe("104\u202f932\u202f400");
+    expect(formatNumber(1234.5, 2)).toBe("1\u202f234.50");
+  });
+
+  it("writes the minus as U+2212, and minus zero without one", () => {
+    expect(formatNumber(-12.5, 1)).toBe("\u221212.5");
+    expect(formatNumber(-0.04, 1)).toBe("0.0");
+    expect(formatNumber(-0)).toBe("0");
+  });
+
+  it("refuses to write what is no number", () => {
+    expect(() => formatNumber(NaN)).toThrow(RangeError);
+    expect(() => formatNumber(Infinity)).toThrow(RangeError);
+  });
+
+  it("keeps the decimals that a value has, and no noise of binary fractions", () => {
+    expect(formatAsIs(2.5)).toBe("2.5");
+    expect(formatAsIs(0.1 + 0.2)).toBe("0.3");
+    expect(formatAsIs(12)).toBe("12");
+  });
+
+  it("writes whole numbers beyond 2⁵³ exactly", () => {
+    expect(formatWhole(9_007_199_254_740_993n)).toBe("9\u202f007\u202f199\u202f254\u202f740\u202f993");
+    expect(formatWhole(-1000n)).toBe("\u22121\u202f000");
+  });
+
+  it("puts U+00A0 before a unit and before %", () => {
+    expect(formatUnit("20", "m")).toBe("20\u00a0m");
+    expect(formatPercent(0.2048)).toBe("20.5\u00a0%");
+    expect(formatPercent(1, 0)).toBe("100\u00a0%");
+  });
+
+  it("writes areas in hectares with two decimals, in square metres below 0.01 ha", () => {
+    expect(formatArea(262_300)).toBe("26.23\u00a0ha");
+    expect(formatArea(100)).toBe("0.01\u00a0ha");
+    expect(formatArea(99)).toBe("99\u00a0m²");
+    expect(formatArea(2.6)).toBe("2.6\u00a0m²");
+    expect(formatHectares(34_100)).toBe("3.41");
+  });
+
+  it("writes millimetres as metres with the decimals that they have", () => {
+    expect(formatMillimetres(20_000)).toBe("20\u00a0m");
+    expect(formatMillimetres(12_250)).toBe("12.25\u00a0m");
+    expect(formatMillimetres(2)).toBe("0.002\u00a0m");
+  });
+
+  it("rounds to significant figures", () => {
+    expect(formatSignificant(2925.7, 3)).toBe("2\u202f930");
+    expect(formatSignificant(0.80812, 2)).toBe("0.81");
+    expect(formatSignificant(99.96, 3)).toBe("100");
+    expect(formatSignificant(0, 3)).toBe("0");
+    expect(() => formatSignificant(1, 0)).toThrow(RangeError);
+  });
+
+  // Two figures of the standard error: 599 → tens; 0.808 → hundredths; 22.8 → ones.
+  it("writes an estimate as precisely as two figures of its standard error", () => {
+    expect(formatByError(2926, 599)).toBe("2\u202f930");
+    expect(formatByError(4387.3, 599)).toBe("4\u202f390");
+    expect(formatByError(3.948, 0.808)).toBe("3.95");
+    expect(formatByError(111.5, 22.8)).toBe("112");
+    expect(formatByError(12, 0)).toBe("12");
+  });
+
+  it("shortens a hash to its first 8 and last 6 characters", () => {
+    expect(formatHash("17f6c777" + "0".repeat(50) + "c3d9a4")).toBe("17f6c777…c3d9a4");
+    expect(formatHash("abc")).toBe("abc");
+  });
+
+  it("keeps every character of a seed, between straight quotes", () => {
+    expect(formatSeed("007 3")).toBe('"007 3"');
+  });
+
+  it("writes times of records in UTC, whatever the machine's zone", () => {
+    expect(formatTime("2031-06-03T09:12:44Z")).toBe("3 June 2031, 09:12 UTC");
+    expect(formatTime("2031-06-03T01:12:44+02:00")).toBe("2 June 2031, 23:12 UTC");
+    expect(formatTimeOfDay("2031-12-31T00:05:00Z")).toBe("00:05");
+    expect(() => formatTime("yesterday")).toThrow(RangeError);
+  });
+
+  it("writes sizes, counted nouns and lists", () => {
+    expect(formatBytes(412)).toBe("412\u00a0bytes");
+    expect(formatBytes(41_300)).toBe("41\u00a0KB");
+    expect(formatBytes(2_300_000)).toBe("2.3\u00a0MB");
+    expect(formatCount(1, "cell")).toBe("1 cell");
+    expect(formatCount(741, "cell")).toBe("741 cells");
+    expect(formatCount(0, "entry", "entries")).toBe("0 entries");
+    expect(formatList(["A", "B", "C"])).toBe("A, B and C");
+    expect(formatList(["A"])).toBe("A");
+  });
+});
