@@ -1,10 +1,10 @@
 import { useMemo } from "react";
 import type { Visit } from "#shared/api/field.ts";
 import { isSettled } from "../../api/visit-words.ts";
-import { CountsLayer, type SheetCount } from "../../map/CountsLayer.tsx";
+import { CountsLayer } from "../../map/CountsLayer.tsx";
 import { FrameSheetMap } from "../../map/FrameSheetMap.tsx";
 import { LegendEntry } from "../../map/LegendEntry.tsx";
-import { STATE_WORDS } from "#shared/counts/count.ts";
+import { sheetCount } from "../../map/sheet-counts.ts";
 
 interface FieldMapProps {
   readonly surveyId: string;
@@ -44,11 +44,4 @@ export function FieldMap({ surveyId, frameId, visits, chosen, onChoose }: FieldM
       )}
     </FrameSheetMap>
   );
-}
-
-function sheetCount({ id, column, row, label, count }: Visit): SheetCount {
-  const cell = { key: id, column, row, label };
-  if (count.state === "counted") return { ...cell, state: "counted", value: count.value };
-  if (count.state === "not-visited") return { ...cell, state: "not-visited" };
-  return { ...cell, state: "not-counted", word: STATE_WORDS[count.state] };
 }

@@ -1,0 +1,129 @@
+import { scaleLinear } from "d3-scale";
+import type { EstimateResult, Interval } from "#shared/estimate/result.ts";
+import { estimateText, printedLimitsOf } from "#shared/estimate/rounding.ts";
+import { formatNumber } from "../../components/ui/format.ts";
+
+const WIDTH = 640;
+const LEFT = 116;
+const RIGHT = 24;
+const ROW = 52;
+const TOP = 30;
+
+const NAMES = { t: "Student t", "log-normal": "Log-normal" } as const;
+
+/** Both kinds of limits on one axis with its zero, and the number seen, under which the total can't be. */
+export function LimitsAxis({ result }: { readonly result: EstimateResult }) {
+  const kinds = result.declaredLimits === "t" ? (["t", "log-normal"] as const) : (["log-normal", "t"] as const);
+  const rows = kinds.flatMap((kind) => {
+    const limits = kind === "t" ? result.total.limits.t : result.total.limits.logNormal;
+    return limits.kind === "interval" ? [{ kind, limits }] : [];
+  });
+  if (rows.length === 0) return null;
+  const most = Math.max(...rows.map(({ limits }) => limits.upper), result.total.estimate);
+  const least = Math.min(0, ...rows.map(({ limits }) => limits.lower));
+  const x = scaleLinear([least, most * 1.05], [LEFT, WIDTH - RIGHT]).nice(5);
+  const height = TOP + rows.length * ROW + 26;
+  const base = TOP + rows.length * ROW;
+  const middle = x(result.total.estimate);
+  return (
+    <svg className="block w-full" viewBox={`0 0 ${WIDTH} ${height}`} role="img" aria-label={axisText(result)}>
+      {x.ticks(6).map((tick) => (
+        <g key={tick}>
+          <path
+            d={`M${x(tick)} ${TOP - 12}V${base}`}
+            stroke={tick === 0 ? "var(--color-ink)" : "var(--color-rule)"}
+            strokeWidth={tick === 0 ? 1.5 : 1}
+          />
+          <text x={x(tick)} y={base + 17} textAnchor="middle" fontSize="12" fill="var(--color-ink-2)">
+            {formatNumber(tick)}
+          </text>
+        </g>
+      ))}
+      <path d={`M${LEFT} ${base}H${WIDTH - RIGHT}`} stroke="var(--color-ink)" />
+      <path d={`M${middle} ${TOP - 12}V${base}`} stroke="var(--color-act)" strokeDasharray="2 3" />
+      {result.seen > 0 && (
+        <path d={`M${x(result.seen)} ${base - 9}V${base}`} stroke="var(--color-ochre)" strokeWidth="2.5" />
+      )}
+      {rows.map(({ kind, limits }, index) => (
+        <LimitsLine
+          key={kind}
+          name={NAMES[kind]}
+          note={kind === result.declaredLimits ? "printed large" : "beside it"}
+          limits={limits}
+          strong={kind === result.declaredLimits}
+          y={TOP + index * ROW + 16}
+          x={x}
+          middle={middle}
+          ends={endsOf(result, kind)}
+        />
+      ))}
+    </svg>
+  );
+}
+
+interface LimitsLineProps {
+  readonly name: string;
+  readonly note: string;
+  readonly limits: Interval;
+  readonly strong: boolean;
+  readonly y: number;
+  readonly x: (value: number) => number;
+  readonly middle: number;
+  readonly ends: readonly [string, string];
+}
+
+function LimitsLine({ name, note, limits, strong, y, x, middle, ends }: LimitsLineProps) {
+  const [lower, upper] = [x(limits.lower), x(limits.upper)];
+  const colour = strong ? "var(--color-act)" : "var(--color-ink-2)";
+  const width = strong ? 2.75 : 1.5;
+  return (
+    <g>
+      <text x="0" y={y} fontSize="13" fontWeight="600" fill="var(--color-ink)">
+        {name}
+      </text>
+      <text x="0" y={y + 16} fontSize="12" fill="var(--color-ink-3)">
+        {note}
+      </text>
+      <path
+        d={`M${lower} ${y}H${upper}M${lower} ${y - 6}v12M${upper} ${y - 6}v12`}
+        stroke={colour}
+        strokeWidth={width}
+        fill="none"
+      />
+      <circle cx={middle} cy={y} r={strong ? 5.5 : 4} fill="var(--color-paper)" stroke={colour} strokeWidth="2" />
+      <text
+        x={lower}
+        y={y - 11}
+        textAnchor="middle"
+        fontSize="12"
+        fontWeight={strong ? 700 : 400}
+        fill="var(--color-ink)"
+      >
+        {ends[0]}
+      </text>
+      <text
+        x={upper}
+        y={y - 11}
+        textAnchor="middle"
+        fontSize="12"
+        fontWeight={strong ? 700 : 400}
+        fill="var(--color-ink)"
+      >
+        {ends[1]}
+      </text>
+    </g>
+  );
+}
+
+function endsOf(result: EstimateResult, kind: "t" | "log-normal"): readonly [string, string] {
+  const printed = printedLimitsOf(result, "total", kind);
+  return printed === "none" ? ["", ""] : [printed.lower, printed.upper];
+}
+
+function axisText(result: EstimateResult): string {
+  const said = (["log-normal", "t"] as const).flatMap((kind) => {
+    const printed = printedLimitsOf(result, "total", kind);
+    return printed === "none" ? [] : [`${NAMES[kind]} limits ${printed.lower} to ${printed.upper}`];
+  });
+  return `Total ${estimateText(result.total.estimate, result.total.standardError)}; ${said.join("; ")}; number seen ${formatNumber(result.seen)}`;
+}
