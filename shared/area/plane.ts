@@ -1,9 +1,12 @@
+import { ellipsoidArea } from "#shared/area/ellipsoid-area.ts";
 import type { ImportedArea, SourceRing } from "#shared/area/imported-area.ts";
+import { checkComesHome } from "#shared/area/scale.ts";
 import { splitAtTouchingVertices } from "#shared/area/touching.ts";
 import { nodeRings } from "#shared/geometry/noding.ts";
-import type { PlaneArea, Ring } from "#shared/geometry/rings.ts";
+import { areaOf, type PlaneArea, type Ring } from "#shared/geometry/rings.ts";
 import { Problem } from "#shared/problem.ts";
 import { checkFrameCrs, type Crs } from "#shared/projection/crs.ts";
+import { distortionInWords } from "#shared/projection/distortion.ts";
 import { transformer, type Position } from "#shared/projection/transformer.ts";
 
 /**
@@ -18,6 +21,7 @@ const SMOOTH_METRES = 0.001;
 const MAX_PIECE_METRES = 20_000;
 const MAX_DEPTH = 40;
 const MM_PER_METRE = 1000;
+const MM2_PER_M2 = 1_000_000;
 
 export interface PlaneRingsMade {
   readonly area: PlaneArea;
@@ -47,7 +51,10 @@ export function makePlaneRings(
   }
   const notes =
     added === 0 ? [] : [`${added} vertices added, so that no edge departs from its true course by more than 5 mm.`];
-  return { area: noded, notes: frameCrs.note === null ? notes : [...notes, frameCrs.note] };
+  const scale = Number(areaOf(noded).twiceMm2) / 2 / MM2_PER_M2 / ellipsoidArea(area);
+  notes.push(`On the plane of ${frameCrs.name} ${distortionInWords(scale)} here.`);
+  if (frameCrs.note !== null) notes.push(frameCrs.note);
+  return { area: noded, notes };
 }
 
 /**
@@ -60,7 +67,8 @@ export function projectedRings(
   onProgress?: (share: number) => void,
   maxDeparture = MAX_DEPARTURE_METRES,
 ): { rings: Ring[]; added: number } {
-  const { forward } = transformer(area.crs, frameCrs);
+  const conversion = transformer(area.crs, frameCrs);
+  const { forward } = conversion;
   const sameSystem = area.crs.text === frameCrs.text;
   const source = splitAtTouchingVertices(area).flat();
   const before = area.polygons.flat().reduce((sum, ring) => sum + ring.length, 0);
@@ -68,6 +76,7 @@ export function projectedRings(
   let done = 0;
   let made = 0;
   const rings = source.map((ring) => {
+    if (ring[0] !== undefined) checkComesHome(conversion, ring[0], area.crs, frameCrs);
     const plane = sameSystem ? ring.flat() : projectRing(ring, { forward, maxDeparture });
     done += ring.length;
     made += plane.length / 2;

@@ -1,7 +1,8 @@
 import type { ImportedArea } from "#shared/area/imported-area.ts";
+import { checkComesHome } from "#shared/area/scale.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Bounds } from "#shared/projection/suggest.ts";
-import { toWgs84, type Position } from "#shared/projection/transformer.ts";
+import { transformer, WGS84, type Position } from "#shared/projection/transformer.ts";
 
 export interface AreaOnTheGlobe {
   /** [polygon][ring][vertex] in WGS 84 longitude and latitude, rings not closed. */
@@ -11,10 +12,13 @@ export interface AreaOnTheGlobe {
 
 /**
  * The area's vertices as longitude and latitude of WGS 84, with their bounds.
- * @throws Problem area-size when the area crosses 180° or holds a pole, where longitudes jump.
+ * @throws Problem area-size when the area crosses 180° or holds a pole, where longitudes jump; crs-unsupported when its system cannot show the place.
  */
 export function onTheGlobe(area: ImportedArea): AreaOnTheGlobe {
-  const convert = toWgs84(area.crs);
+  const conversion = transformer(area.crs, WGS84);
+  for (const ring of area.polygons.flat())
+    if (ring[0] !== undefined) checkComesHome(conversion, ring[0], area.crs, WGS84);
+  const convert = conversion.forward;
   const polygons = area.polygons.map((polygon) => polygon.map((ring) => ring.map(convert)));
   let [west, south, east, north] = [Infinity, Infinity, -Infinity, -Infinity];
   for (const ring of polygons.flat()) {

@@ -90,23 +90,25 @@ describe("the records of a .shp", { timeout: 30_000 }, () => {
     expect(found.polygons.map((polygon) => polygon.length)).toEqual([2, 1]);
   });
 
-  // Both outer rings have boxes that hold the hole's box; only the second (an L turned over) does not hold the hole itself.
+  // A field with an angle-shaped island in an angle-shaped pond, and a second pond that lies in the island's box, but not in the island.
   test("give a hole to the ring that holds it, not to the one whose box does", () => {
-    const big = rectangle(0, 0, 100, 100);
-    const angle: [number, number][] = [
-      [5, 5],
-      [5, 95],
-      [95, 95],
-      [95, 90],
-      [10, 90],
-      [10, 5],
-      [5, 5],
-    ];
-    const hole = rectangle(50, 50, 60, 60, false);
-    const bigHole = rectangle(2, 2, 98, 98, false);
-    const found = readShp(makeShp([[big, bigHole, angle, rectangle(40, 40, 70, 70), hole]]), "a");
+    const angle = (grow: number): [number, number][] => {
+      const [near, far, inner] = [10 - grow, 90 + grow, 20 + grow];
+      return [
+        [near, near],
+        [near, far],
+        [far, far],
+        [far, far - 10 - 2 * grow],
+        [inner, far - 10 - 2 * grow],
+        [inner, near],
+        [near, near],
+      ];
+    };
+    const pond = angle(2).toReversed();
+    const second = rectangle(50, 50, 60, 60, false);
+    const found = readShp(makeShp([[rectangle(0, 0, 100, 100), pond, angle(0), second]]), "a");
     const holes = found.polygons.map((polygon) => polygon.slice(1).map((ring) => ring[0]));
-    expect(holes).toEqual([[bigHole[0]], [], [hole[0]]]);
+    expect(holes).toEqual([[pond[0], second[0]], []]);
   });
 
   test("with a hole in no outer ring are refused, since the parser would drop it", () => {
