@@ -7,8 +7,8 @@ import { visits } from "./schema/field.ts";
 export type CountRow = typeof countEntries.$inferSelect;
 export type CountImportRow = typeof countImports.$inferSelect;
 
-/** As they came: two of one moment stand in the order in which they were written. */
-const inOrder = [asc(countEntries.enteredAt), asc(sql`${countEntries}.rowid`)];
+/** As they were written, whatever the clock did meanwhile. */
+const inOrder = asc(sql`${countEntries}.rowid`);
 
 export function findEntry(reader: Reader, id: string): CountRow | undefined {
   return reader.select().from(countEntries).where(eq(countEntries.id, id)).get();
@@ -20,12 +20,7 @@ export function insertEntry(tx: Tx, row: CountRow): void {
 
 /** All that was ever written down for one cell, oldest first. */
 export function entriesOfVisit(reader: Reader, visitId: string): CountRow[] {
-  return reader
-    .select()
-    .from(countEntries)
-    .where(eq(countEntries.visitId, visitId))
-    .orderBy(...inOrder)
-    .all();
+  return reader.select().from(countEntries).where(eq(countEntries.visitId, visitId)).orderBy(inOrder).all();
 }
 
 const later = alias(countEntries, "later");
@@ -73,7 +68,7 @@ export function firstCountsOf(reader: Reader, seasonId: string, targetId: string
     .from(countEntries)
     .innerJoin(visits, eq(visits.id, countEntries.visitId))
     .where(and(eq(visits.seasonId, seasonId), eq(countEntries.targetId, targetId), eq(countEntries.purpose, "first")))
-    .orderBy(...inOrder)
+    .orderBy(inOrder)
     .all()
     .map((row) => row.entry);
 }
@@ -85,7 +80,7 @@ export function entriesOfSurvey(reader: Reader, surveyId: string): CountRow[] {
     .from(countEntries)
     .innerJoin(visits, eq(visits.id, countEntries.visitId))
     .where(eq(visits.surveyId, surveyId))
-    .orderBy(...inOrder)
+    .orderBy(inOrder)
     .all()
     .map((row) => row.entry);
 }
@@ -113,6 +108,6 @@ export function importsOf(reader: Reader, surveyId: string): CountImportRow[] {
     .select()
     .from(countImports)
     .where(eq(countImports.surveyId, surveyId))
-    .orderBy(asc(countImports.importedAt), asc(countImports.id))
+    .orderBy(asc(sql`${countImports}.rowid`))
     .all();
 }

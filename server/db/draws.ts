@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, isNull, max } from "drizzle-orm";
+import { and, asc, count, desc, eq, isNull, max, sql } from "drizzle-orm";
 import type { Reader, Tx } from "./open.ts";
 import {
   declarations,
@@ -65,7 +65,7 @@ function withUnits(row: Omit<DeclarationState, "units"> & { readonly units: numb
 export function declarationsOf(reader: Reader, surveyId: string): DeclarationState[] {
   return declarationStates(reader)
     .where(eq(declarations.surveyId, surveyId))
-    .orderBy(desc(declarations.declaredAt), desc(declarations.id))
+    .orderBy(desc(sql`${declarations}.rowid`))
     .all()
     .map(withUnits);
 }
@@ -182,7 +182,7 @@ export function seasonDrawsOf(reader: Reader, surveyId: string): SeasonDrawRow[]
     .from(seasonDraws)
     .innerJoin(draws, eq(draws.id, seasonDraws.drawId))
     .where(eq(draws.surveyId, surveyId))
-    .orderBy(asc(seasonDraws.takenAt), asc(seasonDraws.id))
+    .orderBy(asc(sql`${seasonDraws}.rowid`))
     .all();
 }
 
@@ -192,7 +192,7 @@ export function seasonOfDraw(reader: Reader, drawId: string): string {
     .select({ seasonId: seasonDraws.seasonId })
     .from(seasonDraws)
     .where(eq(seasonDraws.drawId, drawId))
-    .orderBy(desc(seasonDraws.takenAt))
+    .orderBy(desc(sql`${seasonDraws}.rowid`))
     .limit(1)
     .get();
   if (!row) throw new Error(`draw ${drawId} was never taken into a season`);

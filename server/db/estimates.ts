@@ -1,4 +1,4 @@
-import { asc, eq } from "drizzle-orm";
+import { asc, eq, sql } from "drizzle-orm";
 import type { Reader, Tx } from "./open.ts";
 import { keptEstimates } from "./schema/record.ts";
 
@@ -14,6 +14,6 @@ export function keptEstimatesOf(reader: Reader, surveyId: string): KeptEstimateR
     .select()
     .from(keptEstimates)
     .where(eq(keptEstimates.surveyId, surveyId))
-    .orderBy(asc(keptEstimates.keptAt), asc(keptEstimates.id))
+    .orderBy(asc(sql`${keptEstimates}.rowid`))
     .all();
 }
