@@ -12,8 +12,7 @@ const MOST_CLASSES = 16;
  */
 export function quantileOf(sorted: readonly number[], p: number): number {
   if (!(p >= 0 && p <= 1)) throw new RangeError(`a share is from 0 to 1, got ${p}`);
-  // 0.95 · 60 is 57 in decimal and a hair more in binary: the hair must not move the rank.
-  const rank = Math.max(1, Math.ceil(p * sorted.length - 1e-9));
+  const rank = Math.max(1, Math.ceil(p * sorted.length));
   const value = sorted[rank - 1];
   if (value === undefined) throw new RangeError("a quantile needs at least one value, got none");
   return value;

@@ -20,23 +20,22 @@ export interface Moments {
 }
 
 /**
- * Mean ȳ = Σy/n and variance s² = Σ(y − ȳ)²/(n − 1), without cancellation: the values are shifted by their middle one
- * first, then s² = (Σd² − (Σd)²/n)/(n − 1) with d the distance from the shifted mean, so that Σd is only rounding
- * (two-pass algorithm with correction: Chan, Golub & LeVeque 1983). Values are sorted first: their order changes nothing.
+ * Mean ȳ = Σy/n and variance s² = Σ(y − ȳ)²/(n − 1), without cancellation: two passes, the second corrected for the rounding
+ * of the mean, s² = (Σd² − (Σd)²/n)/(n − 1) with d = y − ȳ (Chan, Golub & LeVeque 1983). Values are sorted first: their order
+ * changes nothing.
  * @throws RangeError for no values, or one that is not finite.
  */
 export function moments(values: readonly number[]): Moments {
   const wrong = values.find((value) => !Number.isFinite(value));
   if (wrong !== undefined) throw new RangeError(`moments need finite values, got ${wrong}`);
+  const n = values.length;
+  if (n === 0) throw new RangeError("moments need at least one value, got none");
   const sorted = values.toSorted((a, b) => a - b);
-  const n = sorted.length;
-  const shift = sorted[Math.floor(n / 2)];
-  if (shift === undefined) throw new RangeError("moments need at least one value, got none");
   const mean = carefulSum(sorted) / n;
   if (n === 1) return { mean, variance: "undefined" };
-  const shifted = sorted.map((value) => value - shift);
-  const shiftedMean = carefulSum(shifted) / n;
-  const distances = shifted.map((value) => value - shiftedMean);
+  // Equal values differ by nothing, not by the rounding of their mean.
+  if (sorted[0] === sorted[n - 1]) return { mean, variance: 0 };
+  const distances = sorted.map((value) => value - mean);
   const left = carefulSum(distances);
   const squares = carefulSum(distances.map((distance) => distance * distance));
   return { mean, variance: Math.max(0, (squares - (left * left) / n) / (n - 1)) };

@@ -3,6 +3,7 @@ import { estimateFromCounts } from "#shared/estimate/from-counts.ts";
 import { areaSpokenForM2 } from "#shared/estimate/density.ts";
 import { estimateNotes } from "#shared/estimate/notes.ts";
 import { carefulSum, moments } from "#shared/estimate/moments.ts";
+import { srsEstimate } from "#shared/estimate/simple-random.ts";
 import { bounds, inputOf, numberOf, valuesOf } from "./builders.ts";
 
 const keys = (result: Parameters<typeof estimateNotes>[0]) => estimateNotes(result).map((note) => note.key);
@@ -15,7 +16,13 @@ describe("mean and variance", () => {
     expect(Math.abs(Number(variance) - 1)).toBeLessThanOrEqual(1e-12);
   });
 
-  // By hand: s² of {0.1, 0.2, 0.3} is 0.01, and a shift by a billion rounds each value by up to 6e-8 only.
+  // By hand: nine times 0.1 have the mean 0.1 and no variance, whatever the sum 0.9 rounds to.
+  test("equal values have a variance of exactly 0", () => {
+    expect(moments(Array<number>(9).fill(0.1)).variance).toBe(0);
+    expect(moments(Array<number>(7).fill(1e12 / 3)).variance).toBe(0);
+  });
+
+  // By hand: 10¹⁶ + 1 rounds to 10¹⁶, and a plain sum would give 0.
   test("no value is lost where large and small are added", () => {
     expect(carefulSum([1e16, 1, -1e16])).toBe(1);
     expect(moments([5]).variance).toBe("undefined");
@@ -81,6 +88,13 @@ describe("precision that can't be had", () => {
     expect(result.allZero.twoSided).toBeCloseTo(36.889, 3);
   });
 
+  // With replacement all three units of N = 3 were picked: that none is there is seen, not bounded.
+  test("only zeros in every cell of the frame need no upper limit", () => {
+    const result = valuesOf([0, 0, 0], { units: 3 });
+    expect(result.allZero).toEqual({ kind: "not-needed" });
+    expect(keys(result)).toContain("all-seen");
+  });
+
   // cv = 0.25 and t = 1.96 give C = exp(1.96·√ln 1.0625) = 1.6203 (a published table: 1 000 reads 617 to 1 620).
   test("the log-normal factor at a CV of 25 % is 1.6203", async () => {
     const { logNormalFactor, logNormalLimits } = await import("#shared/estimate/limits-log-normal.ts");
@@ -129,6 +143,12 @@ describe("without replacement", () => {
     const withIt = numberOf(valuesOf(values, { units: 8 }).total.standardError);
     const without = numberOf(valuesOf(values, { units: 8, design: "srs-wor" }).total.standardError);
     expect(without / withIt).toBeCloseTo(Math.SQRT1_2, 12);
+  });
+
+  test("more cells than the frame has are refused", () => {
+    const sample = { design: "srs-wr", units: 2, values: [1, 2, 3], distinct: 3 } as const;
+    expect(() => srsEstimate(sample)).toThrow("The picks are of 3 cells, and the frame has 2.");
+    expect(srsEstimate({ ...sample, distinct: 2 }).mean).toBe(2);
   });
 
   test("a unit that the frame doesn't have is named", () => {

@@ -162,10 +162,11 @@ describe("the distribution", () => {
     expect(got.bins[3]).toMatchObject({ from: 0.2, to: 0.3, picks: 1 });
   });
 
-  // 0.95 · 60 is 57.000000000000004 in binary: the rank is 57, not 58.
+  // ⌈0.95 · 60⌉ = 57, ⌈0.95 · 58⌉ = ⌈55.1⌉ = 56.
   test("a quantile is one of the values, at the exact rank", () => {
     const sorted = Array.from({ length: 60 }, (_, i) => i + 1);
     expect(quantileOf(sorted, 0.95)).toBe(57);
+    expect(quantileOf(sorted.slice(0, 58), 0.95)).toBe(56);
     expect(quantileOf(sorted, 0)).toBe(1);
     expect(quantileOf(sorted, 1)).toBe(60);
   });
