@@ -67,7 +67,9 @@ describe("the frame statement", () => {
     expect(rebuildCells(parseStatement(statementText(statement)))).toEqual(cells);
     expect(cells.units).toBe(6);
   });
+});
 
+describe("a statement that is not as it was sealed", () => {
   test("changing any one of its characters changes the hash or is refused", () => {
     const text = statementText(built.statement);
     const hash = frameSha256(built.statement);

@@ -129,7 +129,9 @@ describe("noding", () => {
       }),
     );
   });
+});
 
+describe("noded rings", () => {
   test("rings without crossings come back with the same area and corners", () => {
     const rings = [rectangle(0, 0, 100, 100), rectangle(20, 20, 30, 30), rectangle(25, 25, 5, 5)];
     const area = nodeRings(rings);
