@@ -96,9 +96,7 @@ function auditRings(document: Document): { rings: number; open: number; short: n
   const audit = { rings: 0, open: 0, short: 0, unreadable: 0 };
   for (const polygon of document.getElementsByTagNameNS("*", "Polygon")) {
     for (const ring of polygon.getElementsByTagNameNS("*", "LinearRing")) {
-      const texts = [...ring.getElementsByTagNameNS("*", "coordinates")].map(
-        (element) => element.textContent ?? "",
-      );
+      const texts = [...ring.getElementsByTagNameNS("*", "coordinates")].map((element) => element.textContent ?? "");
       const vertices = texts
         .join(" ")
         .trim()
