@@ -1,7 +1,7 @@
 import { Problem } from "#shared/problem.ts";
 
 /** One record of a .shp as its own headers describe it, to compare with what a parser made of it. */
-export interface ShapeRecord {
+interface ShapeRecord {
   readonly type: number;
   readonly parts: number;
   readonly points: number;
