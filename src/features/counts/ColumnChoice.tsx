@@ -27,7 +27,7 @@ export function ColumnChoice({ verdict, onColumns }: ColumnChoiceProps) {
   ];
   return (
     <>
-      <div className="grid gap-3 sm:grid-cols-3 lg:grid-cols-5">
+      <div className="grid gap-3 md:grid-cols-3 lg:grid-cols-5">
         {NAMES.map(({ column, label }) => (
           <Field key={column} label={label}>
             <Select

@@ -15,7 +15,7 @@ interface CountFieldsProps {
 /** A number, or one of the reasons why there is none; and a note. */
 export function CountFields({ plural, texts, onTexts, error }: CountFieldsProps) {
   return (
-    <div className="grid gap-3 sm:grid-cols-2">
+    <div className="grid gap-3 md:grid-cols-2">
       <Field
         label="Count"
         error={error}
@@ -40,7 +40,7 @@ export function CountFields({ plural, texts, onTexts, error }: CountFieldsProps)
           ]}
         />
       </Field>
-      <div className="sm:col-span-2">
+      <div className="md:col-span-2">
         <Field label="Note" aside="may stay empty">
           <TextInput value={texts.note} onChange={(event) => onTexts({ ...texts, note: event.target.value })} />
         </Field>

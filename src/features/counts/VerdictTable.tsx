@@ -26,8 +26,8 @@ const COLUMNS: readonly DataColumn<Row>[] = [
     cell: (row) => (
       <span>
         <b>{VERDICT_WORDS[row.verdict]}</b>
-        {row.message !== "" && <span className="q-help">{row.message}</span>}
-        {row.flag !== "" && <span className="q-help">{row.flag}</span>}
+        {row.message !== "" && <span className="q-help block">{row.message}</span>}
+        {row.flag !== "" && <span className="q-help block">{row.flag}</span>}
       </span>
     ),
   },

@@ -95,7 +95,7 @@ function DesignFields({ texts, set, errorOf, reading, units }: DesignFieldsProps
           text: DESIGN_TEXTS[kind],
         }))}
       />
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid gap-4 md:grid-cols-2">
         <Field
           label="Picks, n"
           error={errorOf("n")}
@@ -157,7 +157,7 @@ function LimitsAndSeed({ texts, set }: PartProps) {
 function LevelAndGenerator({ texts, set, error }: PartProps & { readonly error: string | undefined }) {
   return (
     <Fold quiet title="Confidence level and generator">
-      <div className="grid gap-4 py-3 sm:grid-cols-2">
+      <div className="grid gap-4 py-3 md:grid-cols-2">
         <Field label="Confidence level" error={error} help="Of the limits, in per cent.">
           <NumberInput unit="%" value={texts.level} onChange={(event) => set({ level: event.target.value })} />
         </Field>

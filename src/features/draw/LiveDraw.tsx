@@ -102,7 +102,7 @@ function DrawFacts({ draw, onRepeat }: { readonly draw: DrawDetail; readonly onR
               <Hash value={declaration.frameSha256} label="frame hash" />
               <br />
               {onRepeat !== undefined && (
-                <Button variant="link" onClick={onRepeat}>
+                <Button variant="link" size="small" onClick={onRepeat}>
                   Repeat it yourself
                 </Button>
               )}

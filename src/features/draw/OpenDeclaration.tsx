@@ -29,7 +29,7 @@ export function OpenDeclaration({ surveyId, declaration, mayDraw }: OpenDeclarat
       {mayDraw && <SeedForm surveyId={surveyId} declaration={declaration} />}
       {mayDraw && (
         <p>
-          <Button variant="link" onClick={() => setAsking(true)}>
+          <Button variant="link" size="small" onClick={() => setAsking(true)}>
             Abandon this declaration…
           </Button>
         </p>

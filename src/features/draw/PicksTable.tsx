@@ -96,7 +96,7 @@ function EntryState({ entry }: { readonly entry: DrawEntry }) {
   return (
     <span>
       {label}
-      <span className="q-help">{`reserve, opened for ${entry.openedFor}`}</span>
+      <span className="q-help block">{`reserve, opened for ${entry.openedFor}`}</span>
     </span>
   );
 }

@@ -5,7 +5,7 @@ import { addressOf } from "../../api/call.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { CodeBlock } from "../../components/ui/CodeBlock.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
-import { formatHectares, formatTime } from "../../components/ui/format.ts";
+import { formatArea, formatTime } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { MarginNote } from "../../components/ui/MarginNote.tsx";
 import type { Estimate } from "./queries.ts";
@@ -20,7 +20,7 @@ export function EstimateMargin({ surveyId, estimate }: { readonly surveyId: stri
     <>
       <MarginNote title="What it speaks for">
         <p>
-          {`Every ${context.target.singular} ${placeText(result)}: ${formatHectares(context.frame.summary.frameAreaM2)}. `}
+          {`Every ${context.target.singular} ${placeText(result)}: ${formatArea(context.frame.summary.frameAreaM2)}. `}
           {result.countIn === "inside"
             ? "Counted only inside the boundary."
             : "Whole cells were counted, also where they reach over the boundary."}
@@ -58,7 +58,7 @@ export function EstimateMargin({ surveyId, estimate }: { readonly surveyId: stri
               </a>
             </li>
             <li>
-              <Button variant="link" onClick={() => window.print()}>
+              <Button variant="link" size="small" onClick={() => window.print()}>
                 Print this page
               </Button>
             </li>

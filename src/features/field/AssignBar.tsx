@@ -44,7 +44,7 @@ export function AssignBar({ surveyId, members, selected, onDone }: AssignBarProp
           ? "Select cells in the list, then say who goes."
           : `${formatCount(selected.size, "cell")} selected.`}
       </p>
-      <div className="grid items-end gap-3 sm:grid-cols-[1fr_1fr_auto_auto]">
+      <div className="grid items-end gap-3 md:grid-cols-[minmax(0,1fr)_minmax(0,1fr)_auto_auto]">
         <Field label="Give to">
           <Select value={memberId} onChange={(event) => setMemberId(event.target.value)}>
             <option value="">Choose a person</option>

@@ -139,11 +139,11 @@ function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) 
         )}
         {props.mayAssign && (
           <p className="my-2 flex flex-wrap gap-4">
-            <Button variant="link" onClick={() => setSelected(new Set(shown.map(({ id }) => id)))}>
+            <Button variant="link" size="small" onClick={() => setSelected(new Set(shown.map(({ id }) => id)))}>
               {`Select all ${formatNumber(shown.length)} shown`}
             </Button>
             {selected.size > 0 && (
-              <Button variant="link" onClick={() => setSelected(new Set())}>
+              <Button variant="link" size="small" onClick={() => setSelected(new Set())}>
                 Select none
               </Button>
             )}

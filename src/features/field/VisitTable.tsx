@@ -50,7 +50,7 @@ export function VisitTable({ visits, selected, onSelect, chosen, onChoose }: Vis
       cell: (visit) => (
         <span>
           <VisitStateLabel state={markOf(visit.count)} />
-          {noteOf(visit) !== "" && <span className="q-help">{noteOf(visit)}</span>}
+          {noteOf(visit) !== "" && <span className="q-help block">{noteOf(visit)}</span>}
         </span>
       ),
     },

@@ -75,7 +75,7 @@ export function WaypointPanel({ surveyId, surveyName, visits, people }: Waypoint
         options={NAME_LENGTHS.map((value) => ({ value: String(value), label: String(value) }))}
         help="Characters. The oldest units take 6."
       />
-      <div className="grid gap-3 sm:grid-cols-2">
+      <div className="grid gap-3 md:grid-cols-2">
         <Field label="Named by">
           <Select
             value={scheme}

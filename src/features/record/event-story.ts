@@ -1,13 +1,6 @@
 import type { RecordEvent } from "#shared/api/record.ts";
 import { EVENT_PAYLOADS, type EventKind, type EventPayload, isEventKind } from "#shared/record/events.ts";
-import {
-  formatAsIs,
-  formatCount,
-  formatHash,
-  formatHectares,
-  formatList,
-  formatSeed,
-} from "../../components/ui/format.ts";
+import { formatAsIs, formatCount, formatHash, formatArea, formatList, formatSeed } from "../../components/ui/format.ts";
 import type { TimelineMark } from "../../components/ui/TimelineEntry.tsx";
 
 /** What an event says to a reader: one sentence, what stands below it, and its mark on the line. */
@@ -59,7 +52,7 @@ const TELLERS: Tellers = {
   "member-added": (p) => story(`${p.name} joined as ${ROLE_SAID[p.role] ?? p.role}`, ""),
   "area-imported": (p, by) =>
     story(
-      `The study area was kept: ${formatHectares(p.geodesicAreaM2)}`,
+      `The study area was kept: ${formatArea(p.geodesicAreaM2)}`,
       sentences(`From ${p.fileName}, version ${p.number}, by ${by}.`, p.mended.join(" ")),
     ),
   "frame-sealed": (p, by) =>
