@@ -87,12 +87,39 @@ describe("shares and centres", () => {
   });
 });
 
+/** The number that gives 1 modulo `modulus` when multiplied by `value`; null where there is none. Euclid's algorithm. */
+function inverse(value: number, modulus: number): number | null {
+  let [a, b, x, y] = [BigInt(value % modulus), BigInt(modulus), 1n, 0n];
+  while (b !== 0n) [a, b, x, y] = [b, a % b, y, x - (a / b) * y];
+  return a === 1n ? Number(((x % BigInt(modulus)) + BigInt(modulus)) % BigInt(modulus)) : null;
+}
+
 describe("centres, half-open", () => {
   // By hand: cells of 10 mm with centres at 5, 15, 25; the square 5 … 15 has the centre (5, 5) at its lower left corner,
   // (15, 5) on its right, (5, 15) on its upper edge, (15, 15) at its upper right corner.
   test("a centre on the left or lower edge is in, on the right or upper edge out", () => {
     const cells = measuredCells(one(5, 5, 15, 5, 15, 15, 5, 15), rectangles(10, 10));
     expect(cells.filter(({ centre }) => centre)).toEqual([{ column: 0, row: 0, share: 250_000_000, centre: true }]);
+  });
+
+  // The edge (0, 0) → (Δx, Δy) crosses the centre's height 1/Δy of a millimetre east (or west) of it: with Δx·height ≡ ±1 modulo Δy. The
+  // products are near 10¹⁹, where neighbouring numbers in double precision are 2,048 apart. The area lies east of the edge.
+  test("a centre that a long edge misses by less than a billionth of a millimetre falls on the right side", () => {
+    const long = fc.integer({ min: 3_000_000_000, max: 9_000_000_000 });
+    const missing = fc.tuple(long, long, fc.boolean()).filter(([deltaX, deltaY]) => inverse(deltaX, deltaY) !== null);
+    fc.assert(
+      fc.property(missing, ([deltaX, deltaY, isEast]) => {
+        const height = isEast ? (inverse(deltaX, deltaY) ?? 0) : deltaY - (inverse(deltaX, deltaY) ?? 0);
+        const product = BigInt(height) * BigInt(deltaX);
+        const x = Number((isEast ? product - 1n : product + 1n) / BigInt(deltaY));
+        const side = 900_000_000;
+        const spec = rectangles(side, side, x - side / 2, height - side / 2);
+        const cells = measuredCells(one(0, 0, deltaX + 1_000_000_000, 0, deltaX, deltaY), spec);
+        const cell = cells.find(({ column, row }) => column === 0 && row === 0);
+        expect(cell?.centre ?? false).toBe(!isEast);
+      }),
+      { numRuns: 100 },
+    );
   });
 
   // A wandering border through lattice points and centres cuts a rectangle in two.
