@@ -4,6 +4,7 @@ import { Refusal } from "../components/ui/Refusal.tsx";
 import { RuledLoading } from "../components/ui/RuledLoading.tsx";
 import { useSession } from "../features/accounts/queries.ts";
 import { paths } from "./paths.ts";
+import { AccountContext } from "./use-account.ts";
 
 /** Pages for somebody signed in; anybody else signs in first and comes back to the same address. */
 export function SignedIn() {
@@ -27,5 +28,9 @@ export function SignedIn() {
     const next = pathname === paths.home ? "" : `?next=${encodeURIComponent(pathname + search)}`;
     return <Navigate to={paths.signIn + next} replace />;
   }
-  return <Outlet />;
+  return (
+    <AccountContext value={session.data.account}>
+      <Outlet />
+    </AccountContext>
+  );
 }
