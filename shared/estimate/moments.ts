@@ -33,8 +33,6 @@ export function moments(values: readonly number[]): Moments {
   const sorted = values.toSorted((a, b) => a - b);
   const mean = carefulSum(sorted) / n;
   if (n === 1) return { mean, variance: "undefined" };
-  // Equal values differ by nothing, not by the rounding of their mean.
-  if (sorted[0] === sorted[n - 1]) return { mean, variance: 0 };
   const distances = sorted.map((value) => value - mean);
   const left = carefulSum(distances);
   const squares = carefulSum(distances.map((distance) => distance * distance));

@@ -46,6 +46,14 @@ describe("which column is what", () => {
     expect(guessColumns(header, rows, known)).toMatchObject({ label: 0, count: 2, unit: -1 });
   });
 
+  test("the place in the draw is never taken for a count", () => {
+    const rows = [
+      ["1", "F19", "4"],
+      ["2", "V5", "0"],
+    ];
+    expect(guessColumns(["Draw order", "Cell", "x"], rows, known)).toMatchObject({ label: 1, count: 2 });
+  });
+
   test("a plot column that holds unit numbers is the unit column", () => {
     const rows = [
       ["434", "4"],

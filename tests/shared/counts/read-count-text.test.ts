@@ -36,6 +36,8 @@ describe("a text is read as a number", () => {
     ["۱۲", 12],
     ["१२", 12],
     ["１２", 12],
+    // Five mathematical alphabets stand in one run of digits: these are double-struck.
+    ["𝟙𝟚", 12],
     ["١٢٫٥", 12.5],
   ])("“%s” is %s", (text, value) => {
     expect(readCountText(text)).toEqual({ kind: "value", value });
