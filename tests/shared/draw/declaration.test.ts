@@ -16,7 +16,7 @@ const declared: Declaration = {
   note: "Ruß: 60 from the pilot",
 };
 
-describe("a declaration", () => {
+describe("a declaration", { timeout: 30_000 }, () => {
   // For keys in ASCII and whole numbers Python's sorted, compact JSON in UTF-8 is the RFC 8785 form.
   test("its hash is the SHA-256 of its canonical JSON, as Python computes it", () => {
     const program =

@@ -42,7 +42,7 @@ describe("simple random draws", () => {
   });
 });
 
-describe("what holds for every simple random draw", () => {
+describe("what holds for every simple random draw", { timeout: 60_000 }, () => {
   const anyDraw = fc.record({
     units: fc.integer({ min: 1, max: 400 }),
     kind: fc.constantFrom("srs-wr" as const, "srs-wor" as const),
@@ -107,7 +107,7 @@ describe("what holds for every simple random draw", () => {
   });
 });
 
-describe("a draw as a whole", () => {
+describe("a draw as a whole", { timeout: 60_000 }, () => {
   // E[distinct] = N(1 − (1 − 1/N)ⁿ): 23.32, 55.78, 37.03, 48.79; four standard errors of the mean of 400 draws, whose
   // SD is below √(n²/2N) (number of repeats, nearly Poisson).
   test.each([

@@ -24,7 +24,7 @@ const entriesOf = (statement: (typeof statements)[number]) => {
   return drawEntries({ sha256: frameSha256, units }, design, seed, generator, reserves)[0]?.entries ?? [];
 };
 
-describe("the recipe for other tools", () => {
+describe("the recipe for other tools", { timeout: 60_000 }, () => {
   test.each(statements)("Python repeats $design.kind with $generator, seed $seed", (statement) => {
     const printed = execFileSync("python3", ["-I", "-"], { input: drawRecipe(statement).python, encoding: "utf8" });
     const expected = entriesOf(statement).map(

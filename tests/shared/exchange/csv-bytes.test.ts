@@ -52,10 +52,20 @@ describe("bytes that become text", () => {
     expect(() => readCsv(bytes)).toThrow(told);
   });
 
-  test("two hundred thousand rows are read, one more is refused", () => {
+  test("a cell of 10,000 characters and a line of 1,000 cells are read", () => {
+    expect(read(`unit,note\n1,${"x".repeat(10_000)}\n`).value.rows[0]?.[1]).toHaveLength(10_000);
+    expect(read(`${"a,".repeat(999)}b\n`).value.header).toHaveLength(1000);
+  });
+
+  test("two hundred thousand rows are read, one more is refused", { timeout: 60_000 }, () => {
     const rows = "1,2\n".repeat(200_000);
     expect(read(`unit,count\n${rows}`).value.rows).toHaveLength(200_000);
     expect(() => read(`unit,count\n${rows}3,4\n`)).toThrow("more than 200,000 rows");
     expect(() => read(`${rows}3,4\n`)).toThrow("more than 200,000 rows");
+  });
+
+  // Reading stops behind the limit: rows behind very many empty lines must not be lost without a word.
+  test("empty lines count towards the limit, so that no row is left unread", { timeout: 60_000 }, () => {
+    expect(() => read(`unit,count\n${",\n".repeat(200_005)}1,2\n`)).toThrow("more than 200,000 rows");
   });
 });

@@ -128,6 +128,17 @@ describe("a table that is read", () => {
     expect(read("unit,note\n1,a; b\n2,c; d\n").value).toMatchObject({ delimiter: ",", header: ["unit", "note"] });
   });
 
+  // Both delimiters cut every line alike; the comma cuts it into more cells.
+  test("where every line could be cut by either, the delimiter that gives more columns is taken", () => {
+    expect(read("1,2,a; b\n3,4,c; d\n").value).toMatchObject({
+      delimiter: ",",
+      rows: [
+        ["1", "2", "a; b"],
+        ["3", "4", "c; d"],
+      ],
+    });
+  });
+
   test("a first line sep=; tells the delimiter and is no row", () => {
     const { value } = read("sep=;\r\nunit;count\r\n1;2\r\n");
     expect(value).toMatchObject({ delimiter: ";", header: ["unit", "count"], rows: [["1", "2"]], lines: [3] });

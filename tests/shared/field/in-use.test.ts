@@ -155,7 +155,7 @@ describe("added, amended and reopened picks", () => {
   });
 });
 
-describe("what holds whatever happens", () => {
+describe("what holds whatever happens", { timeout: 60_000 }, () => {
   const story = fc.record({
     units: fc.integer({ min: 3, max: 25 }),
     kind: fc.constantFrom("srs-wr" as const, "srs-wor" as const),
