@@ -1,8 +1,8 @@
 import { readCountText } from "./read-count-text.ts";
 import { plainWords, readStateText } from "./read-state-text.ts";
 
-export const TABLE_COLUMNS = ["unit", "label", "count", "state", "note", "observer", "date"] as const;
-export type TableColumn = (typeof TABLE_COLUMNS)[number];
+const TABLE_COLUMNS = ["unit", "label", "count", "state", "note", "observer", "date"] as const;
+type TableColumn = (typeof TABLE_COLUMNS)[number];
 
 /** Which column of a table holds what, from 0; −1 where none does. `note` holds reasons and remarks. */
 export type ColumnChoice = Readonly<Record<TableColumn, number>>;

@@ -12,8 +12,7 @@ export interface CellToCount {
   readonly orders: readonly number[];
 }
 
-export const ROW_VERDICTS = ["new", "same", "different", "not-drawn", "empty", "question", "refused"] as const;
-export type Verdict = (typeof ROW_VERDICTS)[number];
+export type Verdict = "new" | "same" | "different" | "not-drawn" | "empty" | "question" | "refused";
 
 /** What can be wrong with a row beside its count. */
 export type RowProblem =

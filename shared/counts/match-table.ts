@@ -26,7 +26,7 @@ export interface TableToMatch {
   readonly targetWords?: readonly string[];
 }
 
-export interface RowVerdict extends Omit<ReadRow, "found"> {
+interface RowVerdict extends Omit<ReadRow, "found"> {
   readonly unit?: number;
   readonly orders?: readonly number[];
   /** What to look at although the row is good; empty for most. */

@@ -3,23 +3,20 @@ import { westernDigits } from "./digits.ts";
 import { plainWords, readStateText } from "./read-state-text.ts";
 
 /** Why a text can't be taken for a count. Each kind has one sentence, and is told with its number of rows. */
-export const REFUSED_KINDS = [
-  "negative",
-  "bound",
-  "range",
-  "approximate",
-  "doubtful",
-  "sum",
-  "uncounted-many",
-  "date",
-  "too-large",
-  "no-number",
-] as const;
-export type RefusedKind = (typeof REFUSED_KINDS)[number];
+export type RefusedKind =
+  | "negative"
+  | "bound"
+  | "range"
+  | "approximate"
+  | "doubtful"
+  | "sum"
+  | "uncounted-many"
+  | "date"
+  | "too-large"
+  | "no-number";
 
 /** What only a person can settle. */
-export const QUESTION_KINDS = ["zero-word", "fraction", "comma"] as const;
-export type QuestionKind = (typeof QUESTION_KINDS)[number];
+export type QuestionKind = "zero-word" | "fraction" | "comma";
 
 export type CountReading =
   | { readonly kind: "value"; readonly value: number }

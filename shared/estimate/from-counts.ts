@@ -39,7 +39,7 @@ export interface EstimateInput {
 }
 
 /** A pick with the number that it brings into the estimate. */
-export interface ValuedPick extends DrawnPick {
+interface ValuedPick extends DrawnPick {
   readonly value: number;
 }
 

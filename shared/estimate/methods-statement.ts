@@ -63,7 +63,7 @@ const MONTHS = [
 ];
 
 /** "2031-06-03T09:12:00Z" as "3 June 2031". Throws RangeError for another form. */
-export function dayText(iso: string): string {
+function dayText(iso: string): string {
   const found = /^(\d{4})-(\d{2})-(\d{2})/.exec(iso);
   const month = MONTHS[Number(found?.[2]) - 1];
   if (found === null || month === undefined) throw new RangeError(`cannot read "${iso}" as a day`);

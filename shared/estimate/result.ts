@@ -19,7 +19,7 @@ export type LimitKind = (typeof LIMIT_KINDS)[number];
  * - no-area: the frame is a list without areas.
  */
 export const NONE_REASONS = ["one-pick", "no-variation", "all-zero", "mean-zero", "too-wide", "no-area"] as const;
-export type NoneReason = (typeof NONE_REASONS)[number];
+type NoneReason = (typeof NONE_REASONS)[number];
 
 export interface None {
   readonly kind: "none";
@@ -103,7 +103,7 @@ export interface Distribution {
 }
 
 /** A count at least ten times the next largest: kept, and named with what it does to the total. */
-export interface FarAbove {
+interface FarAbove {
   readonly kind: "far-above";
   readonly unit: number;
   readonly label: string;
