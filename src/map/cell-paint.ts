@@ -21,11 +21,12 @@ export type Pen = Pick<
   | "fillStyle"
   | "strokeStyle"
   | "lineWidth"
-  | "fillRect"
+  | "rect"
   | "beginPath"
   | "moveTo"
   | "lineTo"
   | "closePath"
+  | "fill"
   | "stroke"
   | "clip"
   | "save"
@@ -34,6 +35,8 @@ export type Pen = Pick<
 
 /** Cells under this many px have no lines of their own. */
 const LINES_FROM = 6;
+/** Under this many px nobody sees whether a tint stops at the boundary: its line is as wide. */
+const CLIP_FROM = 2;
 
 /** The first piece of a row whose last column is not west of `column`; the row's end where there is none. */
 function firstPiece(cells: CellRows, from: number, to: number, column: number): number {
@@ -102,10 +105,12 @@ export function paintCells(
   });
   if (edges.length === 0 && runs.length === 0) return;
   pen.save();
-  if (clip !== null && edges.length > 0) clipTo(pen, clip, tile);
+  if (clip !== null && edges.length > 0 && Math.min(width, height) >= CLIP_FROM) clipTo(pen, clip, tile);
   pen.fillStyle = colours.edge;
+  pen.beginPath();
   for (const [row, first, last] of edges)
-    pen.fillRect(x(first), y(row + 1), Math.max(1, x(last + 1) - x(first)), Math.max(1, height));
+    pen.rect(x(first), y(row + 1), Math.max(1, x(last + 1) - x(first)), Math.max(1, height));
+  pen.fill();
   if (withLines) {
     pen.strokeStyle = colours.line;
     pen.lineWidth = 0.6;

@@ -95,5 +95,5 @@ async function sent(contract: Contract, init: RequestInit): Promise<{ body: unkn
     return { body: JSON.parse(form.get("body") as string), file: file instanceof File ? file : null };
   }
   const text = typeof init.body === "string" ? init.body : "{}";
-  return Promise.resolve({ body: JSON.parse(text), file: null });
+  return Promise.resolve({ body: JSON.parse(text) as unknown, file: null });
 }

@@ -1,4 +1,4 @@
-import { describe, expect, it } from "vitest";
+import { afterEach, describe, expect, it, vi } from "vitest";
 import {
   formatArea,
   formatAsIs,
@@ -18,6 +18,10 @@ import {
   formatUnit,
   formatWhole,
 } from "../../../src/components/ui/format.ts";
+
+afterEach(() => {
+  vi.unstubAllEnvs();
+});
 
 describe("numbers on screen", () => {
   it("parts thousands with U+202F from 1 000 up", () => {
@@ -85,7 +89,9 @@ describe("numbers on screen", () => {
     expect(formatByError(111.5, 22.8)).toBe("112");
     expect(formatByError(12, 0)).toBe("12");
   });
+});
 
+describe("texts and times on screen", () => {
   it("shortens a hash to its first 8 and last 6 characters", () => {
     expect(formatHash("17f6c777" + "0".repeat(50) + "c3d9a4")).toBe("17f6c777…c3d9a4");
     expect(formatHash("abc")).toBe("abc");
@@ -96,6 +102,7 @@ describe("numbers on screen", () => {
   });
 
   it("writes times of records in UTC, whatever the machine's zone", () => {
+    vi.stubEnv("TZ", "America/Lima");
     expect(formatTime("2031-06-03T09:12:44Z")).toBe("3 June 2031, 09:12 UTC");
     expect(formatTime("2031-06-03T01:12:44+02:00")).toBe("2 June 2031, 23:12 UTC");
     expect(formatTimeOfDay("2031-12-31T00:05:00Z")).toBe("00:05");
