@@ -27,6 +27,7 @@ export async function person(
     serviceWorkers: "block",
   });
   const page = await context.newPage();
+  page.setDefaultTimeout(20_000);
   const errors: string[] = [];
   page.on("pageerror", (error) => errors.push(error.message));
   page.on("console", (message) => {

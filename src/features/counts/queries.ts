@@ -21,7 +21,8 @@ export function useEnterCount(surveyId: string) {
   return useMutation({
     meta: { keeps: true },
     mutationFn: (entry: NewEntry) => call(enterCounts, { params: { surveyId }, body: { entries: [entry] } }),
-    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
+    // Not waited for: the page goes on to the next cell now, before the list says that this one is settled.
+    onSuccess: () => void queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }
 
@@ -35,7 +36,8 @@ export function useAmendCount(surveyId: string) {
   return useMutation({
     meta: { keeps: true },
     mutationFn: ({ visitId, ...body }: Amendment) => call(amendCount, { params: { surveyId, visitId }, body }),
-    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
+    // Not waited for: the page goes on to the next cell now, before the list says that this one is settled.
+    onSuccess: () => void queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }
 

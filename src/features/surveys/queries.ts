@@ -50,7 +50,8 @@ export function useAddMember(surveyId: string) {
     mutationFn: (body: NewMember) => call(addMember, { params: { surveyId }, body }),
     onSuccess: (answer) => {
       queries.setQueryData(surveyKey(surveyId, "people"), answer);
-      return queries.invalidateQueries({ queryKey: surveyKey(surveyId) });
+      // Not waited for: the form empties now, not while the next person is being typed.
+      void queries.invalidateQueries({ queryKey: surveyKey(surveyId) });
     },
   });
 }
