@@ -41,7 +41,13 @@ async function main(): Promise<void> {
     clientFolder: existsSync(clientFolder) ? clientFolder : null,
     signInsPerMinute: 20,
   });
-  const server = app.listen(env.port, env.host, () => {
+  const server = app.listen(env.port, env.host, (error?: Error) => {
+    if (error !== undefined) {
+      process.stderr.write(`Quillet cannot listen at ${env.host}:${env.port}: ${error.message}. Set QUILLET_PORT.\n`);
+      process.exitCode = 1;
+      void jobs.close().then(() => closeDb(db));
+      return;
+    }
     const { port } = server.address() as AddressInfo;
     say(`Quillet is at http://${env.host}:${port}/`);
     if (demo) say(demoTable(demo, `http://${env.host}:${port}/`));

@@ -1,6 +1,6 @@
 import type { Request, RequestHandler, Response, Router } from "express";
 import express from "express";
-import multer from "multer";
+import multer, { MulterError } from "multer";
 import type * as z from "zod/mini";
 import { ownerMay, reach } from "#shared/access/table.ts";
 import type { Answer, Contract } from "#shared/api/contract.ts";
@@ -139,7 +139,16 @@ async function memberFor(contract: Contract, platform: Platform, sessions: Sessi
 
 function fileReader(upload: { field: string; maxBytes: number }): RequestHandler {
   const limits = { fileSize: upload.maxBytes, files: 1, fields: 1, fieldSize: 1_000_000 };
-  return multer({ storage: multer.memoryStorage(), limits, defParamCharset: "utf8" }).single(upload.field);
+  const read = multer({ storage: multer.memoryStorage(), limits, defParamCharset: "utf8" }).single(upload.field);
+  return (req, res, next) => {
+    void read(req, res, (error?: unknown) => next(error === undefined ? undefined : unreadable(error)));
+  };
+}
+
+/** What is no upload, or breaks off on the way, is the sender's mistake and not ours: the parser throws plain errors. */
+function unreadable(error: unknown): unknown {
+  if (error instanceof MulterError) return error;
+  return new Problem("input-invalid", "The upload breaks off or is no multipart form. Send the file again.");
 }
 
 /** The body of an upload travels as JSON text in the field "body", before the file. */

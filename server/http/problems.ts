@@ -38,7 +38,8 @@ function asProblem(error: unknown): Problem | undefined {
   }
   const { type, status } = (error ?? {}) as { type?: unknown; status?: unknown };
   if (type === "entity.too.large") return new Problem("too-large", "Send less at once.");
-  if (typeof status === "number" && status >= 400 && status < 500 && status !== PROBLEMS["not-found"].status) {
+  if (status === PROBLEMS["not-found"].status) return new Problem("not-found", "Reload the page.");
+  if (typeof status === "number" && status >= 400 && status < 500) {
     return new Problem("input-invalid", "The request cannot be read as JSON.");
   }
   return undefined;

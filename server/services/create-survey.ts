@@ -1,8 +1,10 @@
+import { Problem } from "#shared/problem.ts";
 import type { Visitor } from "../context.ts";
 import { appendEvent } from "../db/events.ts";
 import { insertMember, upsertMembership } from "../db/members.ts";
 import { writeTx } from "../db/open.ts";
 import { insertSurvey } from "../db/surveys.ts";
+import { isTimeZone } from "./local-day.ts";
 import { newId } from "./new-id.ts";
 
 interface NewSurvey {
@@ -16,8 +18,14 @@ interface NewSurvey {
   readonly safetyNotes: string;
 }
 
-/** Starts a survey with one season and one target; whoever starts it is its planner. Returns its id. */
+/**
+ * Starts a survey with one season and one target; whoever starts it is its planner. Returns its id.
+ * @throws Problem `input-invalid` for a time zone that nobody knows
+ */
 export function createSurvey(visitor: Visitor, wanted: NewSurvey): string {
+  if (!isTimeZone(wanted.timeZone)) {
+    throw new Problem("input-invalid", `“${wanted.timeZone}” is no time zone. Give one such as Europe/London.`);
+  }
   const at = visitor.now().toISOString();
   const surveyId = newId(visitor);
   const memberId = newId(visitor);

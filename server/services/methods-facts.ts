@@ -5,6 +5,7 @@ import { declarationsOf, drawsOf } from "../db/draws.ts";
 import { specOf, summaryOf } from "../db/frames.ts";
 import { findSurvey } from "../db/surveys.ts";
 import { WHOLE_CELL } from "#shared/units/metric.ts";
+import { localDay } from "./local-day.ts";
 import type { EstimateView } from "./read-estimate.ts";
 
 const MILLIMETRES_PER_METRE = 1000;
@@ -22,7 +23,7 @@ export function frameMeasures(ctx: Context, { frame }: EstimateView) {
   };
 }
 
-/** The methods statement of an estimate, in Markdown, from what stands in the record. */
+/** The methods statement of an estimate, in Markdown, from what stands in the record; days are those of the people there. */
 export function methodsOf(ctx: Context, view: EstimateView): string {
   const { result, season, target, frame, draw, declaration } = view;
   const { declared, state } = declaration;
@@ -36,8 +37,10 @@ export function methodsOf(ctx: Context, view: EstimateView): string {
     source === "made-here"
       ? { kind: source }
       : { kind: source, by: declaration.names.get(state.seed.givenBy) ?? "somebody" };
+  const survey = findSurvey(ctx.db, ctx.surveyId);
+  const day = (at: string): string => localDay(at, survey?.timeZone ?? "UTC");
   const facts: MethodsFacts = {
-    survey: findSurvey(ctx.db, ctx.surveyId)?.name ?? "",
+    survey: survey?.name ?? "",
     season: season.name,
     target: { objects: target.plural },
     countingRule: target.countingRule,
@@ -50,7 +53,7 @@ export function methodsOf(ctx: Context, view: EstimateView): string {
       uncoveredM2: summary.uncoveredM2,
       cellsLeftOut: spec.leftOut.length,
       sha256: frame.frameSha256,
-      sealedAt: frame.sealedAt,
+      sealedAt: day(frame.sealedAt),
     },
     draw: {
       number: draw.draw.number,
@@ -59,12 +62,12 @@ export function methodsOf(ctx: Context, view: EstimateView): string {
       generator: declared.generator,
       seed: state.seed.text,
       seedSource,
-      declaredAt: state.declaration.declaredAt,
-      drawnAt: draw.draw.drawnAt,
+      declaredAt: day(state.declaration.declaredAt),
+      drawnAt: day(draw.draw.drawnAt),
       ...othersOnRecord(ctx, season.id),
     },
     limitsDeclared: view.chosenAfterCounts.length === 0,
-    counted: countedWhen(view),
+    counted: countedWhen(view, day),
     software: { name: "Quillet", version: ctx.version },
   };
   return methodsStatement(facts, result);
@@ -81,12 +84,12 @@ function othersOnRecord(ctx: Context, seasonId: string): { withdrawn: number; ab
   };
 }
 
-function countedWhen({ standing }: EstimateView): MethodsFacts["counted"] {
+function countedWhen({ standing }: EstimateView, day: (at: string) => string): MethodsFacts["counted"] {
   const entries = [...standing.values()].map(({ entry }) => entry).filter((entry) => entry.state === "counted");
-  const times = entries.map((entry) => entry.madeAt).toSorted();
+  const days = entries.map((entry) => day(entry.madeAt)).toSorted();
   return {
-    from: times.at(0) ?? "",
-    to: times.at(-1) ?? "",
+    from: days.at(0) ?? "",
+    to: days.at(-1) ?? "",
     observers: new Set(entries.map((entry) => entry.observerId)).size,
   };
 }

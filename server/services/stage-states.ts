@@ -10,6 +10,7 @@ import { framesOf } from "../db/frames.ts";
 import type { Reader } from "../db/open.ts";
 import { findSurvey } from "../db/surveys.ts";
 import { assignmentsOf, visitsOn } from "../db/visits.ts";
+import { localDay } from "./local-day.ts";
 import { declaredText } from "./read-draws.ts";
 import { type SeasonInUse, seasonInUse } from "./read-visits.ts";
 
@@ -124,11 +125,6 @@ function estimateStanding(reader: Reader, surveyId: string, cells: readonly Cell
 
 /** "9 July": the day of a time, for the people there. */
 function dayOf(reader: Reader, surveyId: string, at: string): string {
-  const timeZone = findSurvey(reader, surveyId)?.timeZone ?? "UTC";
-  const whole = { day: "numeric", month: "long" } as const;
-  try {
-    return new Intl.DateTimeFormat("en-GB", { ...whole, timeZone }).format(new Date(at));
-  } catch {
-    return new Intl.DateTimeFormat("en-GB", { ...whole, timeZone: "UTC" }).format(new Date(at)); // a zone unknown here
-  }
+  const day = new Date(localDay(at, findSurvey(reader, surveyId)?.timeZone ?? "UTC"));
+  return new Intl.DateTimeFormat("en-GB", { day: "numeric", month: "long", timeZone: "UTC" }).format(day);
 }
