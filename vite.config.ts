@@ -13,19 +13,42 @@ export default defineConfig({
     projects: [
       {
         extends: true,
-        test: { name: "shared", environment: "node", include: ["tests/shared/**/*.test.ts"], setupFiles: ["tests/fixtures/no-console-errors.ts"] },
+        test: {
+          name: "shared",
+          environment: "node",
+          include: ["tests/shared/**/*.test.ts"],
+          setupFiles: ["tests/fixtures/no-console-errors.ts"],
+        },
       },
       {
         extends: true,
-        test: { name: "server", environment: "node", include: ["tests/server/**/*.test.ts"], setupFiles: ["tests/fixtures/no-console-errors.ts"], testTimeout: 20_000 },
+        test: {
+          name: "server",
+          environment: "node",
+          include: ["tests/server/**/*.test.ts"],
+          setupFiles: ["tests/fixtures/no-console-errors.ts"],
+          testTimeout: 20_000,
+        },
       },
       {
         extends: true,
-        test: { name: "src", environment: "jsdom", include: ["tests/src/**/*.test.{ts,tsx}"], setupFiles: ["tests/fixtures/no-console-errors.ts", "tests/src/setup.ts"] },
+        test: {
+          name: "src",
+          environment: "jsdom",
+          include: ["tests/src/**/*.test.{ts,tsx}"],
+          setupFiles: ["tests/fixtures/no-console-errors.ts", "tests/src/setup.ts"],
+        },
       },
       {
         extends: true,
-        test: { name: "e2e", include: ["tests/e2e/**/*.test.ts"], globalSetup: ["tests/e2e/global.ts"], testTimeout: 90_000, hookTimeout: 90_000, fileParallelism: false },
+        test: {
+          name: "e2e",
+          include: ["tests/e2e/**/*.test.ts"],
+          globalSetup: ["tests/e2e/global.ts"],
+          testTimeout: 90_000,
+          hookTimeout: 90_000,
+          fileParallelism: false,
+        },
       },
     ],
   },

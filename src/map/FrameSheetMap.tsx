@@ -21,13 +21,14 @@ interface FrameSheetMapProps {
   readonly frameId: string;
   readonly label: string;
   readonly legend?: ReactNode;
-  readonly height?: number;
+  /** tall: beside a list; otherwise a part of a reading page. At a phone's width both are less than half of the screen. */
+  readonly tall?: boolean;
   /** The layer on top: picks, counts, assigned cells. */
   readonly children: (ground: SheetGround) => ReactNode;
 }
 
 /** The sheet of a sealed frame with its cells in the background, for whatever stage shows something on it. */
-export function FrameSheetMap({ surveyId, frameId, label, legend, height, children }: FrameSheetMapProps) {
+export function FrameSheetMap({ surveyId, frameId, label, legend, tall = false, children }: FrameSheetMapProps) {
   const { frame, plane, cells, error } = useFrameGround(surveyId, frameId);
   const net = plane?.net;
   const lngLatOf = useMemo(() => (net === undefined ? undefined : lngLatFromNet(net)), [net]);
@@ -37,18 +38,13 @@ export function FrameSheetMap({ surveyId, frameId, label, legend, height, childr
   const spec = frame.spec.cells;
   const clip = clipOf(frame, plane.outline);
   return (
-    <SheetMap
-      label={label}
-      bounds={plane.bounds}
-      crsName={plane.crs.name}
-      lngLatOf={lngLatOf}
-      legend={legend}
-      height={height}
-    >
-      <AreaOutline polygons={plane.outline} />
-      {cells !== null && <FrameCellsLayer cells={cells} spec={spec} clip={clip} />}
-      {children({ spec, clip })}
-    </SheetMap>
+    <div className={tall ? "q-sheet-place q-sheet-place-tall" : "q-sheet-place"}>
+      <SheetMap label={label} bounds={plane.bounds} crsName={plane.crs.name} lngLatOf={lngLatOf} legend={legend}>
+        <AreaOutline polygons={plane.outline} />
+        {cells !== null && <FrameCellsLayer cells={cells} spec={spec} clip={clip} />}
+        {children({ spec, clip })}
+      </SheetMap>
+    </div>
   );
 }
 

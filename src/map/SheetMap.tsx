@@ -1,5 +1,5 @@
 import "leaflet/dist/leaflet.css";
-import { useId, useMemo, useRef, useState, type ReactNode } from "react";
+import { useId, useMemo, useRef, useState, type CSSProperties, type ReactNode } from "react";
 import type { LngLatOf } from "./planes.ts";
 import { ScaleBar } from "./ScaleBar.tsx";
 import { SheetBorder } from "./SheetBorder.tsx";
@@ -9,7 +9,7 @@ import type { PlaneBounds } from "./sheet-geometry.ts";
 import { SheetGrid } from "./SheetGrid.tsx";
 import { marginsFor } from "./sheet-margins.ts";
 import { SheetTools } from "./SheetTools.tsx";
-import { useElementSize } from "./use-element-size.ts";
+import { useElementSize } from "../components/ui/use-element-size.ts";
 import { usePlanarMap, type PlanarMap } from "./use-planar-map.ts";
 import { usePress } from "./use-press.ts";
 
@@ -68,7 +68,11 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
   const shift = planar === null ? undefined : shiftOf(planar);
   const inMetres = crsName !== null;
   return (
-    <figure className="q-sheet" style={height === undefined ? undefined : { height }} aria-label={label}>
+    <figure
+      className="q-sheet"
+      style={{ ...(height !== undefined && { height }), "--sheet-width": size.width || 640 } as CSSProperties}
+      aria-label={label}
+    >
       <div ref={paper} className="q-sheet-paper">
         <div
           className="q-sheet-inner"
@@ -114,7 +118,7 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
       </div>
       {seen !== undefined && (
         <SheetFoot
-          scale={seen.scale}
+          window={seen}
           compact={margins.compact}
           narrow={size.width < 680}
           crsName={crsName}

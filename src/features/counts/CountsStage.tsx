@@ -125,7 +125,11 @@ function columnsFor(plural: string): DataColumn<Visit>[] {
       id: "by",
       head: "By",
       cell: ({ count }) =>
-        count.state === "not-visited" ? "" : `${count.by}, ${formatTime(count.at)}${count.amended ? ", amended" : ""}`,
+        count.state === "not-visited" ? (
+          ""
+        ) : (
+          <span className="whitespace-nowrap">{`${count.by}, ${formatTime(count.at)}${count.amended ? ", amended" : ""}`}</span>
+        ),
     },
   ];
 }

@@ -127,7 +127,7 @@ export function DrawBody({ surveyId, draw }: { readonly surveyId: string; readon
         surveyId={surveyId}
         frameId={draw.frameId}
         label={`Cells of draw ${draw.number}`}
-        height={620}
+        tall
         legend={
           <>
             <LegendEntry symbol="drawn">drawn, with its order</LegendEntry>

@@ -1,33 +1,50 @@
 import { scaleLinear } from "d3-scale";
+import { useRef } from "react";
 import type { Distribution, DistributionBin } from "#shared/estimate/result.ts";
 import { formatNumber, formatSignificant } from "../../components/ui/format.ts";
+import { useElementSize } from "../../components/ui/use-element-size.ts";
 import { COUNT_CLASSES, countClass } from "../../map/count-classes.ts";
 
-const WIDTH = 640;
+const WIDEST = 640;
 const PLOT = 180;
 const MARK = 8;
 /** Up to this many picks in the fullest bin each pick is a mark of its own; above it a bin is a bar. */
 const MOST_MARKS = 22;
 
+interface CountPlotProps {
+  readonly distribution: Distribution;
+  readonly plural: string;
+}
+
 /** How the counts are spread: one mark a counted pick, or a bar where there are very many. */
-export function CountPlot({ distribution, plural }: { readonly distribution: Distribution; readonly plural: string }) {
+export function CountPlot(props: CountPlotProps) {
+  const place = useRef<HTMLDivElement>(null);
+  const { width } = useElementSize(place);
+  return (
+    <div ref={place}>
+      <Plot {...props} across={width === 0 ? WIDEST : Math.min(WIDEST, width)} />
+    </div>
+  );
+}
+
+function Plot({ distribution, plural, across }: CountPlotProps & { readonly across: number }) {
   const { bins, mean } = distribution;
   const most = Math.max(1, ...bins.map(({ picks }) => picks));
   const last = bins.at(-1)?.to ?? 1;
-  const x = scaleLinear([0, Math.max(1, last)], [18, WIDTH - 18]);
+  const x = scaleLinear([0, Math.max(1, last)], [18, across - 18]);
   const unit = Math.min(MARK, (PLOT - 30) / most);
-  const width = Math.max(4, Math.min(16, ((WIDTH - 36) / Math.max(1, last + 1)) * 0.8));
+  const width = Math.max(4, Math.min(16, ((across - 36) / Math.max(1, last + 1)) * 0.8));
   return (
     <svg
       className="block w-full"
-      viewBox={`0 0 ${WIDTH} ${PLOT + 40}`}
+      viewBox={`0 0 ${across} ${PLOT + 40}`}
       role="img"
       aria-label={plotText(distribution, plural)}
     >
       {bins.map((bin) => (
         <Bin key={bin.from} bin={bin} at={x(middleOf(bin))} unit={unit} width={width} asMarks={most <= MOST_MARKS} />
       ))}
-      <path d={`M6 ${PLOT}H${WIDTH - 6}`} stroke="var(--color-ink)" />
+      <path d={`M6 ${PLOT}H${across - 6}`} stroke="var(--color-ink)" />
       <path d={`M${x(mean)} 24V${PLOT}`} stroke="var(--color-act)" strokeWidth="2" />
       <text x={x(mean) + 5} y="34" fontSize="12" fontWeight="600" fill="var(--color-act)">
         {`mean ${formatSignificant(mean, 3)}`}

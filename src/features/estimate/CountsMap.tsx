@@ -33,7 +33,6 @@ export function CountsMap({
         surveyId={surveyId}
         frameId={frameId}
         label={`Where the ${plural} were counted`}
-        height={520}
         legend={
           <>
             {STEPS.map((step) => (

@@ -92,7 +92,7 @@ function EstimatePage({
         {notes
           .filter(({ weight }) => weight === "look")
           .map((note) => (
-            <Banner key={note.key} tone="ochre" title={note.text} />
+            <NoteBanner key={note.key} text={note.text} />
           ))}
         <Section title="How sure" lead={howSure(estimate)}>
           <LimitsAxis result={result} />
@@ -164,4 +164,14 @@ function howSure({ result, context }: Estimate): string {
 function countsLead({ result }: Estimate): string {
   const { zeros } = result.distribution;
   return `One mark for each counted pick: ${formatNumber(zeros)} of ${formatNumber(result.picksCounted)} found none.`;
+}
+
+/** The first sentence is the fact; what it means follows in a quieter voice. */
+function NoteBanner({ text }: { readonly text: string }) {
+  const end = text.search(/\. [A-Z]/);
+  return (
+    <Banner tone="ochre" title={end < 0 ? text : text.slice(0, end + 1)}>
+      {end < 0 ? undefined : text.slice(end + 2)}
+    </Banner>
+  );
 }

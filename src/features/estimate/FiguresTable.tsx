@@ -24,13 +24,15 @@ export function FiguresTable({ result, plural }: { readonly result: EstimateResu
       <tbody>
         {rows.map((row) => (
           <tr key={row.name} data-tone={row.strong ? "strong" : undefined}>
-            <th scope="row">{row.name}</th>
+            <th scope="row" className="whitespace-nowrap">
+              {row.name}
+            </th>
             {columns.map((column, index) => (
               <td key={column} className="q-num">
                 <Figure decimals={decimals[index] ?? 0}>{row[column]}</Figure>
               </td>
             ))}
-            <td>{row.unit}</td>
+            <td className="whitespace-nowrap">{row.unit}</td>
           </tr>
         ))}
       </tbody>

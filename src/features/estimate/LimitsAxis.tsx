@@ -1,18 +1,33 @@
 import { scaleLinear } from "d3-scale";
+import { useRef } from "react";
 import type { EstimateResult, Interval } from "#shared/estimate/result.ts";
 import { estimateText, printedLimitsOf } from "#shared/estimate/rounding.ts";
 import { formatNumber } from "../../components/ui/format.ts";
+import { useElementSize } from "../../components/ui/use-element-size.ts";
 
-const WIDTH = 640;
-const LEFT = 116;
+const WIDEST = 640;
 const RIGHT = 24;
-const ROW = 52;
 const TOP = 30;
+/** Below this the names stand above their lines. */
+const NARROW = 480;
 
 const NAMES = { t: "Student t", "log-normal": "Log-normal" } as const;
 
 /** Both kinds of limits on one axis with its zero, and the number seen, under which the total can't be. */
 export function LimitsAxis({ result }: { readonly result: EstimateResult }) {
+  const place = useRef<HTMLDivElement>(null);
+  const { width } = useElementSize(place);
+  return (
+    <div ref={place}>
+      <Axis result={result} width={width === 0 ? WIDEST : Math.min(WIDEST, width)} />
+    </div>
+  );
+}
+
+function Axis({ result, width }: { readonly result: EstimateResult; readonly width: number }) {
+  const isNarrow = width < NARROW;
+  const left = isNarrow ? 14 : 116;
+  const rowHeight = isNarrow ? 72 : 52;
   const kinds = result.declaredLimits === "t" ? (["t", "log-normal"] as const) : (["log-normal", "t"] as const);
   const rows = kinds.flatMap((kind) => {
     const limits = kind === "t" ? result.total.limits.t : result.total.limits.logNormal;
@@ -21,13 +36,13 @@ export function LimitsAxis({ result }: { readonly result: EstimateResult }) {
   if (rows.length === 0) return null;
   const most = Math.max(...rows.map(({ limits }) => limits.upper), result.total.estimate);
   const least = Math.min(0, ...rows.map(({ limits }) => limits.lower));
-  const x = scaleLinear([least, most * 1.05], [LEFT, WIDTH - RIGHT]).nice(5);
-  const height = TOP + rows.length * ROW + 26;
-  const base = TOP + rows.length * ROW;
+  const x = scaleLinear([least, most * 1.05], [left, width - RIGHT]).nice(5);
+  const height = TOP + rows.length * rowHeight + 26;
+  const base = TOP + rows.length * rowHeight;
   const middle = x(result.total.estimate);
   return (
-    <svg className="block w-full" viewBox={`0 0 ${WIDTH} ${height}`} role="img" aria-label={axisText(result)}>
-      {x.ticks(6).map((tick) => (
+    <svg className="block w-full" viewBox={`0 0 ${width} ${height}`} role="img" aria-label={axisText(result)}>
+      {x.ticks(isNarrow ? 3 : 6).map((tick) => (
         <g key={tick}>
           <path
             d={`M${x(tick)} ${TOP - 12}V${base}`}
@@ -39,7 +54,7 @@ export function LimitsAxis({ result }: { readonly result: EstimateResult }) {
           </text>
         </g>
       ))}
-      <path d={`M${LEFT} ${base}H${WIDTH - RIGHT}`} stroke="var(--color-ink)" />
+      <path d={`M${left} ${base}H${width - RIGHT}`} stroke="var(--color-ink)" />
       <path d={`M${middle} ${TOP - 12}V${base}`} stroke="var(--color-act)" strokeDasharray="2 3" />
       {result.seen > 0 && (
         <path d={`M${x(result.seen)} ${base - 9}V${base}`} stroke="var(--color-ochre)" strokeWidth="2.5" />
@@ -51,7 +66,8 @@ export function LimitsAxis({ result }: { readonly result: EstimateResult }) {
           note={kind === result.declaredLimits ? "printed large" : "beside it"}
           limits={limits}
           strong={kind === result.declaredLimits}
-          y={TOP + index * ROW + 16}
+          y={TOP + index * rowHeight + (isNarrow ? 42 : 16)}
+          nameAt={isNarrow ? -38 : 0}
           x={x}
           middle={middle}
           ends={endsOf(result, kind)}
@@ -67,21 +83,23 @@ interface LimitsLineProps {
   readonly limits: Interval;
   readonly strong: boolean;
   readonly y: number;
+  /** px from the line to its name. */
+  readonly nameAt: number;
   readonly x: (value: number) => number;
   readonly middle: number;
   readonly ends: readonly [string, string];
 }
 
-function LimitsLine({ name, note, limits, strong, y, x, middle, ends }: LimitsLineProps) {
+function LimitsLine({ name, note, limits, strong, y, nameAt, x, middle, ends }: LimitsLineProps) {
   const [lower, upper] = [x(limits.lower), x(limits.upper)];
   const colour = strong ? "var(--color-act)" : "var(--color-ink-2)";
   const width = strong ? 2.75 : 1.5;
   return (
     <g>
-      <text x="0" y={y} fontSize="13" fontWeight="600" fill="var(--color-ink)">
+      <text x="0" y={y + nameAt} fontSize="13" fontWeight="600" fill="var(--color-ink)">
         {name}
       </text>
-      <text x="0" y={y + 16} fontSize="12" fill="var(--color-ink-3)">
+      <text x={nameAt === 0 ? 0 : 84} y={nameAt === 0 ? y + 16 : y + nameAt} fontSize="12" fill="var(--color-ink-3)">
         {note}
       </text>
       <path

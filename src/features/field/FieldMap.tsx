@@ -23,7 +23,6 @@ export function FieldMap({ surveyId, frameId, visits, chosen, onChoose }: FieldM
       surveyId={surveyId}
       frameId={frameId}
       label={`Cells to visit, ${visits.filter(isSettled).length} of ${visits.length} settled`}
-      height={480}
       legend={
         <>
           <LegendEntry symbol="not-visited">not visited yet</LegendEntry>

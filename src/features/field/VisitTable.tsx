@@ -41,7 +41,7 @@ export function VisitTable({ visits, selected, onSelect, chosen, onChoose }: Vis
       id: "who",
       head: "Who and when",
       sortBy: (visit) => visit.assignedTo?.name,
-      cell: (visit) => whoText(visit),
+      cell: (visit) => <span className="whitespace-nowrap">{whoText(visit)}</span>,
     },
     {
       id: "state",
