@@ -14,9 +14,12 @@ export function notInThisVersion(option: string): UsageError {
 }
 
 type Options = NonNullable<ParseArgsConfig["options"]>;
+type Parsed<T extends Options> = ReturnType<
+  typeof parseArgs<{ args: string[]; options: T; allowPositionals: boolean; strict: true }>
+>;
 
 /** node:util parseArgs, whose complaints are wrong usage. */
-export function options<T extends Options>(args: readonly string[], known: T, positionals: number) {
+export function options<T extends Options>(args: readonly string[], known: T, positionals: number): Parsed<T> {
   try {
     const parsed = parseArgs({
       args: withNegativeValues(args),

@@ -32,6 +32,8 @@ function areaDifference(run: ReplayRun, area: ReplayRun["record"]["areas"][numbe
     () => differ(`${name}, file name`, area.fileName, event?.payload.fileName),
     () => differ(`${name}, hash of the file`, area.fileSha256, event?.payload.fileSha256),
     () => differ(`${name}, its system`, area.sourceCrs, event?.payload.sourceCrs),
+    () => differ(`${name}, file name in its report`, area.report["fileName"], event?.payload.fileName),
+    () => differ(`${name}, hash in its report`, area.report["sha256"], event?.payload.fileSha256),
     () => differ(`${name}, vertices`, area.report["vertices"], event?.payload.vertices),
     () => differ(`${name}, geodesic area`, area.report["geodesicAreaM2"], event?.payload.geodesicAreaM2),
     () => differ(`${name}, imported at`, area.importedAt, event?.at),

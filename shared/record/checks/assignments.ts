@@ -22,12 +22,12 @@ export function checkAssignments(run: ReplayRun): Check[] {
   if (events.length === 0 && assignments.length === 0) {
     return [notChecked("assignments", TITLE, "No cell was given to anybody.")];
   }
-  const last = new Map<string, { member: string; day: string }>();
-  for (const { payload } of events) {
+  const last = new Map<string, { member: string; day: string; at: string }>();
+  for (const { payload, at } of events) {
     for (const unit of payload.units) {
       const key = `${payload.frameId} ${unit}`;
       if (payload.member === null) last.delete(key);
-      else last.set(key, { member: payload.member, day: payload.day });
+      else last.set(key, { member: payload.member, day: payload.day, at });
     }
   }
   const places = placesOf(run);
@@ -41,6 +41,7 @@ export function checkAssignments(run: ReplayRun): Check[] {
       return firstDifference([
         () => differ(`${where}, given to`, name(found?.member), name(expected?.member)),
         () => differ(`${where}, for the day`, found?.day, expected?.day),
+        () => differ(`${where}, given at`, found?.assignedAt, expected?.at),
       ]);
     }),
   );

@@ -4,6 +4,7 @@ import {
   type Check,
   counted,
   differ,
+  differInMembers,
   type Difference,
   firstDifference,
   notChecked,
@@ -20,7 +21,7 @@ const TITLE = "The counts are those of the events";
 
 /** Each count in the list is that of its event, member by member, and no event's count is missing from the list. */
 export function checkCounts(run: ReplayRun): Check[] {
-  const broken = run.events.brokenAmong(["count-entered", "count-amended"]);
+  const broken = run.events.brokenAmong(["count-entered", "count-amended", "counts-imported"]);
   if (broken !== null) return [notChecked("counts", TITLE, `Not compared: ${broken} is not whole.`)];
   const { counts } = run.record;
   if (counts.length === 0 && countEvents(run).length === 0) {
@@ -31,7 +32,7 @@ export function checkCounts(run: ReplayRun): Check[] {
     verdict(
       "counts",
       TITLE,
-      firstDifference([() => compareAll(run), () => missingCount(run)]),
+      firstDifference([() => compareAll(run), () => missingCount(run), () => importsDifference(run)]),
       `${counted(counts.length, "count")}, ${zeros} of them zero`,
     ),
   ];
@@ -62,6 +63,21 @@ function missingCount(run: ReplayRun): Difference | null {
   if (event === undefined) return null;
   const where = placesOf(run).get(event.payload.visitId) ?? `unit ${event.payload.unit}`;
   return { where, found: "no such count", expected: `${said(event.payload)}, as event ${event.sequence} says` };
+}
+
+/** Tables that were read in: the same in the list and in the events. */
+function importsDifference(run: ReplayRun): Difference | null {
+  const events = run.events.of("counts-imported");
+  const { countImports } = run.record;
+  return firstDifference([
+    () => differ("imported tables", countImports.length, events.length),
+    ...events.map((event) => () => {
+      const { importId, fileName, fileSha256: sha256, written } = event.payload;
+      const found = countImports.find(({ id }) => id === importId);
+      const expected = { fileName, sha256, written, importedAt: event.at, member: event.member };
+      return differInMembers(`table of event ${event.sequence}`, found ?? {}, expected);
+    }),
+  ]);
 }
 
 function compare(where: string, count: StoredCount, event: CountEvent): Difference | null {

@@ -69,6 +69,7 @@ function compareLists(draw: StoredDraw, again: DrawEntries): Difference | null {
 function compareList(draw: StoredDraw, place: number, list: DrawEntries[number]): Difference | null {
   const found = draw.lists[place];
   if (found === undefined) return null;
+  if (found.stratum !== list.stratum) return differ(`draw ${draw.number}, stratum`, found.stratum, list.stratum);
   const stratum = list.stratum === "" ? "" : ` of ${list.stratum}`;
   const where = (position: number): string => `draw ${draw.number}, entry ${position}${stratum}`;
   for (const [at, expected] of list.entries.entries()) {

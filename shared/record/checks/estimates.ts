@@ -56,7 +56,11 @@ function checkKept(run: ReplayRun, kept: Kept, id: string, title: string): Check
   if (again instanceof Problem) {
     return failed(id, title, { where: "the estimate", found: "one", expected: `none: ${again.message}` });
   }
-  const difference = differInValue("", kept.result, JSON.parse(JSON.stringify(again)));
+  const difference = firstDifference([
+    () => differInValue("", kept.result, JSON.parse(JSON.stringify(again))),
+    () => differ("settings, limits", kept.settings["limits"], again.declaredLimits),
+    () => differ("settings, level", Number(kept.settings["level"]), again.level),
+  ]);
   return verdict(id, title, difference, inWords(again));
 }
 

@@ -33,7 +33,7 @@ export function checkOrderOfProof(run: ReplayRun): Check[] {
   return [passed("order", TITLE, stories.join("; "))];
 }
 
-function stepsOf(run: ReplayRun, { stored, draw }: Declared): Steps {
+function stepsOf(run: ReplayRun, { stored }: Declared): Steps {
   const here = ({ payload }: { payload: { declarationId: string } }): boolean => payload.declarationId === stored.id;
   const sequences = (events: readonly { sequence: number }[]): number[] => events.map(({ sequence }) => sequence);
   const { events } = run;
@@ -41,7 +41,7 @@ function stepsOf(run: ReplayRun, { stored, draw }: Declared): Steps {
     sealed: sequences(events.of("frame-sealed").filter(({ payload }) => payload.frameId === stored.frameId)),
     declared: sequences(events.of("draw-declared").filter(here)),
     seed: sequences(events.of("seed-given").filter(here)),
-    drawn: draw === null ? [] : sequences(events.of("draw-made").filter(({ payload }) => payload.drawId === draw.id)),
+    drawn: sequences(events.of("draw-made").filter(here)),
     abandoned: sequences(events.of("declaration-abandoned").filter(here)),
   };
 }
@@ -51,7 +51,8 @@ function orderDifference({ name, stored, draw }: Declared, steps: Steps): Differ
     ["the frame was sealed", steps.sealed, true],
     ["the draw was declared", steps.declared, true],
     ["the seed was given", steps.seed, stored.seed !== null],
-    ["the cells were drawn", steps.drawn, draw !== null],
+    // A draw that the list leaves out is named by the check that all is told.
+    ["the cells were drawn", steps.drawn, draw !== null || steps.drawn.length > 0],
     ["it was abandoned", steps.abandoned, stored.abandoned !== null],
   ];
   let before: { what: string; sequence: number } | null = null;
@@ -76,7 +77,8 @@ function orderDifference({ name, stored, draw }: Declared, steps: Steps): Differ
 }
 
 /** A declaration that began while one before it was open: somebody could then choose between two. */
-function overlap(all: readonly { one: Declared; steps: Steps }[]): Difference | null {
+function overlap(told: readonly { one: Declared; steps: Steps }[]): Difference | null {
+  const all = told.toSorted((a, b) => (a.steps.declared[0] ?? 0) - (b.steps.declared[0] ?? 0));
   for (const [place, { one, steps }] of all.entries()) {
     const [declared = 0] = steps.declared;
     for (const earlier of all.slice(0, place)) {

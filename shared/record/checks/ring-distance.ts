@@ -1,18 +1,18 @@
 import Flatbush from "flatbush";
 import type { PlaneArea, Ring } from "#shared/geometry/rings.ts";
 
-export interface Farthest {
-  /** Whole or half millimetres of the point that lies farthest from the other rings. */
+/** A point of one set of rings that lies too far from another, and how far, in millimetres. */
+export interface FarPoint {
   readonly eastMm: number;
   readonly northMm: number;
   readonly distanceMm: number;
 }
 
 /**
- * The point of `from` that lies farthest from the edges of `to`, looked for at every vertex and in the middle of every
- * edge of `from`; null where no point of `from` is farther than `most`. Distances in millimetres.
+ * The first point of `from` that lies more than `most` millimetres from every edge of `to`, looked for at each vertex and in
+ * the middle of each edge of `from`; null where there is none.
  */
-export function fartherThan(from: PlaneArea, to: PlaneArea, most: number, tell: () => void): Farthest | null {
+export function fartherThan(from: PlaneArea, to: PlaneArea, most: number, tell: () => void): FarPoint | null {
   const edges = edgesOf(to);
   if (edges.length === 0) return { eastMm: 0, northMm: 0, distanceMm: Infinity };
   const index = new Flatbush(edges.length);
@@ -20,22 +20,19 @@ export function fartherThan(from: PlaneArea, to: PlaneArea, most: number, tell: 
     index.add(Math.min(x0, x1), Math.min(y0, y1), Math.max(x0, x1), Math.max(y0, y1));
   }
   index.finish();
-  let worst: Farthest | null = null;
-  let looked = 0;
-  for (const [x0, y0, x1, y1] of edgesOf(from)) {
-    looked += 1;
-    if (looked % 1024 === 0) tell();
+  for (const [place, [x0, y0, x1, y1]] of edgesOf(from).entries()) {
+    if (place % 1024 === 0) tell();
     for (const [x, y] of [
       [x0, y0],
       [(x0 + x1) / 2, (y0 + y1) / 2],
     ] as const) {
       const near = index.search(x - most, y - most, x + most, y + most);
-      const distance = near.reduce((least, at) => Math.min(least, distanceTo(edges[at], x, y)), Infinity);
-      if (distance > most && distance > (worst?.distanceMm ?? 0))
-        worst = { eastMm: x, northMm: y, distanceMm: distance };
+      if (near.some((at) => distanceTo(edges[at], x, y) <= most)) continue;
+      const distanceMm = edges.reduce((least, edge) => Math.min(least, distanceTo(edge, x, y)), Infinity);
+      return { eastMm: x, northMm: y, distanceMm };
     }
   }
-  return worst;
+  return null;
 }
 
 type Edge = readonly [number, number, number, number];

@@ -90,20 +90,14 @@ function compare(run: ReplayRun, frame: RebuiltFrame, found: PlaneArea, again: P
     return passed(id(frame), title(frame), `${points}, all equal`);
   }
   const away = fartherThan(found, again, RINGS_WITHIN_MM, run.tell);
-  const missing = away === null ? fartherThan(again, found, RINGS_WITHIN_MM, run.tell) : null;
-  const worst = away ?? missing;
-  if (worst === null) return passed(id(frame), title(frame), `${points}, within 10 mm of the file's edges both ways`);
-  const distance = Number.isFinite(worst.distanceMm) ? `${Math.round(worst.distanceMm)} mm` : "more than 10 mm";
-  const place = `${worst.eastMm} mm east, ${worst.northMm} mm north`;
-  return failed(
-    id(frame),
-    title(frame),
-    away === null
-      ? {
-          where: `an edge of the file at ${place}`,
-          found: `no ring nearer than ${distance}`,
-          expected: "one within 10 mm",
-        }
-      : { where: `a ring at ${place}`, found: `${distance} from the file's nearest edge`, expected: "10 mm at most" },
-  );
+  const missed = away === null ? fartherThan(again, found, RINGS_WITHIN_MM, run.tell) : null;
+  const far = away ?? missed;
+  if (far === null) return passed(id(frame), title(frame), `${points}, within 10 mm of the file's edges both ways`);
+  const what = away === null ? "an edge of the file" : "a ring";
+  const other = away === null ? "the nearest ring" : "the file's nearest edge";
+  return failed(id(frame), title(frame), {
+    where: `${what} at ${far.eastMm} mm east, ${far.northMm} mm north`,
+    found: `${other} ${Math.round(far.distanceMm)} mm away`,
+    expected: "10 mm at most",
+  });
 }
