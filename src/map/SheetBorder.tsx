@@ -1,8 +1,8 @@
 import type { LngLatOf } from "./planes.ts";
 import { SheetAngles } from "./SheetAngles.tsx";
-import { gridLines, gridStep, sheetGraticule, type GridLine } from "./sheet-lines.ts";
+import { gridLines, sheetGraticule, stepOf, type GridLine } from "./sheet-lines.ts";
 import type { SheetMargins } from "./sheet-margins.ts";
-import type { ElementSize } from "./use-element-size.ts";
+import type { ElementSize } from "../components/ui/use-element-size.ts";
 import type { SheetWindow } from "./use-planar-map.ts";
 
 interface SheetBorderProps {
@@ -56,7 +56,7 @@ function rhythms(
   inMetres: boolean,
   lngLatOf: LngLatOf | undefined,
 ): { across: BarRhythm; up: BarRhythm } {
-  const step = gridStep(window.scale);
+  const step = stepOf(window);
   const metres = { step, phase: 0 };
   if (inMetres || lngLatOf === undefined) return { across: metres, up: metres };
   const { lower, right } = sheetGraticule(window, lngLatOf);
@@ -98,7 +98,7 @@ export function SheetBorder({ window, margins, size, inMetres, lngLatOf }: Sheet
     x: (value: number) => left + (value - west) * scale,
     y: (value: number) => top + (north - value) * scale,
   };
-  const step = gridStep(scale);
+  const step = stepOf(window);
   const columns = inMetres ? gridLines(west, east, step, "m\u202fE", 60 / scale) : [];
   const rows = inMetres ? gridLines(south, north, step, "m\u202fN", 60 / scale) : [];
   return (

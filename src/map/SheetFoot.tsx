@@ -1,10 +1,11 @@
 import type { ReactNode } from "react";
 import { NorthArrow } from "./NorthArrow.tsx";
 import { ScaleBar } from "./ScaleBar.tsx";
-import { gridStep } from "./sheet-lines.ts";
+import { stepOf } from "./sheet-lines.ts";
+import type { SheetWindow } from "./use-planar-map.ts";
 
 interface SheetFootProps {
-  readonly scale: number;
+  readonly window: SheetWindow;
   readonly compact: boolean;
   /** Beside a list: less room for the bar. */
   readonly narrow: boolean;
@@ -13,17 +14,17 @@ interface SheetFootProps {
 }
 
 /** Below the sheet: scale bar and CRS, legend, north. On a phone the bar lies inside the sheet and only the legend below it. */
-export function SheetFoot({ scale, compact, narrow, crsName, legend }: SheetFootProps) {
+export function SheetFoot({ window, compact, narrow, crsName, legend }: SheetFootProps) {
   if (compact)
     return legend === undefined ? null : (
       <figcaption className="q-sheet-foot q-sheet-foot-compact">{legend}</figcaption>
     );
-  const step = gridStep(scale);
+  const step = stepOf(window);
   const every = step >= 1000 ? `${step / 1000}\u00a0km` : `${step}\u00a0m`;
   return (
     <figcaption className="q-sheet-foot">
       <div>
-        <ScaleBar scale={scale} widest={narrow ? 130 : 200} parts={4} />
+        <ScaleBar scale={window.scale} widest={narrow ? 130 : 200} parts={4} />
         <p>{crsName === null ? "Longitude and latitude, WGS\u00a084" : `${crsName}, lines every ${every}`}</p>
       </div>
       <div className="q-sheet-legend">{legend}</div>

@@ -1,5 +1,5 @@
 import type { LngLatOf } from "./planes.ts";
-import { gridLines, gridStep, sheetGraticule } from "./sheet-lines.ts";
+import { gridLines, sheetGraticule, stepOf } from "./sheet-lines.ts";
 import type { SheetWindow } from "./use-planar-map.ts";
 
 interface SheetGridProps {
@@ -14,7 +14,7 @@ export function SheetGrid({ window, inMetres, lngLatOf }: SheetGridProps) {
   let verticals: number[] = [];
   let horizontals: number[] = [];
   if (inMetres) {
-    const step = gridStep(scale);
+    const step = stepOf(window);
     verticals = gridLines(west, east, step, "", 0).map((line) => line.value);
     horizontals = gridLines(south, north, step, "", 0).map((line) => line.value);
   } else if (lngLatOf !== undefined) {

@@ -10,16 +10,22 @@ export interface GridLine {
   readonly tail: string;
 }
 
-/** The closest grid lines on a sheet, in px: a step puts about 5 to 9 of them across it. */
+/** The closest grid lines on a sheet, in px, and the most of them along its longer side. */
 const CLOSEST = 64;
+const MOST = 9;
 
-/** The smallest step of 1, 2 or 5 · 10^k metres that is at least 64 px on the sheet, at so many px a metre. */
-export function gridStep(scale: number): number {
+/** The smallest step of 1, 2 or 5 · 10^k metres that is at least 64 px on a sheet of so many px a metre and puts at most 9 steps along `longer` px. */
+export function gridStep(scale: number, longer: number): number {
   if (!(scale > 0)) throw new RangeError(`needs a scale above zero, got ${scale}`);
-  const least = CLOSEST / scale;
+  const least = Math.max(CLOSEST, longer / MOST) / scale;
   const power = 10 ** Math.floor(Math.log10(least));
   const factor = [1, 2, 5].find((one) => one * power >= least * 0.999999) ?? 10;
   return factor * power;
+}
+
+/** The step of the grid lines for what is in sight. */
+export function stepOf(window: PlaneBounds & { readonly scale: number }): number {
+  return gridStep(window.scale, Math.max(window.east - window.west, window.north - window.south) * window.scale);
 }
 
 /**

@@ -2,20 +2,22 @@ import { describe, expect, it } from "vitest";
 import { graticuleTicks, gridLines, gridStep, scaleBar } from "../../../src/map/sheet-lines.ts";
 
 describe("grid lines of the margin", () => {
-  // 64 px at 0.925 px a metre are 69.2 m: the next of 1, 2, 5 · 10^k is 100 m.
-  it("steps are 1, 2 or 5 times a power of ten and at least 64 px apart", () => {
-    expect(gridStep(0.925)).toBe(100);
-    expect(gridStep(0.5)).toBe(200);
-    expect(gridStep(0.64)).toBe(100);
-    expect(gridStep(0.639)).toBe(200);
-    expect(gridStep(64)).toBe(1);
-    expect(gridStep(0.0001)).toBe(1_000_000);
+  // 656 px at 0.925 px a metre: 656 / 9 px are 78.8 m, so 100 m. On a sheet of 1 208 px the least step is 145 m, so 200 m.
+  it("steps are 1, 2 or 5 times a power of ten, at least 64 px apart and at most nine along the sheet", () => {
+    expect(gridStep(0.925, 656)).toBe(100);
+    expect(gridStep(0.925, 1208)).toBe(200);
+    expect(gridStep(0.64, 352)).toBe(100);
+    expect(gridStep(0.639, 352)).toBe(200);
+    expect(gridStep(64, 352)).toBe(1);
     for (const scale of [0.001, 0.037, 0.2, 1, 7.3, 100]) {
-      const px = gridStep(scale) * scale;
-      expect(px).toBeGreaterThanOrEqual(64 * 0.999);
-      expect(px).toBeLessThan(64 * 2.5 * 1.001);
+      for (const longer of [300, 656, 1500]) {
+        const px = gridStep(scale, longer) * scale;
+        expect(px).toBeGreaterThanOrEqual(64 * 0.999);
+        expect(longer / px).toBeLessThan(9.001);
+        expect(px).toBeLessThan(2.5 * 1.001 * Math.max(64, longer / 9));
+      }
     }
-    expect(() => gridStep(0)).toThrow(RangeError);
+    expect(() => gridStep(0, 656)).toThrow(RangeError);
   });
 
   it("prints the last three figures bold and the whole value once, at the first line with room for it", () => {

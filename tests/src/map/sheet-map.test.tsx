@@ -72,10 +72,10 @@ describe("the sheet", () => {
       "Zoom out",
       "Whole area",
     ]);
-    // 560 px less twice 26 for 100 m, 800 px less 52 for 200 m: 3.74 px a metre. At most 200 px are 50 m.
+    // 560 px less twice 26 for 100 m, 800 px less 52 for 200 m: 3.74 px a metre. At most 200 px are 50 m; a ninth of 800 px is 23.8 m, so lines are 50 m apart.
     expect(screen.getByRole("img", { name: "Scale bar of 50\u00a0m" })).toBeTruthy();
     expect(screen.getByRole("img", { name: "North is up" })).toBeTruthy();
-    expect(screen.getByText("ETRS89 / UTM zone 31N, lines every 20 m")).toBeTruthy();
+    expect(screen.getByText("ETRS89 / UTM zone 31N, lines every 50 m")).toBeTruthy();
   });
 
   it("zooms by button and comes back to the whole area", async () => {
