@@ -62,11 +62,5 @@ function sharedCorners(rings: readonly Ring[]): Passing[][] {
 function inSector({ x, y, fromX, fromY, toX, toY }: Passing, pointX: number, pointY: number): boolean {
   const leftOfOut = turn(x, y, toX, toY, pointX, pointY) > 0;
   const rightOfIn = turn(x, y, fromX, fromY, pointX, pointY) < 0;
-  return turn(x, y, toX, toY, fromX, fromY) >= 0 && !isOpposite(x, y, toX, toY, fromX, fromY)
-    ? leftOfOut && rightOfIn
-    : leftOfOut || rightOfIn;
-}
-
-function isOpposite(x: number, y: number, ax: number, ay: number, bx: number, by: number): boolean {
-  return turn(x, y, ax, ay, bx, by) === 0 && (ax - x) * (bx - x) + (ay - y) * (by - y) < 0;
+  return turn(x, y, toX, toY, fromX, fromY) >= 0 ? leftOfOut && rightOfIn : leftOfOut || rightOfIn;
 }

@@ -65,6 +65,15 @@ describe("units", () => {
     expect(labelOf(cells, 1, 0)).toBe("B2");
   });
 
+  // The edge rule "inside" takes columns 0 and 1; left-out addresses west of the frame, in its gap and east of it change nothing.
+  test("a cell left out that is no member of the frame changes nothing", () => {
+    const twoParts: PlaneArea = { polygons: [[[0, 0, 20, 0, 20, 10, 0, 10]], [[50, 0, 70, 0, 70, 10, 50, 10]]] };
+    const all = measureCells(twoParts, SPEC);
+    const outside = [-3, 3, 9].map((column) => ({ column, row: 0 }));
+    expect(selectCells(all, { rule: "inside" }, outside)).toEqual(selectCells(all, { rule: "inside" }, []));
+    expect(summarise(all, { rule: "inside" }, "whole", outside).cells).toBe(4);
+  });
+
   test("leaving the whole north row out keeps the labels of the south row", () => {
     const cells = selectCells(
       measured,
@@ -188,6 +197,13 @@ describe("summaries", () => {
     // The centres of column 2 lie on the right side of the area: out.
     expect(centre).toMatchObject({ cells: 4, frameAreaM2: 4e-4, uncoveredM2: 1e-4, outsideM2: 0 });
     expect(inside).toEqual(centre);
+  });
+
+  // By hand: 2 of 6 mm is a third, 333,333,333 billionths, and a third of a billionth is lost by rounding: not uncovered ground.
+  test("do not call the rounding of shares uncovered", () => {
+    const third = measureCells({ polygons: [[[0, 0, 8, 0, 8, 6, 0, 6]]] }, rectangles(6, 6));
+    const summary = summarise(third, TOUCH, "inside");
+    expect([summary.shareSumBillionths, summary.uncoveredM2]).toEqual([1_333_333_333n, 0]);
   });
 
   test("leave out what is left out, and nothing that is no member", () => {

@@ -141,6 +141,15 @@ describe("noded rings", () => {
     expect(vertexCount(area)).toBe(12);
   });
 
+  // Ten squares, one inside the other: each outer ring has the next one as its hole, and no other.
+  test("holes belong to the innermost ring around them, however deep they are nested", () => {
+    const squares = Array.from({ length: 10 }, (_, i) => rectangle(7 * i, 3 * i, 200 - 14 * i, 200 - 6 * i));
+    const area = nodeRings(squares);
+    expect(area.polygons.map(([outer = [], hole = []]) => [outer[0], hole[0]])).toEqual(
+      [0, 2, 4, 6, 8].map((i) => [7 * i, 7 * (i + 1)]),
+    );
+  });
+
   // By hand: 20 × 25 plots of 7 × 3 m; outside 2·(20 + 25) = 90 corners stay, each on the outer border.
   test("500 plots of a field trial that share their edges become one polygon", () => {
     const plots = Array.from({ length: 500 }, (_, i) =>
@@ -219,17 +228,21 @@ describe("the test for crossings", () => {
     expect(found([square, [0, 5, 4, 3, 4, 7]])).toEqual({ eastMm: 0, northMm: 5 });
   });
 
-  // One millimetre in a thousand kilometres: double precision alone would not see it.
-  test("tells an edge that passes a corner by a hair from one that meets it", () => {
-    const far = 1_000_000_000;
-    const line = [0, 0, far, far - 1, far, far, 0, 1];
-    expect(found([line], [[far / 2, far / 2 + 10, far / 2 - 10, far / 2 + 20, far / 2 + 10, far / 2 + 20]])).toBeNull();
-    expect(found([line], [[far / 2, far / 2, far / 2 - 10, far / 2 + 20, far / 2 + 10, far / 2 + 20]])).not.toBeNull();
+  // Neighbouring Fibonacci numbers: F45·F43 − F44² = 1, so the corner (F44, F43) lies left of the edge (0, 0) → (F45, F44), by less
+  // than a millionth of a millimetre. Each product is near 5·10¹⁷, where numbers in double precision are 64 apart.
+  test("tells a corner that an edge passes by a hair from one that it meets", () => {
+    const [f43, f44, f45] = [433_494_437, 701_408_733, 1_134_903_170];
+    const triangle = [0, 0, f45, 0, f45, f44];
+    expect(found([triangle], [[f44, f43, f44, f43 + 50, f44 - 50, f43 + 50]])).toBeNull();
+    expect(found([triangle], [[f44, f43, f44, f43 - 50, f44 + 50, f43 - 50]])).not.toBeNull();
   });
 
   test("finds rings that cross at a shared corner, and lets rings touch there", () => {
     const bowTie = [0, 0, 5, 5, 10, 10, 10, 0, 5, 5, 0, 10];
     expect(found([bowTie])).toEqual({ eastMm: 5, northMm: 5 });
+    // A triangle that runs clockwise, and a ring that enters it at its upper corner and leaves at its right one.
+    expect(found([[0, 0, 5, 5, 10, 0]], [[5, 5, 8, 1, 10, 0, 20, 10, 5, 20]])).not.toBeNull();
+    expect(found([[0, 0, 5, 5, 10, 0]], [[5, 5, 20, 10, 5, 20]])).toBeNull();
     expect(found([[0, 0, 5, 5, 0, 10]], [[5, 5, 10, 0, 10, 10]])).toBeNull();
     expect(
       found([
