@@ -1,5 +1,5 @@
 import { reach, ROLES, type Action } from "#shared/access/table.ts";
-import type { Stage, SurveySummary } from "#shared/api/surveys.ts";
+import type { Stage, StageState, SurveySummary } from "#shared/api/surveys.ts";
 import type { Waiting } from "../features/surveys/WaitingList.tsx";
 import { paths } from "./paths.ts";
 import { STAGE_NAMES, stageThatMatters } from "./stages.ts";
@@ -45,9 +45,17 @@ const STEPS: Readonly<Partial<Record<Stage, Step>>> = {
   },
 };
 
+/** The stage that matters; for a counter it is Counts as soon as cells are in the field, since that is where they act. */
+function ownStage(survey: SurveySummary): StageState | undefined {
+  const stage = stageThatMatters(survey.roles, survey.stages);
+  if (stage?.stage !== "field" || reach(survey.roles, "field.assign") !== "none") return stage;
+  const counts = survey.stages.find((one) => one.stage === "counts");
+  return stage.state === "not-started" || counts?.state === "done" ? stage : counts;
+}
+
 /** What this person can do next in a survey, or nothing. */
 export function waitingIn(survey: SurveySummary): Waiting | null {
-  const stage = stageThatMatters(survey.roles, survey.stages);
+  const stage = ownStage(survey);
   const step = stage === undefined ? undefined : STEPS[stage.stage];
   if (stage === undefined || step === undefined || reach(survey.roles, step.action) === "none") return null;
   const role = ROLES.find((one) => survey.roles.includes(one) && reach([one], step.action) !== "none");

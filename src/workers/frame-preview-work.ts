@@ -45,7 +45,7 @@ const KEPT_PLANES = 4;
 const DRAWN_VERTICES = 20_000;
 
 /** The outline thinned for drawing: a vertex nearer to the last one kept than a 20 000th of the area's extent adds nothing. */
-export function drawnOutline(rings: PlaneRings["rings"], vertices: number, extentMm: number): PlaneRings["rings"] {
+function drawnOutline(rings: PlaneRings["rings"], vertices: number, extentMm: number): PlaneRings["rings"] {
   if (vertices <= DRAWN_VERTICES) return rings;
   const near = extentMm / 20_000;
   return rings.map((polygon) =>
@@ -71,7 +71,7 @@ function cellsOf(measured: MeasuredCells, name: EdgePresetName) {
 }
 
 /** All three presets of one spec over one area. */
-export function previewOf(area: PlaneArea, spec: CellSpec): FramePreviewResult {
+function previewOf(area: PlaneArea, spec: CellSpec): FramePreviewResult {
   const { presets, measured } = previewFrame(area, spec);
   const clip = cellsOf(measured, "clip");
   const centre = cellsOf(measured, "centre");

@@ -1,9 +1,8 @@
-import { isRouteErrorResponse, useRouteError } from "react-router-dom";
+import { useRouteError } from "react-router-dom";
 import { problemOf } from "../../api/problem-of.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
-import { NotFoundPage } from "./NotFoundPage.tsx";
 import { paths } from "../paths.ts";
 
 /** A page's code that could not be fetched: the server was restarted with a newer version, or cannot be reached. */
@@ -16,7 +15,6 @@ function isLostPage(error: unknown): boolean {
 /** What a page could not cope with: the fact, and what to do next. */
 export function ErrorPage() {
   const error = useRouteError();
-  if (isRouteErrorResponse(error) && error.status === 404) return <NotFoundPage />;
   const lost = isLostPage(error);
   return (
     <main className="grid max-w-160 gap-4 p-8">

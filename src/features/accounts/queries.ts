@@ -3,7 +3,7 @@ import { readSession, signIn, signOut, type Session } from "#shared/api/accounts
 import { call } from "../../api/call.ts";
 import { sessionKey } from "../../api/keys.ts";
 
-export const sessionQuery = queryOptions({
+const sessionQuery = queryOptions({
   queryKey: sessionKey,
   queryFn: ({ signal }) => call(readSession, { signal }),
   staleTime: 60_000,

@@ -5,7 +5,7 @@ import { formatArea, formatCount } from "../../components/ui/format.ts";
 type Report = AreaVersion["report"];
 
 /** "1 polygon, 1 hole, 126 vertices" */
-export function foundText({ parts, holes, vertices }: Pick<Report, "parts" | "holes" | "vertices">): string {
+function foundText({ parts, holes, vertices }: Pick<Report, "parts" | "holes" | "vertices">): string {
   return [
     formatCount(parts, "polygon"),
     ...(holes === 0 ? [] : [formatCount(holes, "hole")]),

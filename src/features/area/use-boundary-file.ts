@@ -22,7 +22,7 @@ export interface BoundaryFile {
 const QUESTION_KINDS: readonly string[] = ["crs", "layer", "axes", "place"] satisfies readonly AreaQuestion["kind"][];
 
 /** The question that rides on a refusal, where it is one of this word. */
-export function questionOf(problem: Problem): AreaQuestion | null {
+function questionOf(problem: Problem): AreaQuestion | null {
   const { question } = problem;
   return question !== undefined && QUESTION_KINDS.includes(question.kind)
     ? (question as unknown as AreaQuestion)

@@ -5,12 +5,12 @@ import { formatMetres } from "../../components/ui/format.ts";
 import { AreaOutline } from "../../map/AreaOutline.tsx";
 import { CellCallout } from "../../map/CellCallout.tsx";
 import { FrameCellsLayer } from "../../map/FrameCellsLayer.tsx";
+import type { ShownPlane } from "../../map/frame-ground.ts";
 import { LegendEntry } from "../../map/LegendEntry.tsx";
 import { lngLatFromNet } from "../../map/planes.ts";
 import { SheetMap } from "../../map/SheetMap.tsx";
 import { cellWords } from "./cell-words.ts";
 import { HoveredCell } from "./HoveredCell.tsx";
-import type { ShownPlane } from "./queries.ts";
 
 interface FrameSheetProps {
   readonly surveyName: string;

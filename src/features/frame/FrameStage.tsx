@@ -1,6 +1,7 @@
 import { useState } from "react";
 import type { AreaVersion } from "#shared/api/area.ts";
 import type { FrameVersion } from "#shared/api/frame.ts";
+import { useFrames } from "../../api/frames.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { formatCount } from "../../components/ui/format.ts";
@@ -10,7 +11,6 @@ import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { showToast } from "../../components/ui/show-toast.tsx";
 import { FrameEditor } from "./FrameEditor.tsx";
 import { FrameVersions } from "./FrameVersions.tsx";
-import { useFrames } from "./queries.ts";
 import { SealedFrame } from "./SealedFrame.tsx";
 
 interface FrameStageProps {

@@ -10,13 +10,13 @@ import { KeyValues, type KeyValue } from "../../components/ui/KeyValues.tsx";
 import { MapPage } from "../../components/ui/MapPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
+import { usePlane, useSealedCells } from "../../map/frame-ground.ts";
 import type { PlaneReference } from "../../workers/frame-preview-work.ts";
 import { FindCell } from "./FindCell.tsx";
 import { FrameAreas } from "./FrameAreas.tsx";
 import { presetOf } from "./frame-settings.ts";
 import { FrameSheet } from "./FrameSheet.tsx";
 import { PRESET_TEXTS, PRESET_TITLES, speaksFor } from "./frame-words.ts";
-import { usePlane, useSealedCells } from "./queries.ts";
 
 type Seal = NonNullable<FrameVersion["sealed"]>;
 

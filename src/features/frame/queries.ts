@@ -1,39 +1,10 @@
 import { keepPreviousData, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
-import { listFrames, saveDraftFrame, sealFrame, type FrameSpec } from "#shared/api/frame.ts";
+import { saveDraftFrame, sealFrame, type FrameSpec } from "#shared/api/frame.ts";
 import type { CellSpec } from "#shared/frame/cell-spec.ts";
 import { call } from "../../api/call.ts";
-import { foreverKey, surveyKey } from "../../api/keys.ts";
-import { loadPlane, loadSealedCells, previewCells } from "../../workers/frame-preview.ts";
-import type { FramePreviewResult, LoadedPlane, PlaneReference } from "../../workers/frame-preview-work.ts";
-
-export function useFrames(surveyId: string) {
-  return useQuery({
-    queryKey: surveyKey(surveyId, "frame"),
-    queryFn: ({ signal }) => call(listFrames, { params: { surveyId }, signal }),
-    select: ({ frames }) => frames,
-  });
-}
-
-/** A plane with what it is of, so that what is drawn on it can be told apart while another is on its way. */
-export interface ShownPlane extends LoadedPlane {
-  readonly areaId: string;
-  readonly epsg: number;
-}
-
-/** The study area on a plane; asked of the worker, which keeps the rings. Nothing is asked while no system is chosen. */
-export function usePlane(reference: PlaneReference | null) {
-  return useQuery({
-    queryKey: ["forever", reference?.surveyId, "plane", reference],
-    queryFn: async (): Promise<ShownPlane> => {
-      if (reference === null) throw new RangeError("no plane to load");
-      const { areaId, epsg } = reference;
-      return { ...(await loadPlane(reference)), areaId, epsg };
-    },
-    enabled: reference !== null,
-    staleTime: Infinity,
-    placeholderData: keepPreviousData,
-  });
-}
+import { surveyKey } from "../../api/keys.ts";
+import { previewCells } from "../../workers/frame-preview.ts";
+import type { FramePreviewResult, PlaneReference } from "../../workers/frame-preview-work.ts";
 
 /** Figures and cells with the size and plane that they are of. */
 export interface ShownPreview extends FramePreviewResult {
@@ -55,15 +26,6 @@ export function useFramePreview(reference: PlaneReference | null, spec: CellSpec
     staleTime: Infinity,
     gcTime: 10_000,
     placeholderData: keepPreviousData,
-    structuralSharing: false,
-  });
-}
-
-export function useSealedCells(surveyId: string, frameId: string) {
-  return useQuery({
-    queryKey: foreverKey(surveyId, "cells", frameId),
-    queryFn: () => loadSealedCells(surveyId, frameId),
-    staleTime: Infinity,
     structuralSharing: false,
   });
 }

@@ -1,9 +1,10 @@
 import { useEffect, useRef, useState } from "react";
 import type { AreaVersion } from "#shared/api/area.ts";
 import type { FrameSpec } from "#shared/api/frame.ts";
+import { usePlane } from "../../map/frame-ground.ts";
 import type { PlaneReference } from "../../workers/frame-preview-work.ts";
 import { readSettings, specOf, startSettings, type FrameSettings } from "./frame-settings.ts";
-import { useFramePreview, usePlane, useSaveDraft } from "./queries.ts";
+import { useFramePreview, useSaveDraft } from "./queries.ts";
 
 const SAVE_AFTER_MS = 700;
 

@@ -43,6 +43,10 @@ test("stations carry the note of their stage and the address of its page", () =>
 test("what waits is said to those who can do it only", () => {
   expect(waitingIn(survey(["planner"]))).toMatchObject({ role: "planner", to: "/surveys/s1/area" });
   expect(waitingIn(survey(["auditor"]))).toBeNull();
+  const inField = stages({ field: { state: "in-work", note: "0 of 57 cells" } });
+  expect(waitingIn(survey(["counter"]))).toBeNull();
+  expect(waitingIn(survey(["counter"], { stages: inField }))).toMatchObject({ to: "/surveys/s1/counts" });
+  expect(waitingIn(survey(["lead"], { stages: inField }))).toMatchObject({ fact: "Field: 0 of 57 cells." });
   expect(waitingTitle(0)).toBe("Nothing waits for you.");
   expect(waitingTitle(1)).toBe("One thing waits for you.");
   expect(waitingTitle(3)).toBe("Three things wait for you.");
