@@ -1,4 +1,4 @@
-import type { Map as LeafletMap } from "leaflet";
+import type { Map as LeafletMap, Point } from "leaflet";
 import { useEffect, useRef, useState, type RefObject } from "react";
 import { flushSync } from "react-dom";
 import { createPlanarMap, fitWhole } from "./planar-map.ts";
@@ -29,9 +29,7 @@ function windowOf(map: LeafletMap): SheetWindow {
   };
 }
 
-function viewOf(map: LeafletMap, before: SheetView | null): SheetView {
-  const window = windowOf(map);
-  const size = map.getSize();
+function viewOf(window: SheetWindow, size: Point, before: SheetView | null): SheetView {
   const marginEast = (window.east - window.west) / 2;
   const marginNorth = (window.north - window.south) / 2;
   const near = {
@@ -79,12 +77,14 @@ export function usePlanarMap(element: RefObject<HTMLDivElement | null>, bounds: 
       untouched = true;
     };
     const update = (settled: boolean) => {
+      const window = windowOf(map); // read now: when React works the update off, the map may be gone
+      const size = map.getSize();
       setState((before) => ({
         map,
-        window: windowOf(map),
+        window,
         view:
-          settled || before?.map !== map || before.view.scale !== 2 ** map.getZoom()
-            ? viewOf(map, before?.map === map ? before.view : null)
+          settled || before?.map !== map || before.view.scale !== window.scale
+            ? viewOf(window, size, before?.map === map ? before.view : null)
             : before.view,
       }));
     };
