@@ -1,4 +1,4 @@
-import { and, desc, eq, getTableColumns, isNotNull, isNull } from "drizzle-orm";
+import { and, desc, eq, getTableColumns, isNull } from "drizzle-orm";
 import type { FrameSpec, FrameSummary } from "#shared/api/frame.ts";
 import type { Reader, Tx } from "./open.ts";
 import { frameVersions } from "./schema/frame.ts";
@@ -29,16 +29,6 @@ export function findFrameHead(reader: Reader, id: string): FrameHead | undefined
 /** A frame with its statement and cells. */
 export function findFrame(reader: Reader, id: string): FrameRow | undefined {
   return reader.select().from(frameVersions).where(eq(frameVersions.id, id)).get();
-}
-
-export function newestSealedFrame(reader: Reader, surveyId: string): FrameHead | undefined {
-  return reader
-    .select(headColumns)
-    .from(frameVersions)
-    .where(and(eq(frameVersions.surveyId, surveyId), isNotNull(frameVersions.sealedAt)))
-    .orderBy(desc(frameVersions.number))
-    .limit(1)
-    .get();
 }
 
 export function insertFrame(tx: Tx, row: FrameRow): void {

@@ -43,7 +43,6 @@ const TABLE = {
 } as const satisfies Record<string, Rule>;
 
 export type Action = keyof typeof TABLE;
-export const ACTIONS = Object.keys(TABLE) as readonly Action[];
 
 /** How far an action reaches for somebody who holds these roles: all cells, their own, or not at all. */
 export function reach(roles: readonly Role[], action: Action): Reach {

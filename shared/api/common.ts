@@ -16,6 +16,5 @@ export const longText = z.string().check(z.trim(), z.maxLength(4000));
 export const reason = z.string().check(z.trim(), z.minLength(3, "needs at least three characters"), z.maxLength(1000));
 export const surveyParams = z.object({ surveyId: id });
 
-export const lngLat = z.object({ lng: z.number(), lat: z.number() });
 /** [polygon][ring][vertex][x, y], in whole millimetres of a plane or in degrees, as the endpoint says. */
 export const polygons = z.array(z.array(z.array(z.tuple([z.number(), z.number()]))));

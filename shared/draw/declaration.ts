@@ -9,7 +9,6 @@ export const DECLARATION_FORMAT = "quillet-declaration/1";
 
 /** The limits that may be declared to be printed large. */
 export const LIMITS = ["log-normal", "t"] as const;
-export type LimitsKind = (typeof LIMITS)[number];
 
 /** Where the seed comes from. Sources that join later (dice, two parts, a public pulse) join this union. */
 export const seedSource = z.discriminatedUnion("kind", [

@@ -21,8 +21,6 @@ export type DesignKind = Design["kind"];
 /** Simple random sampling of n picks, with replacement ("srs-wr", the default) or without ("srs-wor"). */
 export type SimpleDesign = Extract<Design, { kind: "srs-wr" | "srs-wor" }>;
 
-export const DESIGN_KINDS = ["srs-wr", "srs-wor"] as const satisfies readonly DesignKind[];
-
 /** Whether a cell can be picked more than once. */
 export function withReplacement(kind: DesignKind): boolean {
   switch (kind) {

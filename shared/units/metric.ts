@@ -2,16 +2,11 @@
 declare const unit: unique symbol;
 type Unit<Name extends string> = number & { readonly [unit]: Name };
 
-export type Metres = Unit<"m">;
 export type SquareMetres = Unit<"m2">;
-/** Whole millimetres of a frame's projected plane. */
-export type Millimetres = Unit<"mm">;
 /** Whole billionths of a cell's area (R3): 1 000 000 000 is a whole cell. */
 export type Billionths = Unit<"1e-9">;
 
-export const metres = (value: number): Metres => value as Metres;
 export const squareMetres = (value: number): SquareMetres => value as SquareMetres;
-export const millimetres = (value: number): Millimetres => value as Millimetres;
 export const billionths = (value: number): Billionths => value as Billionths;
 
 /** A place on the globe in WGS 84 degrees. */

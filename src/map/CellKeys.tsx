@@ -1,4 +1,5 @@
 import { useRef, useState } from "react";
+import { useMap } from "react-leaflet";
 import type { SheetCell } from "./cell-path.ts";
 import { place } from "./planar-map.ts";
 import { useSheet } from "./sheet-context.ts";
@@ -21,7 +22,8 @@ interface CellKeysProps {
 
 /** One stop of the Tab key for all drawn cells: arrows go from cell to cell in draw order and bring each into sight, Enter chooses. */
 export function CellKeys({ cells, grid, chosen, onChoose }: CellKeysProps) {
-  const { map, view } = useSheet();
+  const map = useMap();
+  const { view } = useSheet();
   const [focused, setFocused] = useState<string | null>(null);
   const group = useRef<SVGGElement>(null);
   const stop = cells.find((cell) => cell.key === (focused ?? chosen)) ?? cells[0];

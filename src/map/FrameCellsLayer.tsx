@@ -1,4 +1,5 @@
 import { useEffect, useMemo, useRef } from "react";
+import { useMap } from "react-leaflet";
 import type { CellRows } from "#shared/frame/cells.ts";
 import { CellTiles } from "./CellTiles.ts";
 import { useSheet } from "./sheet-context.ts";
@@ -18,7 +19,8 @@ const COLOURS = { line: "--map-cell-line", edge: "--map-edge-cell" } as const;
 
 /** The cells of a frame, from ten to ten million. */
 export function FrameCellsLayer({ cells, spec, clip, onChoose }: FrameCellsLayerProps) {
-  const { map, onPress } = useSheet();
+  const map = useMap();
+  const { onPress } = useSheet();
   const colours = useThemeColours(COLOURS);
   const rings = useMemo(() => clip?.flat() ?? null, [clip]);
   const tiles = useRef<CellTiles | null>(null);

@@ -1,3 +1,4 @@
+import { createLeafletContext, LeafletContext } from "@react-leaflet/core";
 import "leaflet/dist/leaflet.css";
 import { useId, useMemo, useRef, useState, type CSSProperties, type ReactNode } from "react";
 import type { LngLatOf } from "./planes.ts";
@@ -47,11 +48,11 @@ function useSheetValue(
   const view = planar?.view;
   const onPress = usePress(map);
   return useMemo(() => {
-    if (map === undefined || view === undefined || under === null || over === null) return null;
+    if (view === undefined || under === null || over === null) return null;
     const slot = (name: SheetSlot) =>
       (name === "tint" ? under : over).querySelector<SVGGElement>(`g[data-slot="${name}"]`);
-    return { map, view, slot, id, onPress };
-  }, [map, view, under, over, id, onPress]);
+    return { view, slot, id, onPress };
+  }, [view, under, over, id, onPress]);
 }
 
 /** The map as a printed sheet: neat line, alternating bar, figures in the margin, scale bar, north, legend; it needs no base map and no network. */
@@ -64,6 +65,8 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
   const margins = marginsFor(size.width, lngLatOf !== undefined);
   const planar = usePlanarMap(container, bounds);
   const sheet = useSheetValue(planar, under, over);
+  const map = planar?.map;
+  const leaflet = useMemo(() => (map === undefined ? null : createLeafletContext(map)), [map]);
   const seen = planar?.window;
   const shift = planar === null ? undefined : shiftOf(planar);
   const inMetres = crsName !== null;
@@ -114,7 +117,11 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
             <ScaleBar scale={seen.scale} widest={90} parts={1} />
           </div>
         )}
-        {sheet !== null && <SheetContext value={sheet}>{children}</SheetContext>}
+        {sheet !== null && leaflet !== null && (
+          <LeafletContext value={leaflet}>
+            <SheetContext value={sheet}>{children}</SheetContext>
+          </LeafletContext>
+        )}
       </div>
       {seen !== undefined && (
         <SheetFoot

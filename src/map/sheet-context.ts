@@ -1,5 +1,4 @@
 import { createContext, use } from "react";
-import type { Map as LeafletMap } from "leaflet";
 import type { PlaneBounds, SheetScale } from "./sheet-geometry.ts";
 
 /** Layers of the sheet in their order from below. Cells lie between "tint" and "hole" as canvas tiles. */
@@ -14,7 +13,6 @@ export interface SheetView extends SheetScale {
 }
 
 export interface Sheet {
-  readonly map: LeafletMap;
   readonly view: SheetView;
   /** The SVG group of each slot, in px from the view's anchor. */
   readonly slot: (name: SheetSlot) => SVGGElement | null;

@@ -1,4 +1,5 @@
 import { useEffect, useState } from "react";
+import { useMap } from "react-leaflet";
 import type { SheetCell } from "./cell-path.ts";
 import { useSheet } from "./sheet-context.ts";
 import { cellAt, type CellGrid } from "./sheet-geometry.ts";
@@ -35,7 +36,8 @@ export function useCellChoice<Cell extends SheetCell>(
   grid: CellGrid,
   onChoose: ((cell: Cell) => void) | undefined,
 ): Cell | null {
-  const { map, view, onPress } = useSheet();
+  const map = useMap();
+  const { view, onPress } = useSheet();
   const [hovered, setHovered] = useState<Cell | null>(null);
   const { scale } = view;
   useEffect(() => {

@@ -1,8 +1,9 @@
 import { useEffect, useState } from "react";
+import { useMap } from "react-leaflet";
 import type { CellAddress, CellSpec } from "#shared/frame/cell-spec.ts";
 import type { FrameCells } from "#shared/frame/cells.ts";
 import { CellCallout } from "../../map/CellCallout.tsx";
-import { useSheet } from "../../map/sheet-context.ts";
+
 import { cellAt } from "../../map/sheet-geometry.ts";
 import { cellWords } from "./cell-words.ts";
 
@@ -17,7 +18,7 @@ const same = (a: CellAddress | null, b: CellAddress | null) => a?.column === b?.
 
 /** What lies under the pointer, told on the sheet. */
 export function HoveredCell({ cells, spec, chosen }: HoveredCellProps) {
-  const { map } = useSheet();
+  const map = useMap();
   const [hovered, setHovered] = useState<CellAddress | null>(null);
   useEffect(() => {
     const move = (event: { latlng: { lat: number; lng: number } }) => {
