@@ -19,7 +19,10 @@ type CountEvent = WholeEvent<"count-entered"> | WholeEvent<"count-amended">;
 
 const TITLE = "The counts are those of the events";
 
-/** Each count in the list is that of its event, member by member, and no event's count is missing from the list. */
+/**
+ * Each count in the list is that of its event, member by member, made in the cell that the event names; and no event's
+ * count is missing from the list.
+ */
 export function checkCounts(run: ReplayRun): Check[] {
   const broken = run.events.brokenAmong(["count-entered", "count-amended", "counts-imported"]);
   if (broken !== null) return [notChecked("counts", TITLE, `Not compared: ${broken} is not whole.`)];
@@ -45,13 +48,14 @@ function countEvents(run: ReplayRun): CountEvent[] {
 function compareAll(run: ReplayRun): Difference | null {
   const byEntry = new Map(countEvents(run).map((event) => [event.payload.entryId, event]));
   const places = placesOf(run);
+  const visits = new Map(run.record.visits.map((visit) => [visit.id, visit]));
   for (const count of run.record.counts) {
     const where = places.get(count.visitId) ?? `visit ${count.visitId}`;
     const event = byEntry.get(count.id);
     const difference =
       event === undefined
         ? { where, found: `${said(count)}, entry ${count.id}`, expected: "no such entry: no event holds it" }
-        : compare(where, count, event);
+        : compare(where, count, event, visits.get(count.visitId));
     if (difference !== null) return difference;
   }
   return null;
@@ -80,13 +84,20 @@ function importsDifference(run: ReplayRun): Difference | null {
   ]);
 }
 
-function compare(where: string, count: StoredCount, event: CountEvent): Difference | null {
+function compare(
+  where: string,
+  count: StoredCount,
+  event: CountEvent,
+  visit: RecordFile["visits"][number] | undefined,
+): Difference | null {
   const { payload } = event;
   if (count.state !== payload.state || !Object.is(count.value, payload.value)) {
     return { where, found: said(count), expected: `${said(payload)}, as event ${event.sequence} says` };
   }
   const members: [string, unknown, unknown][] = [
     ["visit", count.visitId, payload.visitId],
+    ["frame of the visit", visit?.frameId, payload.frameId],
+    ["unit of the visit", visit?.unit, payload.unit],
     ["target", count.targetId, payload.targetId],
     ["counted by", count.observer, payload.observer],
     ["purpose", count.purpose, payload.purpose],

@@ -9,11 +9,12 @@ interface Steps {
   readonly seed: number[];
   readonly drawn: number[];
   readonly abandoned: number[];
+  readonly withdrawn: number[];
 }
 
 /**
  * Rule R7, by the sequence of the events and not by clocks: the frame was sealed before the draw was declared, the
- * declaration before its seed, the seed before the draw; each once; and no second declaration was open beside it.
+ * declaration before its seed, the seed before the draw; each once; and no second declaration was made while it was open or its draw was live.
  */
 export function checkOrderOfProof(run: ReplayRun): Check[] {
   const broken = run.events.brokenAmong([
@@ -21,6 +22,7 @@ export function checkOrderOfProof(run: ReplayRun): Check[] {
     "draw-declared",
     "seed-given",
     "draw-made",
+    "draw-withdrawn",
     "declaration-abandoned",
   ]);
   if (broken !== null) return [notChecked("order", TITLE, `Not compared: ${broken} is not whole.`)];
@@ -37,12 +39,16 @@ function stepsOf(run: ReplayRun, { stored }: Declared): Steps {
   const here = ({ payload }: { payload: { declarationId: string } }): boolean => payload.declarationId === stored.id;
   const sequences = (events: readonly { sequence: number }[]): number[] => events.map(({ sequence }) => sequence);
   const { events } = run;
+  const drawn = events.of("draw-made").filter(here);
+  // By the events alone: a draw that the list leaves out was still live.
+  const draws = new Set(drawn.map(({ payload }) => payload.drawId));
   return {
     sealed: sequences(events.of("frame-sealed").filter(({ payload }) => payload.frameId === stored.frameId)),
     declared: sequences(events.of("draw-declared").filter(here)),
     seed: sequences(events.of("seed-given").filter(here)),
-    drawn: sequences(events.of("draw-made").filter(here)),
+    drawn: sequences(drawn),
     abandoned: sequences(events.of("declaration-abandoned").filter(here)),
+    withdrawn: sequences(events.of("draw-withdrawn").filter(({ payload }) => draws.has(payload.drawId))),
   };
 }
 
@@ -53,6 +59,8 @@ function orderDifference({ name, stored, draw }: Declared, steps: Steps): Differ
     ["the seed was given", steps.seed, stored.seed !== null],
     // A draw that the list leaves out is named by the check that all is told.
     ["the cells were drawn", steps.drawn, draw !== null || steps.drawn.length > 0],
+    // What the list says of a withdrawal is compared by that check as well.
+    ["the draw was withdrawn", steps.withdrawn, steps.withdrawn.length > 0],
     ["it was abandoned", steps.abandoned, stored.abandoned !== null],
   ];
   let before: { what: string; sequence: number } | null = null;
@@ -76,29 +84,32 @@ function orderDifference({ name, stored, draw }: Declared, steps: Steps): Differ
   return null;
 }
 
-/** A declaration that began while one before it was open: somebody could then choose between two. */
+/** A declaration that began while one before it was open or live: somebody could then choose between two. */
 function overlap(told: readonly { one: Declared; steps: Steps }[]): Difference | null {
   const all = told.toSorted((a, b) => (a.steps.declared[0] ?? 0) - (b.steps.declared[0] ?? 0));
   for (const [place, { one, steps }] of all.entries()) {
     const [declared = 0] = steps.declared;
     for (const earlier of all.slice(0, place)) {
       if (earlier.one.stored.seasonId !== one.stored.seasonId) continue;
-      const end = earlier.steps.drawn[0] ?? earlier.steps.abandoned[0];
-      if (end !== undefined && end < declared) continue;
+      const { drawn, abandoned, withdrawn } = earlier.steps;
+      const isBefore = ([sequence]: readonly number[]): boolean => sequence !== undefined && sequence < declared;
+      if (isBefore(drawn.length === 0 ? abandoned : withdrawn)) continue;
+      const isLive = isBefore(drawn);
       return {
         where: `${one.name}, declared`,
-        found: `in event ${declared}, while ${earlier.one.name} was open`,
-        expected: "one open declaration at a time",
+        found: `in event ${declared}, while ${earlier.one.name} was ${isLive ? "live" : "open"}`,
+        expected: isLive ? "one live draw a season: the earlier withdrawn first" : "one open declaration at a time",
       };
     }
   }
   return null;
 }
 
-function story({ sealed, declared, seed, drawn, abandoned }: Steps): string {
+function story({ sealed, declared, seed, drawn, abandoned, withdrawn }: Steps): string {
   const parts = [`sealed in event ${sealed[0] ?? 0}`, `declared in ${declared[0] ?? 0}`];
   if (seed[0] !== undefined) parts.push(`seed in ${seed[0]}`);
   if (drawn[0] !== undefined) parts.push(`drawn in ${drawn[0]}`);
   if (abandoned[0] !== undefined) parts.push(`abandoned in ${abandoned[0]}`);
+  if (withdrawn[0] !== undefined) parts.push(`withdrawn in ${withdrawn[0]}`);
   return parts.join(", ");
 }

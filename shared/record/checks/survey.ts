@@ -12,7 +12,10 @@ import {
 
 const TITLE = "Names, target and people are those of the events";
 
-/** The survey's name, target, season, time zone and level, and everybody's name and roles, are as the events say. */
+/**
+ * The survey's name, time zone and level, its one target and one season, and everybody's name and roles, are as the
+ * events say. No event gives a season days or adds a target or season.
+ */
 export function checkSurvey(run: ReplayRun): Check[] {
   const broken = run.events.brokenAmong(["survey-created", "member-added"]);
   if (broken !== null) return [notChecked("survey", TITLE, `Not compared: ${broken} is not whole.`)];
@@ -23,7 +26,14 @@ export function checkSurvey(run: ReplayRun): Check[] {
   const difference = firstDifference([
     () => differInMembers("survey", survey, { name, timeZone, level, createdAt: created.at }),
     () => differInMembers(`target ${target.singular}`, survey.targets.find(({ id }) => id === target.id) ?? {}, target),
-    () => differInMembers(`season ${season.name}`, survey.seasons.find(({ id }) => id === season.id) ?? {}, season),
+    () =>
+      differInMembers(`season ${season.name}`, survey.seasons.find(({ id }) => id === season.id) ?? {}, {
+        ...season,
+        startsOn: null,
+        endsOn: null,
+      }),
+    () => differ("survey, its targets", survey.targets.map(({ singular }) => singular).join(", "), target.singular),
+    () => differ("survey, its seasons", survey.seasons.map((one) => one.name).join(", "), season.name),
     () => peopleDifference(run),
   ]);
   return [

@@ -9,16 +9,23 @@ import {
   verdict,
 } from "./check.ts";
 
-const TITLE = "Every declaration and draw is told";
+const TITLE = "Every area, frame, declaration and draw is told";
 
 /**
- * What the events tell of stands in the lists and the other way round: declarations, draws numbered without a gap,
- * what was withdrawn and abandoned, with reason, time and who.
+ * What the events tell of stands in the lists: areas, frames, declarations and draws, these numbered without a gap;
+ * what was withdrawn and abandoned, with reason, time and who; and each draw's use in its season, once.
  */
 export function checkTold(run: ReplayRun): Check[] {
-  const broken = run.events.brokenAmong(["draw-declared", "draw-made", "draw-withdrawn", "declaration-abandoned"]);
+  const broken = run.events.brokenAmong([
+    "area-imported",
+    "frame-sealed",
+    "draw-declared",
+    "draw-made",
+    "draw-withdrawn",
+    "declaration-abandoned",
+  ]);
   if (broken !== null) return [notChecked("told", TITLE, `Not compared: ${broken} is not whole.`)];
-  const { draws, declarations } = run.record;
+  const { areas, frames, draws, declarations } = run.record;
   const difference = firstDifference([
     () => missing(run),
     ...draws.map((draw, place) => () => differ(`draw ${draw.number}, its number`, draw.number, place + 1)),
@@ -29,6 +36,8 @@ export function checkTold(run: ReplayRun): Check[] {
   const withdrawn = draws.filter((draw) => draw.withdrawn !== null).length;
   const abandoned = declarations.filter((one) => one.abandoned !== null).length;
   const detail = [
+    counted(areas.length, "area"),
+    counted(frames.length, "frame"),
     counted(declarations.length, "declaration"),
     counted(draws.length, "draw"),
     `${withdrawn} withdrawn`,
@@ -37,24 +46,43 @@ export function checkTold(run: ReplayRun): Check[] {
   return [verdict("told", TITLE, difference, detail.join(", "))];
 }
 
-function missing(run: ReplayRun): Difference | null {
-  const draws = new Set(run.record.draws.map(({ id }) => id));
-  const declarations = new Set(run.record.declarations.map(({ id }) => id));
-  const made = run.events.of("draw-made").find(({ payload }) => !draws.has(payload.drawId));
-  if (made !== undefined) {
-    return {
-      where: "the list of draws",
-      found: "none",
-      expected: `draw ${made.payload.number} of event ${made.sequence}`,
-    };
-  }
-  const declared = run.events.of("draw-declared").find(({ payload }) => !declarations.has(payload.declarationId));
-  if (declared === undefined) return null;
-  return {
-    where: "the list of declarations",
-    found: "none",
-    expected: `the declaration of event ${declared.sequence}`,
-  };
+/** What an event tells of and its list leaves out. */
+function missing({ record, events }: ReplayRun): Difference | null {
+  return firstDifference([
+    () =>
+      leftOut("areas", record.areas, events.of("area-imported"), ({ areaId: id, number }) => ({
+        id,
+        name: `area ${number}`,
+      })),
+    () =>
+      leftOut("frames", record.frames, events.of("frame-sealed"), ({ frameId: id, number }) => ({
+        id,
+        name: `frame ${number}`,
+      })),
+    () =>
+      leftOut("draws", record.draws, events.of("draw-made"), ({ drawId: id, number }) => ({
+        id,
+        name: `draw ${number}`,
+      })),
+    () =>
+      leftOut("declarations", record.declarations, events.of("draw-declared"), ({ declarationId: id }) => ({
+        id,
+        name: "the declaration",
+      })),
+  ]);
+}
+
+function leftOut<P>(
+  name: string,
+  list: readonly { readonly id: string }[],
+  events: readonly { readonly sequence: number; readonly payload: P }[],
+  thingOf: (payload: P) => { readonly id: string; readonly name: string },
+): Difference | null {
+  const listed = new Set(list.map(({ id }) => id));
+  const event = events.find(({ payload }) => !listed.has(thingOf(payload).id));
+  if (event === undefined) return null;
+  const expected = `${thingOf(event.payload).name} of event ${event.sequence}`;
+  return { where: `the list of ${name}`, found: "none", expected };
 }
 
 type Ending = { readonly reason: string; readonly at: string; readonly member: string } | null;
@@ -67,9 +95,11 @@ function withdrawal(run: ReplayRun, draw: ReplayRun["record"]["draws"][number]):
 /** The season that took a draw when it was made, and let it go when it was withdrawn. */
 function useInSeason(run: ReplayRun, draw: ReplayRun["record"]["draws"][number]): Difference | null {
   const stored = run.record.declarations.find(({ id }) => id === draw.declarationId);
-  const taken = run.record.seasonDraws.find(({ drawId }) => drawId === draw.id);
+  const rows = run.record.seasonDraws.filter(({ drawId }) => drawId === draw.id);
+  const [taken] = rows;
   const where = `draw ${draw.number}`;
   return firstDifference([
+    () => differ(`${where}, times that a season took it`, rows.length, 1),
     () => differ(`${where}, season that uses it`, taken?.seasonId, stored?.seasonId),
     () => differ(`${where}, in use from`, taken?.takenAt, draw.drawnAt),
     () => differ(`${where}, in use until`, taken?.endedAt ?? null, draw.withdrawn?.at ?? null),
