@@ -10,7 +10,7 @@ type DrawSummary = Omit<DrawDetail, "declaration" | "entries">;
 
 const nameOf = (names: Names, memberId: string): string => names.get(memberId) ?? "somebody";
 
-export function presentDeclaration({ state, declared, names }: DeclarationView): Declaration {
+export function presentDeclaration({ state, declared, names, seedShown }: DeclarationView): Declaration {
   const { declaration, seed, abandoned, drawId } = state;
   return {
     id: declaration.id,
@@ -29,7 +29,7 @@ export function presentDeclaration({ state, declared, names }: DeclarationView):
     declaredAt: declaration.declaredAt,
     declaredBy: nameOf(names, declaration.declaredBy),
     state: drawId !== null ? "drawn" : abandoned !== null ? "abandoned" : "open",
-    seed: seed && { text: seed.text, at: seed.givenAt, by: nameOf(names, seed.givenBy) },
+    seed: seed && seedShown ? { text: seed.text, at: seed.givenAt, by: nameOf(names, seed.givenBy) } : null,
     abandoned: abandoned && {
       at: abandoned.abandonedAt,
       by: nameOf(names, abandoned.abandonedBy),

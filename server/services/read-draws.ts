@@ -27,6 +27,8 @@ export interface DeclarationView {
   readonly state: DeclarationState;
   readonly declared: Declaration;
   readonly names: ReadonlyMap<string, string>;
+  /** Whether the reader may see the seed: with the frame it tells every cell of the draw, also those of others. */
+  readonly seedShown: boolean;
 }
 
 export interface DrawSummaryView {
@@ -51,6 +53,9 @@ export interface DrawsView {
   readonly waypointsExported: boolean;
 }
 
+/** Who sees only their own cells does not get the seed: it and the frame would tell all the others. */
+export const seedShown = (ctx: Pick<Context, "reach">): boolean => ctx.reach === "all";
+
 /** The declaration as it was hashed. */
 export function declaredText(state: DeclarationState): Declaration {
   return declaration.parse(JSON.parse(state.declaration.text));
@@ -64,6 +69,7 @@ export function listDraws(ctx: Context): DrawsView {
       state,
       declared: declaredText(state),
       names,
+      seedShown: seedShown(ctx),
     })),
     draws: drawsOf(ctx.db, ctx.surveyId).map((state) => ({
       state,
@@ -77,7 +83,8 @@ export function listDraws(ctx: Context): DrawsView {
 
 export function readDeclaration(ctx: Context, declarationId: string): DeclarationView {
   const state = neededDeclaration(ctx.db, declarationId);
-  return { state, declared: declaredText(state), names: memberNames(ctx.db, ctx.surveyId) };
+  const names = memberNames(ctx.db, ctx.surveyId);
+  return { state, declared: declaredText(state), names, seedShown: seedShown(ctx) };
 }
 
 /** One draw with its entries as they stand now, and the counts of its cells. */
@@ -90,7 +97,7 @@ export function readDraw(ctx: Context, drawId: string): DrawView {
   return {
     state,
     names,
-    declaration: { state: declared, declared: declaredText(declared), names },
+    declaration: { state: declared, declared: declaredText(declared), names, seedShown: seedShown(ctx) },
     lists: drawInUse(ctx.db, drawId, seasonId),
     visits: new Map(visits.map((visit) => [visit.unit, visit])),
     counts: entriesInForce(ctx.db, seasonId, firstTarget(ctx.db, ctx.surveyId).id),

@@ -15,7 +15,7 @@ import { currentSeason, type SeasonRow, type TargetRow } from "../db/surveys.ts"
 import { visitsOn } from "../db/visits.ts";
 import type { StratumInUse } from "./draw-in-use.ts";
 import { bringsValue } from "./keep-entry.ts";
-import { declaredText, neededDeclaration, type DeclarationView } from "./read-draws.ts";
+import { declaredText, neededDeclaration, seedShown, type DeclarationView } from "./read-draws.ts";
 import { memberNames } from "../db/members.ts";
 import { seasonInUse } from "./read-visits.ts";
 
@@ -64,7 +64,7 @@ export function readEstimate(ctx: Context, reader: Reader = ctx.db): EstimateVie
     target,
     frame,
     draw: live,
-    declaration: { state, declared, names: memberNames(reader, ctx.surveyId) },
+    declaration: { state, declared, names: memberNames(reader, ctx.surveyId), seedShown: seedShown(ctx) },
     lists,
     standing,
     chosenAfterCounts: late ? ["limits", "level"] : [],

@@ -27,6 +27,7 @@ export const declaration = z.object({
   declaredAt: utc,
   declaredBy: z.string(),
   state: z.enum(["open", "drawn", "abandoned"]),
+  /** null until there is one, and for whoever sees only their own cells. */
   seed: z.nullable(z.object({ text: z.string(), at: utc, by: z.string() })),
   abandoned: z.nullable(z.object({ at: utc, by: z.string(), reason: z.string() })),
   drawId: z.nullable(id),

@@ -1,6 +1,6 @@
 import { createHash } from "node:crypto";
 import { describe, expect, test } from "vitest";
-import { declareDraw, makeDraw, readRecipe } from "#shared/api/draw.ts";
+import { declareDraw, listDraws, makeDraw, readDraw, readRecipe } from "#shared/api/draw.ts";
 import { listVisits } from "#shared/api/field.ts";
 import { allEvents } from "#server/db/events.ts";
 import { declaring, drawCells } from "../fixtures/sealed-frame.ts";
@@ -64,6 +64,21 @@ describe("drawing", () => {
 });
 
 describe("the seed and the second click", () => {
+  // Seed and frame together tell every drawn cell: whoever may see only their own cells would see all.
+  test("a counter is not told the seed; an auditor is", async () => {
+    const draw = await drawCells(survey.team, declaring(survey.frame.frameId), SEED);
+    const params = { ...survey.here(), drawId: draw.id };
+    const { counter, auditor } = survey.team;
+    const listed = await counter.call(listDraws, { params: survey.here() });
+    const read = await counter.call(readDraw, { params });
+    expect([listed.status, read.status]).toEqual([200, 200]);
+    expect(listed.json.declarations[0]).toMatchObject({ state: "drawn", seed: null });
+    expect(read.json.declaration).toMatchObject({ state: "drawn", seed: null });
+    expect(JSON.stringify([listed.json, read.json])).not.toContain(SEED);
+    expect((await auditor.call(readDraw, { params })).json.declaration.seed?.text).toBe(SEED);
+    expect((await auditor.call(listDraws, { params: survey.here() })).json.declarations[0]?.seed?.text).toBe(SEED);
+  });
+
   test("a seed made here has twenty digits; a seed sent with it is refused", async () => {
     const body = declaring(survey.frame.frameId, { seedSource: "made-here" });
     const { json } = await survey.team.planner.call(declareDraw, { params: survey.here(), body });
