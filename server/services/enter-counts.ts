@@ -22,6 +22,8 @@ export function enterCounts(ctx: Context, wanted: readonly NewCount[]): void {
     const own = ownCells(ctx, tx);
     for (const count of wanted) {
       const visit = visitHere(tx, ctx.surveyId, count.visitId);
+      // Asked first: what was kept stays kept, and is answered so, even where the cell went to somebody else since.
+      if (keptBefore(tx, firstEntry(ctx, count, null))) continue;
       if (!own.has(visit.id)) expectOwn(own, visit.id, `Cell ${cellName(tx, visit)}`);
       keepFirstCount(tx, ctx, count, null);
     }
@@ -34,8 +36,23 @@ export function enterCounts(ctx: Context, wanted: readonly NewCount[]): void {
  */
 export function keepFirstCount(tx: Tx, ctx: Context, count: NewCount, importId: string | null): void {
   const visit = visitHere(tx, ctx.surveyId, count.visitId);
+  const row = firstEntry(ctx, count, importId);
+  if (keptBefore(tx, row)) return;
+  checkSaid(tx, ctx.surveyId, count.targetId, count.said, visit);
+  const inForce = entryInForce(tx, visit.id, count.targetId);
+  if (inForce) {
+    throw new Problem(
+      "count-exists",
+      `Cell ${cellName(tx, visit)} has one: ${inWords(inForce)}, of ${inForce.madeAt}. Amend it, with a reason.`,
+    );
+  }
+  keepEntry(tx, ctx, visit, row);
+}
+
+/** A first count as the row that keeps it. */
+function firstEntry(ctx: Context, count: NewCount, importId: string | null): CountRow {
   const memberId = actingMember(ctx);
-  const row: CountRow = {
+  return {
     id: count.id,
     visitId: count.visitId,
     targetId: count.targetId,
@@ -51,14 +68,4 @@ export function keepFirstCount(tx: Tx, ctx: Context, count: NewCount, importId: 
     enteredAt: ctx.now().toISOString(),
     madeAt: count.madeAt,
   };
-  if (keptBefore(tx, row)) return;
-  checkSaid(tx, ctx.surveyId, count.targetId, count.said, visit);
-  const inForce = entryInForce(tx, visit.id, count.targetId);
-  if (inForce) {
-    throw new Problem(
-      "count-exists",
-      `Cell ${cellName(tx, visit)} has one: ${inWords(inForce)}, of ${inForce.madeAt}. Amend it, with a reason.`,
-    );
-  }
-  keepEntry(tx, ctx, visit, row);
 }

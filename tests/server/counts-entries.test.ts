@@ -132,4 +132,24 @@ describe("what can be entered, and by whom", () => {
       "not-allowed",
     );
   });
+
+  test("what was kept is answered as kept when it is sent again after the cell went to somebody else", async () => {
+    const { members } = (await survey.team.planner.call(listMembers, { params: survey.here() })).json;
+    const idOf = (role: "counter" | "lead") => members.find((member) => member.roles.includes(role))?.id ?? "";
+    const give = (memberId: string) =>
+      survey.team.lead.call(assignVisits, {
+        params: survey.here(),
+        body: { visitIds: [visit(0).id], memberId, day: "" },
+      });
+    await give(idOf("counter"));
+    const one = entry(0, { state: "counted", value: 1 });
+    await enter([one], survey.team.counter);
+    await give(idOf("lead"));
+    const before = survey.kinds().length;
+    const again = await enter([one], survey.team.counter);
+    expect(again.status).toBe(200);
+    expect(again.json.visits[0]?.count).toMatchObject({ value: 1, by: "Counter" });
+    expect(survey.kinds()).toHaveLength(before);
+    expect((await enter([{ ...one, id: randomUUID() }], survey.team.counter)).json.code).toBe("not-allowed");
+  });
 });
