@@ -14,6 +14,7 @@ import { routes } from "./routes/routes.ts";
 
 interface AppOptions {
   readonly sessionSecret: string;
+  /** Behind one proxy that speaks HTTPS. */
   readonly https: boolean;
   /** Folder of the built client; null serves the interface only. */
   readonly clientFolder: string | null;
@@ -25,6 +26,8 @@ interface AppOptions {
 export function createApp(platform: Platform, options: AppOptions): Express {
   const app = express();
   app.disable("x-powered-by");
+  // Behind exactly one proxy the address of a person is the one that the proxy saw; else a header can't be believed.
+  if (options.https) app.set("trust proxy", 1);
   app.use(
     helmet({
       // Quillet is often reached over plain HTTP on a local network: nothing may insist on HTTPS there.

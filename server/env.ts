@@ -20,7 +20,10 @@ const schema = z.object({
   QUILLET_OWNER_NAME: z.string().min(1).optional(),
   QUILLET_OWNER_PASSWORD: z.string().min(12).optional(),
   QUILLET_LOG: z.enum(["silent", "error", "warn", "info", "debug"]).optional(),
-  /** "1" behind a proxy that speaks HTTPS: cookies are then marked secure. */
+  /**
+   * "1" behind exactly one proxy that speaks HTTPS: cookies are then marked secure, and the address of whoever signs in is
+   * the last one of X-Forwarded-For. Not to be set where the server is reached without that proxy.
+   */
   QUILLET_HTTPS: z.enum(["0", "1"]).optional(),
 });
 

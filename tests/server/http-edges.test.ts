@@ -43,6 +43,30 @@ describe("what a server is sent by mistake", () => {
   });
 });
 
+describe("behind a proxy", () => {
+  const statuses = async (addresses: readonly string[]) => {
+    const options = { sessionSecret: "s".repeat(40), https: true, clientFolder: null, signInsPerMinute: 1 };
+    const other = createApp(server.platform, options).listen(0, "127.0.0.1");
+    await new Promise((resolve) => other.once("listening", resolve));
+    const url = `http://127.0.0.1:${(other.address() as AddressInfo).port}/api/session`;
+    const codes: number[] = [];
+    for (const address of addresses) {
+      const headers = { "content-type": "application/json", "x-forwarded-for": address };
+      const body = JSON.stringify({ email: "nobody@example.org", password: "not the password" });
+      codes.push((await fetch(url, { method: "POST", headers, body })).status);
+    }
+    other.closeAllConnections();
+    await new Promise((resolve) => other.close(resolve));
+    return codes;
+  };
+
+  // One attempt a minute. The proxy appends the address it saw: what stands before it is anybody's word.
+  test("sign-ins are limited for each person's address, as the one proxy saw it", async () => {
+    const addresses = ["198.51.100.1", "198.51.100.2", "203.0.113.99, 198.51.100.1"];
+    expect(await statuses(addresses)).toEqual([401, 401, 429]);
+  });
+});
+
 describe("days", () => {
   // 3 June, 20:00 in Anchorage (UTC − 8 in summer) is 4 June, 04:00 UTC; in Auckland (UTC + 12) 1 January begins at noon.
   test("are those of the people there", () => {
