@@ -10,7 +10,7 @@ interface Secrets {
 
 /** Session secret and signing key: from the environment, else from files beside the database, made at the first start. */
 export function readSecrets(env: Env): Secrets {
-  mkdirSync(env.dataFolder, { recursive: true });
+  mkdirSync(env.dataFolder, { recursive: true, mode: 0o700 }); // counts, passwords' hashes and keys: nobody else's
   return {
     sessionSecret: env.sessionSecret ?? kept(join(env.dataFolder, "session-secret")),
     signingKey: env.signingKey ?? kept(join(env.dataFolder, "signing-key")),

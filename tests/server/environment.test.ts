@@ -1,5 +1,9 @@
+import { mkdtempSync, rmSync, statSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
 import { describe, expect, test } from "vitest";
 import { readEnv } from "#server/env.ts";
+import { readSecrets } from "#server/secrets.ts";
 
 const ROOT = "/somewhere/quillet";
 
@@ -83,3 +87,18 @@ test("an owner is given by address and password together, in lower case, named b
 test("an unknown variable is nobody's business", () => {
   expect(readEnv({ HOME: "/root", QUILLET_SOMETHING: "x" }, ROOT).demo).toBe(true);
 });
+
+test.skipIf(process.platform === "win32")(
+  "the data folder and its secrets are for this account of the computer only",
+  () => {
+    const parent = mkdtempSync(join(tmpdir(), "quillet-env-"));
+    try {
+      const env = readEnv({ QUILLET_DATA: join(parent, "season", "data") }, ROOT);
+      readSecrets(env);
+      expect(statSync(env.dataFolder).mode & 0o777).toBe(0o700);
+      expect(statSync(join(env.dataFolder, "signing-key")).mode & 0o777).toBe(0o600);
+    } finally {
+      rmSync(parent, { recursive: true, force: true });
+    }
+  },
+);
