@@ -52,7 +52,8 @@ async function main(): Promise<void> {
     say(`Quillet is at http://${env.host}:${port}/`);
     if (demo) say(demoTable(demo, `http://${env.host}:${port}/`));
     if (!env.demo && !anyAccount(db)) {
-      say("There is no account yet. Make the first owner: npm run -s quillet -- create-owner --email YOU@EXAMPLE.ORG");
+      const command = "npm run -s quillet -- create-owner --email YOU@EXAMPLE.ORG";
+      say(`There is no account yet. Make the first owner: QUILLET_DATA=${env.dataFolder} ${command}`);
     }
   });
   const stop = () => {

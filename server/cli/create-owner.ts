@@ -17,13 +17,18 @@ const KNOWN = {
 
 /**
  * `quillet create-owner`: an account of an owner in the data folder of the environment. Without --password it asks at a
- * terminal; where there is none, or the answer is empty, it makes one and prints it.
+ * terminal; where there is none, or the answer is empty, it makes one and prints it. The demo has accounts of its own: there it
+ * is refused.
  */
 export async function createOwner(args: readonly string[]): Promise<number> {
   const { values } = options(args, KNOWN, 0);
   const email = needed(values.email, "--email");
   if (!z.email().safeParse(email).success) throw new UsageError(`--email is not an e-mail address: "${email}".`);
   const env = readEnv(process.env, projectRoot());
+  if (env.demo) {
+    sayError("No owner was made: this would be the demo. Set QUILLET_DATA to the folder of your data, then try again.");
+    return 1;
+  }
   const name = values.name ?? email.replace(/@.*/, "");
   const typed = values.password ?? (await askPassword());
   const password = typed === "" ? madePassword() : typed;

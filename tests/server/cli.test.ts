@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { readFileSync } from "node:fs";
+import { existsSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { afterAll, afterEach, describe, expect, test, vi } from "vitest";
@@ -133,6 +133,18 @@ describe("create-owner", () => {
     expect(String(made["password"]).length).toBeGreaterThanOrEqual(12);
     expect(refusal(await quillet(args), 1)).toContain("account-exists");
   });
+
+  test.each([{}, { QUILLET_DEMO: "1", QUILLET_DATA: join(folder, "demo") }])(
+    "in the demo (%o) no owner is made, and the line says what to set",
+    async (variables) => {
+      vi.stubEnv("QUILLET_DATA", "");
+      vi.stubEnv("QUILLET_DEMO", "");
+      for (const [name, value] of Object.entries(variables)) vi.stubEnv(name, value);
+      const args = ["create-owner", "--email", "ola@example.org"];
+      expect(refusal(await quillet(args), 1)).toContain("Set QUILLET_DATA");
+      expect(existsSync(join(folder, "demo"))).toBe(false);
+    },
+  );
 
   test("a short password is refused", async () => {
     const args = ["create-owner", "--email", "b@example.org", "--password", "short"];
