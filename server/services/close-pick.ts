@@ -130,7 +130,12 @@ function keepState(tx: Tx, ctx: Context, visit: VisitRow, wanted: Wanted, at: st
     enteredAt: at,
     madeAt: at,
   };
-  if (keptBefore(tx, row)) throw new Error(`entry ${row.id} is kept and not in force`);
+  if (keptBefore(tx, row)) {
+    throw new Problem(
+      "count-exists",
+      `What was said of cell ${cellName(tx, visit)} has been amended since. Reload the page, then close it again.`,
+    );
+  }
   keepEntry(tx, ctx, visit, row);
 }
 

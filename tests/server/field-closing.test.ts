@@ -7,6 +7,7 @@ import { declaring, drawCells } from "../fixtures/sealed-frame.ts";
 import { surveyEachTest, visitAt } from "../fixtures/each-survey.ts";
 
 const survey = surveyEachTest();
+const MADE = "2031-05-02T07:00:00Z";
 
 const close = (visitId: string, state = "refused", id: string = randomUUID(), reason = "the owner said no") =>
   survey.team.lead.call(closePick, {
@@ -182,5 +183,58 @@ describe("a closed cell and its count", () => {
     expect(await survey.visits()).toMatchObject({ picks: 11, reservesLeft: 4 });
     expect((await amend({ state: "refused" })).json).toMatchObject({ state: "closed", count: { state: "refused" } });
     expect(await survey.visits()).toMatchObject({ picks: 10, reservesLeft: 4 });
+  });
+
+  // The id that closed it, sent once more: after an amendment to a number there is a count; after one to a closing state
+  // the cell is closed by that act, and the first closing is answered as it was.
+  test("closed again under the same id after an amendment it is refused by name or answered as before", async () => {
+    await drawCells(survey.team, declaring(survey.frame.frameId, { design: { kind: "srs-wor", n: 10 } }));
+    const { visits: all, targetId } = await survey.visits();
+    const visit = visitAt(all, 3);
+    const id = randomUUID();
+    const first = await close(visit.id, "lost", id);
+    let replaces: string = id;
+    const amend = async (said: { state: "counted"; value: number } | { state: "refused" | "lost" }) => {
+      const body = {
+        id: randomUUID(),
+        targetId,
+        replaces,
+        said,
+        note: "",
+        reason: "the sheet was found",
+        madeAt: MADE,
+      };
+      const reply = await survey.team.lead.call(amendCount, { params: { ...survey.here(), visitId: visit.id }, body });
+      expect(reply.status).toBe(200);
+      replaces = body.id;
+    };
+    await amend({ state: "refused" });
+    expect((await close(visit.id, "lost", id)).json).toEqual(first.json);
+    await amend({ state: "counted", value: 7 });
+    expect((await close(visit.id, "lost", id)).json.code).toBe("count-exists");
+    await amend({ state: "lost" });
+    expect((await close(visit.id, "lost", id)).json).toEqual(first.json);
+    expect((await close(visit.id, "refused", id)).json.code).toBe("pick-not-in-use");
+  });
+
+  test("a state that was kept and amended since does not close the cell under its old id", async () => {
+    await drawCells(survey.team, declaring(survey.frame.frameId, { design: { kind: "srs-wor", n: 10 } }));
+    const { visits: all, targetId } = await survey.visits();
+    const visit = visitAt(all, 3);
+    const id = randomUUID();
+    const said = { state: "unsafe" as const };
+    const entry = { id, visitId: visit.id, targetId, said, note: "", madeAt: MADE };
+    await survey.team.lead.call(enterCounts, { params: survey.here(), body: { entries: [entry] } });
+    const amendment = {
+      ...{ id: randomUUID(), targetId, replaces: id, note: "" },
+      reason: "said wrongly",
+      madeAt: MADE,
+    };
+    await survey.team.lead.call(amendCount, {
+      params: { ...survey.here(), visitId: visit.id },
+      body: { ...amendment, said: { state: "lost" } },
+    });
+    expect((await close(visit.id, "unsafe", id)).json.code).toBe("count-invalid");
+    expect((await survey.visits()).reservesLeft).toBe(5);
   });
 });
