@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, isNull } from "drizzle-orm";
+import { and, asc, desc, eq, isNull, notInArray } from "drizzle-orm";
 import type { Reader, Tx } from "./open.ts";
 import { members, memberships } from "./schema/accounts.ts";
 import { seasons, surveys, targets } from "./schema/surveys.ts";
@@ -27,6 +27,21 @@ export function surveysOf(reader: Reader, accountId: string): SurveyRow[] {
     .orderBy(desc(surveys.createdAt))
     .all()
     .map((row) => row.survey);
+}
+
+/** The surveys in which this account holds no role, newest first. */
+export function surveysWithout(reader: Reader, accountId: string): SurveyRow[] {
+  const held = reader
+    .select({ surveyId: members.surveyId })
+    .from(members)
+    .innerJoin(memberships, eq(memberships.memberId, members.id))
+    .where(and(eq(members.accountId, accountId), isNull(memberships.removedAt)));
+  return reader
+    .select()
+    .from(surveys)
+    .where(and(notInArray(surveys.id, held), isNull(surveys.archivedAt)))
+    .orderBy(desc(surveys.createdAt))
+    .all();
 }
 
 export function seasonsOf(reader: Reader, surveyId: string): SeasonRow[] {

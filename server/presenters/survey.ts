@@ -1,5 +1,5 @@
 import type { Role } from "#shared/access/table.ts";
-import type { Member, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
+import type { Member, OtherSurvey, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
 import type { MemberRow } from "../db/members.ts";
 import type { SeasonRow, SurveyRow, TargetRow } from "../db/surveys.ts";
 
@@ -43,6 +43,11 @@ export function presentSurvey(parts: SurveyParts): Survey {
     })),
     memberId: parts.memberId,
   };
+}
+
+/** What an owner without a role is told of a survey: enough to find it. */
+export function presentOtherSurvey({ id, name, createdAt }: SurveyRow): OtherSurvey {
+  return { id, name, createdAt };
 }
 
 /** One entry a person, with the roles held now. */

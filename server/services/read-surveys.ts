@@ -10,6 +10,7 @@ import {
   type SeasonRow,
   type SurveyRow,
   surveysOf,
+  surveysWithout,
   type TargetRow,
   targetsOf,
 } from "../db/surveys.ts";
@@ -35,6 +36,11 @@ export function readSurvey(reader: Reader, surveyId: string, accountId: string):
 /** The surveys in which this account holds a role, newest first. */
 export function listSurveys(reader: Reader, accountId: string): SurveyView[] {
   return surveysOf(reader, accountId).map((survey) => viewOf(reader, survey, accountId));
+}
+
+/** The surveys in which this account holds no role: an owner finds the people of each by it. Newest first. */
+export function listOtherSurveys(reader: Reader, accountId: string): SurveyRow[] {
+  return surveysWithout(reader, accountId);
 }
 
 function viewOf(reader: Reader, survey: SurveyRow, accountId: string): SurveyView {

@@ -67,6 +67,21 @@ export const listSurveys = contract({
   answer: json(z.object({ surveys: z.array(surveySummary) })),
 });
 
+export const otherSurvey = z.object({ id, name: z.string(), createdAt: utc });
+export type OtherSurvey = z.infer<typeof otherSurvey>;
+
+export const listOtherSurveys = contract({
+  name: "listOtherSurveys",
+  method: "GET",
+  path: "/api/installation/surveys",
+  guard: "owner",
+  summary: "The surveys of this installation in which I hold no role",
+  params: none,
+  query: none,
+  body: none,
+  answer: json(z.object({ surveys: z.array(otherSurvey) })),
+});
+
 export const createSurvey = contract({
   name: "createSurvey",
   method: "POST",

@@ -1,6 +1,13 @@
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { readSession, signIn, signOut } from "#shared/api/accounts.ts";
-import { addMember, listMembers, listSurveys, readSurvey } from "#shared/api/surveys.ts";
+import {
+  addMember,
+  createSurvey,
+  listMembers,
+  listOtherSurveys,
+  listSurveys,
+  readSurvey,
+} from "#shared/api/surveys.ts";
 import { startTeam, startTestServer, type Team, type TestServer } from "../fixtures/server.ts";
 
 let server: TestServer;
@@ -9,7 +16,7 @@ let team: Team;
 beforeAll(async () => {
   server = await startTestServer();
   team = await startTeam(server);
-});
+}, 60_000);
 
 afterAll(() => server.stop());
 
@@ -69,4 +76,32 @@ describe("people of a survey", () => {
     const good = { ...body, newAccount: { name: "New", password: "twelve or more" } };
     expect((await team.planner.call(addMember, { params, body: good })).status).toBe(200);
   });
+});
+
+test("an owner is told of the surveys in which they hold no role, by name only; a role takes one off that list", async () => {
+  const owner = await server.person("finder@example.org", { isOwner: true });
+  const others = async () => (await owner.call(listOtherSurveys)).json.surveys;
+  const created = await team.planner.call(createSurvey, {
+    body: {
+      ...{
+        name: "Dunmarrow Links",
+        targetSingular: "nest",
+        targetPlural: "nests",
+        countingRule: "",
+        wholeNumbers: true,
+      },
+      ...{ seasonName: "2031", timeZone: "Europe/London", safetyNotes: "" },
+    },
+  });
+  const { id, name, createdAt } = created.json;
+  expect((await others()).map((survey) => survey.name).toSorted()).toEqual(["Dunmarrow Links", "Hallow Moss"]);
+  expect(await others()).toContainEqual({ id, name, createdAt });
+  // Adding somebody else gives the owner an id in the record and no role: the survey stays on the list.
+  const add = (email: string) =>
+    owner.call(addMember, { params: { surveyId: id }, body: { email, role: "auditor" as const } });
+  expect((await add("stranger@example.org")).status).toBe(200);
+  expect(await others()).toHaveLength(2);
+  expect((await add("finder@example.org")).status).toBe(200);
+  expect((await others()).map((survey) => survey.name)).toEqual(["Hallow Moss"]);
+  expect((await team.planner.call(listOtherSurveys)).json.code).toBe("not-allowed");
 });

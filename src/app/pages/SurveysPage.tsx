@@ -4,12 +4,14 @@ import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { FirstDay } from "../../features/surveys/FirstDay.tsx";
+import { OtherSurveys } from "../../features/surveys/OtherSurveys.tsx";
 import { useSurveys } from "../../features/surveys/queries.ts";
 import { SurveyList, type SurveyRow } from "../../features/surveys/SurveyList.tsx";
 import { WaitingList } from "../../features/surveys/WaitingList.tsx";
 import { paths } from "../paths.ts";
 import { PlainShell } from "../PlainShell.tsx";
 import { STAGE_NAMES, stageThatMatters, stations } from "../stages.ts";
+import { useAccount } from "../use-account.ts";
 import { waitingIn, waitingTitle } from "../waiting.ts";
 
 function rowOf(survey: SurveySummary): SurveyRow {
@@ -55,6 +57,7 @@ function LoadedSurveys({ surveys }: { readonly surveys: readonly SurveySummary[]
 
 export function SurveysPage() {
   const surveys = useSurveys();
+  const account = useAccount();
   return (
     <PlainShell here="Surveys">
       <div className="q-surveys">
@@ -63,6 +66,7 @@ export function SurveysPage() {
           <Refusal error={surveys.error} next={<Button onClick={() => void surveys.refetch()}>Try again</Button>} />
         )}
         {surveys.isSuccess && <LoadedSurveys surveys={surveys.data} />}
+        {surveys.isSuccess && account.isOwner && <OtherSurveys peopleOf={paths.people} />}
       </div>
     </PlainShell>
   );

@@ -1,6 +1,13 @@
 import { queryOptions, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type * as z from "zod/mini";
-import { addMember, createSurvey, listMembers, listSurveys, readSurvey } from "#shared/api/surveys.ts";
+import {
+  addMember,
+  createSurvey,
+  listMembers,
+  listOtherSurveys,
+  listSurveys,
+  readSurvey,
+} from "#shared/api/surveys.ts";
 import { call } from "../../api/call.ts";
 import { surveyKey, surveysKey } from "../../api/keys.ts";
 
@@ -15,6 +22,15 @@ const surveysQuery = queryOptions({
 
 export function useSurveys() {
   return useQuery(surveysQuery);
+}
+
+/** For an owner of the installation only: to others it is refused. */
+export function useOtherSurveys() {
+  return useQuery({
+    queryKey: [...surveysKey, "others"],
+    queryFn: ({ signal }) => call(listOtherSurveys, { signal }),
+    select: ({ surveys }) => surveys,
+  });
 }
 
 export function useSurvey(surveyId: string) {
@@ -52,6 +68,7 @@ export function useAddMember(surveyId: string) {
       queries.setQueryData(surveyKey(surveyId, "people"), answer);
       // Not waited for: the form empties now, not while the next person is being typed.
       void queries.invalidateQueries({ queryKey: surveyKey(surveyId) });
+      void queries.invalidateQueries({ queryKey: surveysKey });
     },
   });
 }

@@ -3,7 +3,14 @@ import userEvent from "@testing-library/user-event";
 import { afterEach, expect, test, vi } from "vitest";
 import { readSession } from "#shared/api/accounts.ts";
 import { listAreas } from "#shared/api/area.ts";
-import { addMember, createSurvey, listMembers, listSurveys, readSurvey } from "#shared/api/surveys.ts";
+import {
+  addMember,
+  createSurvey,
+  listMembers,
+  listOtherSurveys,
+  listSurveys,
+  readSurvey,
+} from "#shared/api/surveys.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Role } from "#shared/access/table.ts";
 import { FakeApi } from "../app/fake-api.ts";
@@ -176,4 +183,29 @@ test("an owner of the installation reaches the people of a survey without a role
   renderApp("/surveys/s1/people");
   await screen.findByText("1 person in this survey.");
   screen.getByRole("button", { name: "Add to the survey" });
+});
+
+test("an owner finds the surveys in which they hold no role, each with the way to its people", async () => {
+  const account = { id: "a1", name: "Ines Marrow", email: "ines@example.org", isOwner: true };
+  signedIn()
+    .on(readSession, () => session({ account }))
+    .on(listSurveys, () => ({ surveys: [] }))
+    .on(listOtherSurveys, () => ({
+      surveys: [{ id: "s7", name: "Dunmarrow Links", createdAt: "2031-05-02T08:00:00Z" }],
+    }))
+    .install();
+  renderApp("/surveys");
+  await screen.findByRole("heading", { name: "Other surveys of this installation" });
+  expect(screen.getByRole("link", { name: "People of Dunmarrow Links" }).getAttribute("href")).toBe(
+    "/surveys/s7/people",
+  );
+});
+
+test("who is no owner is not asked about other surveys", async () => {
+  const api = signedIn()
+    .on(listSurveys, () => ({ surveys: [survey()] }))
+    .install();
+  renderApp("/surveys");
+  await screen.findByRole("table", { name: "Your surveys" });
+  expect(api.named("listOtherSurveys")).toEqual([]);
 });
