@@ -2,7 +2,7 @@ import { execFileSync } from "node:child_process";
 import { mkdtempSync, readFileSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import type { Browser, Download, Page } from "playwright-core";
+import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, inject, test } from "vitest";
 import { launch, person } from "./browser.ts";
 
@@ -58,7 +58,7 @@ async function stage(page: Page, name: string): Promise<void> {
 async function saved(page: Page, press: () => Promise<void>, name: string): Promise<string> {
   const [download] = await Promise.all([page.waitForEvent("download"), press()]);
   const path = join(folder, name);
-  await (download as Download).saveAs(path);
+  await download.saveAs(path);
   return path;
 }
 

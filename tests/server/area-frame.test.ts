@@ -47,7 +47,7 @@ const specFor = (areaId: string, side = 50): FrameSpec => ({
     originNorthMm: 0,
     rotationMicroDegrees: 0,
   },
-  membership: EDGE_PRESETS.clip.membership as FrameSpec["membership"],
+  membership: EDGE_PRESETS.clip.membership,
   countIn: "inside",
   leftOut: [],
 });

@@ -27,7 +27,7 @@ const signOutLast = (contract: Contract) => contract.name !== "signOut";
 
 async function codeOf(client: Client, contract: Contract, surveyId: string): Promise<string> {
   const params = { surveyId, name: "quillet-frame-1", epsg: "32632" };
-  const { status, json } = await client.call(contract, { params: params as never });
+  const { status, json } = await client.call(contract, { params: params });
   return status < 400 ? "passed" : (json.code ?? `status ${status}`);
 }
 

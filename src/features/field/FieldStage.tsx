@@ -3,7 +3,6 @@ import type { Visit } from "#shared/api/field.ts";
 import { useVisits } from "../../api/visits.ts";
 import { isSettled } from "../../api/visit-words.ts";
 import { Banner } from "../../components/ui/Banner.tsx";
-import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { EmptyState } from "../../components/ui/EmptyState.tsx";
 import { formatCount, formatNumber } from "../../components/ui/format.ts";
@@ -12,14 +11,11 @@ import { MarginNote } from "../../components/ui/MarginNote.tsx";
 import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
-import { Section } from "../../components/ui/Section.tsx";
-import { AssignBar } from "./AssignBar.tsx";
+import { CellsToVisit } from "./CellsToVisit.tsx";
 import { ClosePickDialog } from "./ClosePickDialog.tsx";
 import { FieldMap } from "./FieldMap.tsx";
-import { useFieldMembers } from "./queries.ts";
 import { Safety } from "./Safety.tsx";
-import { shownVisits, type VisitFilter, VisitFilters } from "./VisitFilters.tsx";
-import { VisitTable, waitsForLead } from "./VisitTable.tsx";
+import { waitsForLead } from "./VisitTable.tsx";
 import { WaypointPanel } from "./WaypointPanel.tsx";
 
 export interface FieldStageProps {
@@ -68,23 +64,10 @@ function NothingToVisit({ ownOnly, drawTo }: FieldStageProps) {
 }
 
 function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) {
-  const [filter, setFilter] = useState<VisitFilter>({ who: "", state: "" });
-  const [selected, setSelected] = useState<ReadonlySet<string>>(new Set());
   const [chosen, setChosen] = useState<string | null>(null);
   const [closing, setClosing] = useState<string | null>(null);
-  const members = useFieldMembers(props.surveyId, props.mayAssign);
-  const shown = shownVisits(data.visits, filter);
   const toClose = data.visits.find(({ id }) => id === closing);
-  const chosenVisit = data.visits.find(({ id }) => id === chosen);
   const reported = data.visits.filter(waitsForLead);
-  const select = (visitId: string, on: boolean) => {
-    setSelected((before) => {
-      const after = new Set(before);
-      if (on) after.add(visitId);
-      else after.delete(visitId);
-      return after;
-    });
-  };
   return (
     <ReadingPage
       title={titleOf(data.visits, props.ownOnly)}
@@ -94,21 +77,7 @@ function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) 
           action={<ButtonLink to={props.countsTo}>Enter counts</ButtonLink>}
         />
       }
-      margin={
-        <>
-          {props.mayExport && (
-            <MarginNote title="Waypoints">
-              <WaypointPanel
-                surveyId={props.surveyId}
-                surveyName={props.surveyName}
-                visits={data.visits}
-                people={props.ownOnly ? [] : peopleOf(data.visits)}
-              />
-            </MarginNote>
-          )}
-          <Safety notes={props.safetyNotes} />
-        </>
-      }
+      margin={<FieldMargin {...props} visits={data.visits} />}
     >
       {props.mayClose && reported.length > 0 && (
         <Banner
@@ -125,48 +94,14 @@ function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) 
         chosen={chosen}
         onChoose={setChosen}
       />
-      <Section
-        title="Cells to visit"
-        aside={<VisitFilters visits={data.visits} filter={filter} onFilter={setFilter} />}
-      >
-        {props.mayAssign && (
-          <AssignBar
-            surveyId={props.surveyId}
-            members={members.data ?? []}
-            selected={selected}
-            onDone={() => setSelected(new Set())}
-          />
-        )}
-        {props.mayAssign && (
-          <p className="my-2 flex flex-wrap gap-4">
-            <Button variant="link" size="small" onClick={() => setSelected(new Set(shown.map(({ id }) => id)))}>
-              {`Select all ${formatNumber(shown.length)} shown`}
-            </Button>
-            {selected.size > 0 && (
-              <Button variant="link" size="small" onClick={() => setSelected(new Set())}>
-                Select none
-              </Button>
-            )}
-          </p>
-        )}
-        {props.mayClose && chosenVisit !== undefined && (
-          <p className="my-2">
-            <Button
-              disabled={chosenVisit.state === "closed" || chosenVisit.count.state === "counted"}
-              onClick={() => setClosing(chosenVisit.id)}
-            >
-              {`Close ${chosenVisit.label}…`}
-            </Button>
-          </p>
-        )}
-        <VisitTable
-          visits={shown}
-          selected={props.mayAssign ? selected : null}
-          onSelect={select}
-          chosen={chosen}
-          onChoose={(id) => setChosen((before) => (before === id ? null : id))}
-        />
-      </Section>
+      <CellsToVisit
+        surveyId={props.surveyId}
+        visits={data.visits}
+        mayAssign={props.mayAssign}
+        chosen={chosen}
+        onChoose={setChosen}
+        onClosing={props.mayClose ? setClosing : undefined}
+      />
       {toClose !== undefined && (
         <ClosePickDialog
           surveyId={props.surveyId}
@@ -176,6 +111,24 @@ function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) 
         />
       )}
     </ReadingPage>
+  );
+}
+
+function FieldMargin({ visits, ...props }: FieldStageProps & { readonly visits: readonly Visit[] }) {
+  return (
+    <>
+      {props.mayExport && (
+        <MarginNote title="Waypoints">
+          <WaypointPanel
+            surveyId={props.surveyId}
+            surveyName={props.surveyName}
+            visits={visits}
+            people={props.ownOnly ? [] : peopleOf(visits)}
+          />
+        </MarginNote>
+      )}
+      <Safety notes={props.safetyNotes} />
+    </>
   );
 }
 

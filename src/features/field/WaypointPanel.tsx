@@ -19,6 +19,12 @@ interface WaypointPanelProps {
   readonly people: readonly { readonly id: string; readonly name: string }[];
 }
 
+interface Settings {
+  readonly length: number;
+  readonly scheme: NameScheme;
+  readonly prefix: string;
+}
+
 const SCHEME_WORDS: Readonly<Record<NameScheme, string>> = {
   label: "Cell label",
   unit: "Unit number",
@@ -27,9 +33,8 @@ const SCHEME_WORDS: Readonly<Record<NameScheme, string>> = {
 
 /** Names as the GPS unit will show them, checked for clashes before anything is written; one waypoint a cell. */
 export function WaypointPanel({ surveyId, surveyName, visits, people }: WaypointPanelProps) {
-  const [length, setLength] = useState<number>(10);
-  const [scheme, setScheme] = useState<NameScheme>("label");
-  const [prefix, setPrefix] = useState("");
+  const [settings, setSettings] = useState<Settings>({ length: 10, scheme: "label", prefix: "" });
+  const { length, scheme, prefix } = settings;
   const [memberId, setMemberId] = useState("");
   const exporting = useExportWaypoints(surveyId);
   const going = visits.filter(
@@ -68,29 +73,7 @@ export function WaypointPanel({ surveyId, surveyName, visits, people }: Waypoint
           />
         </Field>
       )}
-      <SegmentedControl
-        legend="Longest name that the unit takes"
-        value={String(length)}
-        onChange={(value) => setLength(Number(value))}
-        options={NAME_LENGTHS.map((value) => ({ value: String(value), label: String(value) }))}
-        help="Characters. The oldest units take 6."
-      />
-      <div className="grid gap-3 md:grid-cols-2">
-        <Field label="Named by">
-          <Select
-            value={scheme}
-            onChange={(event) => setScheme(event.target.value as NameScheme)}
-            options={NAME_SCHEMES.map((one) => ({ value: one, label: SCHEME_WORDS[one] }))}
-          />
-        </Field>
-        <Field
-          label="Prefix"
-          aside="may stay empty"
-          error={prefixFits ? undefined : "Use at most 8 letters and digits."}
-        >
-          <TextInput mono value={prefix} onChange={(event) => setPrefix(event.target.value)} />
-        </Field>
-      </div>
+      <NameSettings settings={settings} onSettings={setSettings} prefixFits={prefixFits} />
       <p>
         {going.length === 0 ? "There is no cell to go to." : `${formatCount(going.length, "waypoint")}, one a cell: `}
         <span className="q-mono">{named.names.slice(0, 4).join(" ")}</span>
@@ -126,5 +109,46 @@ export function WaypointPanel({ surveyId, surveyName, visits, people }: Waypoint
         corners, in degrees and in the frame’s metres.
       </p>
     </div>
+  );
+}
+
+interface NameSettingsProps {
+  readonly settings: Settings;
+  readonly onSettings: (settings: Settings) => void;
+  readonly prefixFits: boolean;
+}
+
+/** What a waypoint is called, within what the GPS unit takes. */
+function NameSettings({ settings, onSettings, prefixFits }: NameSettingsProps) {
+  return (
+    <>
+      <SegmentedControl
+        legend="Longest name that the unit takes"
+        value={String(settings.length)}
+        onChange={(value) => onSettings({ ...settings, length: Number(value) })}
+        options={NAME_LENGTHS.map((value) => ({ value: String(value), label: String(value) }))}
+        help="Characters. The oldest units take 6."
+      />
+      <div className="grid gap-3 md:grid-cols-2">
+        <Field label="Named by">
+          <Select
+            value={settings.scheme}
+            onChange={(event) => onSettings({ ...settings, scheme: event.target.value as NameScheme })}
+            options={NAME_SCHEMES.map((one) => ({ value: one, label: SCHEME_WORDS[one] }))}
+          />
+        </Field>
+        <Field
+          label="Prefix"
+          aside="may stay empty"
+          error={prefixFits ? undefined : "Use at most 8 letters and digits."}
+        >
+          <TextInput
+            mono
+            value={settings.prefix}
+            onChange={(event) => onSettings({ ...settings, prefix: event.target.value })}
+          />
+        </Field>
+      </div>
+    </>
   );
 }
