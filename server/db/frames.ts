@@ -5,7 +5,7 @@ import { frameVersions } from "./schema/frame.ts";
 
 export type FrameRow = typeof frameVersions.$inferSelect;
 
-const { cells: _cells, statement: _statement, ...headColumns } = getTableColumns(frameVersions);
+const { cells, statement, ...headColumns } = getTableColumns(frameVersions);
 /** A frame version without its packed cells and its statement, which may be large. */
 export type FrameHead = Omit<FrameRow, "cells" | "statement">;
 

@@ -169,6 +169,6 @@ function uploaded(req: Request): UploadedFile {
 
 function run(middleware: RequestHandler, req: Request, res: Response): Promise<void> {
   return new Promise((resolve, reject) => {
-    void middleware(req, res, (error?: unknown) => (error === undefined ? resolve() : reject(error as Error)));
+    void middleware(req, res, (error?: unknown) => (error === undefined ? resolve() : reject(error)));
   });
 }

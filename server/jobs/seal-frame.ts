@@ -27,7 +27,7 @@ export function sealFrameTask(task: JobTasks["seal-frame"]): JobResults["seal-fr
     leftOut,
     salt,
   });
-  const { shareSumBillionths: _sum, ...summary } = summarise(measured, membership, countIn, leftOut);
+  const { shareSumBillionths, ...summary } = summarise(measured, membership, countIn, leftOut);
   return {
     statement: statementText(statement),
     frameSha256: frameSha256(statement),

@@ -6,7 +6,7 @@ export const SHORTEST_PASSWORD = 12;
 
 /** argon2id with the package's defaults (19 MiB, 2 passes). Throws "password-too-short". */
 export async function hashPassword(password: string): Promise<string> {
-  if ([...password].length < SHORTEST_PASSWORD) {
+  if (Array.from(password).length < SHORTEST_PASSWORD) {
     throw new Problem("password-too-short", `Use at least ${SHORTEST_PASSWORD} characters; a sentence is fine.`);
   }
   return hash(password);
