@@ -169,6 +169,9 @@ function uploaded(req: Request): UploadedFile {
 
 function run(middleware: RequestHandler, req: Request, res: Response): Promise<void> {
   return new Promise((resolve, reject) => {
-    void middleware(req, res, (error?: unknown) => (error === undefined ? resolve() : reject(error)));
+    void middleware(req, res, (error?: unknown) => {
+      if (error === undefined) resolve();
+      else reject(error instanceof Error ? error : new Error(`a middleware failed: ${JSON.stringify(error)}`));
+    });
   });
 }
