@@ -1,5 +1,5 @@
 import { type CsvValue, writeCsv } from "#shared/exchange/csv.ts";
-import type { EstimateResult, Figure, Limits, Quantity } from "#shared/estimate/result.ts";
+import type { Figure, Limits, Quantity } from "#shared/estimate/result.ts";
 import type { Context } from "../context.ts";
 import { findSurvey } from "../db/surveys.ts";
 import { entryStates } from "./draw-in-use.ts";
@@ -16,7 +16,7 @@ export function exportEstimate(ctx: Context, table: "picks" | "figures"): Estima
   const view = readEstimate(ctx);
   const survey = findSurvey(ctx.db, ctx.surveyId)?.name ?? "survey";
   const name = `${fileNamePart(`${survey} ${view.season.name}`)}-estimate-${table}.csv`;
-  return { name, text: table === "picks" ? picksTable(view) : figuresTable(view.result) };
+  return { name, text: table === "picks" ? picksTable(view) : figuresTable(view) };
 }
 
 const PICK_COLUMNS = [
@@ -31,13 +31,16 @@ const PICK_COLUMNS = [
   "count",
   "counted_at",
   "note",
+  "record_event",
+  "record_sha256",
 ];
 
 /**
  * A row for each entry that is or was in use, in draw order. Those in use, by `pick,unit,count,state`, give the estimate
- * again; a cell without a count has an empty one, never a zero.
+ * again; a cell without a count has an empty one, never a zero. The newest event and its hash stand in each row: a witness
+ * outside the database.
  */
-function picksTable({ lists, standing }: EstimateView): string {
+function picksTable({ lists, standing, newest }: EstimateView): string {
   const rows = lists.flatMap((list) => {
     const states = entryStates(list);
     return list.entries
@@ -56,6 +59,8 @@ function picksTable({ lists, standing }: EstimateView): string {
           count?.value ?? null,
           count?.madeAt ?? null,
           count?.note ?? null,
+          newest.sequence,
+          newest.sha256,
         ];
       });
   });
@@ -93,7 +98,7 @@ function figureRow(name: string, value: CsvValue, unit: string): CsvValue[] {
 }
 
 /** Limits as computed; a figure that can't be given is an empty cell. */
-function figuresTable(result: EstimateResult): string {
+function figuresTable({ result, newest }: EstimateView): string {
   return writeCsv(FIGURE_COLUMNS, [
     quantityRow("total", result.total, "objects"),
     quantityRow("mean", result.mean, "objects a cell"),
@@ -113,5 +118,6 @@ function figuresTable(result: EstimateResult): string {
           figureRow("upper_limit_all_zero_poisson_one_sided", result.allZero.oneSided, "objects"),
         ]
       : []),
+    figureRow("record_event", newest.sequence, newest.sha256),
   ]);
 }

@@ -40,7 +40,7 @@ export function exportWaypoints(ctx: Context, wanted: Wanted): WaypointFile {
     const places = framePlaces(tx, season.live.draw.frameVersionId);
     const at = ctx.now().toISOString();
     const about = { title: titleOf(tx, ctx.surveyId), at, newest: newestEvent(tx, ctx.surveyId) };
-    const text = wanted.format === "gpx" ? waypointsGpx(cells, places, about) : waypointsCsv(cells, places);
+    const text = wanted.format === "gpx" ? waypointsGpx(cells, places, about) : waypointsCsv(cells, places, about);
     appendEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,

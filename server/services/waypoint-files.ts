@@ -53,10 +53,16 @@ const HEADER = [
   ...["centre", ...CORNERS].flatMap((place) =>
     ["longitude", "latitude", "east_m", "north_m"].map((axis) => `${place}_${axis}`),
   ),
+  "record_event",
+  "record_sha256",
 ];
 
 /** The same cells as a table: centre and corners in longitude and latitude (WGS 84) and in the frame's own metres. */
-export function waypointsCsv(cells: readonly NamedVisit[], places: FramePlaces): string {
+export function waypointsCsv(
+  cells: readonly NamedVisit[],
+  places: FramePlaces,
+  { newest }: Pick<About, "newest">,
+): string {
   const rows = cells.map(({ view, name }) => [
     name,
     view.visit.unit,
@@ -67,6 +73,8 @@ export function waypointsCsv(cells: readonly NamedVisit[], places: FramePlaces):
     view.assignment?.name ?? null,
     view.assignment?.day ?? null,
     ...[view.centre, ...places.cornersOf(view.visit.column, view.visit.row)].flatMap(coordinates),
+    newest?.sequence ?? null,
+    newest?.sha256 ?? null,
   ]);
   return writeCsv(HEADER, rows);
 }

@@ -77,8 +77,12 @@ describe("keeping", () => {
     const picks = await survey.team.auditor.call(exportEstimate, { params: survey.here() });
     expect(picks.headers.get("content-disposition")).toContain("hallow-moss-2031-estimate-picks.csv");
     const [head, ...rows] = textOf(picks).trimEnd().split("\r\n");
-    expect(head).toBe("pick,unit,label,column,row,use,repeat_of,state,count,counted_at,note");
+    expect(head).toBe(
+      "pick,unit,label,column,row,use,repeat_of,state,count,counted_at,note,record_event,record_sha256",
+    );
     const six = rows.map((row) => row.split(","));
+    const { newest } = (await read()).json.context;
+    expect(six[0]?.slice(-2)).toEqual([String(newest.sequence), newest.sha256]);
     expect(six.map((cells) => [cells[0], cells[1], cells[7], cells[8]])).toEqual(
       draw.entries
         .slice(0, 6)

@@ -64,6 +64,8 @@ describe("waypoints", () => {
     expect(value("centre_longitude")).toBe(visit?.centre.lng.toFixed(7));
     expect(Number(value("nw_latitude"))).toBeGreaterThan(Number(value("sw_latitude")));
     expect(value("share_inside")).toBe(((visit?.shareBillionths ?? 0) / 1e9).toFixed(9));
+    // Rule R8: the newest hash before the export stands on it, a witness outside the database.
+    expect(value("record_sha256")).toMatch(/^[0-9a-f]{64}$/);
   });
 });
 
