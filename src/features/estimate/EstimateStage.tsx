@@ -109,7 +109,7 @@ function EstimatePage({
         <Section title="Where they stood">
           <CountsMap surveyId={surveyId} frameId={context.frame.id} plural={plural} />
         </Section>
-        <Fold title="How the number is made" aside={`values filled in from draw ${context.draw.number}`}>
+        <Fold open title="How the number is made" aside={`values filled in from draw ${context.draw.number}`}>
           <Formulas result={result} />
         </Fold>
         {notes.some(({ weight }) => weight === "fact") && (
