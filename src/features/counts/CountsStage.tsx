@@ -1,7 +1,7 @@
 import { useState } from "react";
 import type { Visit } from "#shared/api/field.ts";
 import { useVisits } from "../../api/visits.ts";
-import { isSettled, markOf, ordersText } from "../../api/visit-words.ts";
+import { isSettled, markOf } from "../../api/visit-words.ts";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import type { DataColumn } from "../../components/ui/data-column.ts";
 import { DataTable } from "../../components/ui/DataTable.tsx";
@@ -10,11 +10,11 @@ import { formatAsIs, formatCount, formatNumber, formatTime } from "../../compone
 import { Ledger } from "../../components/ui/Ledger.tsx";
 import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
-import { RepeatBadge } from "../../components/ui/RepeatBadge.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { Section } from "../../components/ui/Section.tsx";
 import { VISIT_STATE_WORDS, type VisitMarkState } from "../../components/ui/visit-states.ts";
 import { VisitStateLabel } from "../../components/ui/VisitStateLabel.tsx";
+import { VISIT_COLUMNS } from "../../components/visits/visit-columns.tsx";
 import { CellCount } from "./CellCount.tsx";
 import { ImportCounts } from "./ImportCounts.tsx";
 import type { CountTarget } from "./target.ts";
@@ -89,25 +89,7 @@ function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }
 
 function columnsFor(plural: string): DataColumn<Visit>[] {
   return [
-    { id: "cell", head: "Cell", sortBy: (visit) => visit.label, cell: (visit) => <b>{visit.label}</b> },
-    {
-      id: "unit",
-      head: "Unit",
-      numeric: true,
-      sortBy: (visit) => visit.unit,
-      cell: (visit) => formatNumber(visit.unit),
-    },
-    {
-      id: "order",
-      head: "Draw order",
-      sortBy: (visit) => visit.orders[0],
-      cell: (visit) => (
-        <span className="q-state">
-          {ordersText(visit.orders)}
-          {visit.orders.length > 1 && <RepeatBadge times={visit.orders.length} />}
-        </span>
-      ),
-    },
+    ...VISIT_COLUMNS,
     {
       id: "state",
       head: "State",

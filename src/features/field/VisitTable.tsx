@@ -1,10 +1,9 @@
 import type { Visit } from "#shared/api/field.ts";
-import { markOf, ordersText } from "../../api/visit-words.ts";
+import { markOf } from "../../api/visit-words.ts";
 import type { DataColumn } from "../../components/ui/data-column.ts";
 import { DataTable } from "../../components/ui/DataTable.tsx";
-import { formatNumber } from "../../components/ui/format.ts";
-import { RepeatBadge } from "../../components/ui/RepeatBadge.tsx";
 import { VisitStateLabel } from "../../components/ui/VisitStateLabel.tsx";
+import { VISIT_COLUMNS } from "../../components/visits/visit-columns.tsx";
 
 interface VisitTableProps {
   readonly visits: readonly Visit[];
@@ -18,25 +17,7 @@ interface VisitTableProps {
 /** The cells to visit, one row a cell however often it was picked. */
 export function VisitTable({ visits, selected, onSelect, chosen, onChoose }: VisitTableProps) {
   const columns: DataColumn<Visit>[] = [
-    { id: "cell", head: "Cell", sortBy: (visit) => visit.label, cell: (visit) => <b>{visit.label}</b> },
-    {
-      id: "unit",
-      head: "Unit",
-      numeric: true,
-      sortBy: (visit) => visit.unit,
-      cell: (visit) => formatNumber(visit.unit),
-    },
-    {
-      id: "order",
-      head: "Draw order",
-      sortBy: (visit) => visit.orders[0],
-      cell: (visit) => (
-        <span className="q-state">
-          {ordersText(visit.orders)}
-          {visit.orders.length > 1 && <RepeatBadge times={visit.orders.length} />}
-        </span>
-      ),
-    },
+    ...VISIT_COLUMNS,
     {
       id: "who",
       head: "Who and when",
