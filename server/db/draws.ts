@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, isNull, max, sql } from "drizzle-orm";
+import { and, asc, count, desc, eq, gt, isNull, max, sql } from "drizzle-orm";
 import type { Reader, Tx } from "./open.ts";
 import {
   declarations,
@@ -93,6 +93,17 @@ export function insertAbandoned(tx: Tx, row: AbandonedRow): void {
 
 export function insertSeed(tx: Tx, row: SeedRow): void {
   tx.insert(seeds).values(row).run();
+}
+
+/** How many seeds were given in a survey after a moment. */
+export function seedsSince(reader: Reader, surveyId: string, after: string): number {
+  const row = reader
+    .select({ n: count() })
+    .from(seeds)
+    .innerJoin(declarations, eq(declarations.id, seeds.declarationId))
+    .where(and(eq(declarations.surveyId, surveyId), gt(seeds.givenAt, after)))
+    .get();
+  return row?.n ?? 0;
 }
 
 function drawStates(reader: Reader) {

@@ -66,7 +66,7 @@ export function presentDraws(view: DrawsView): z.input<typeof listDraws.answer.s
     declarations: view.declarations.map(presentDeclaration),
     draws: view.draws.map(presentDrawSummary),
     liveDrawId: view.liveDrawId,
-    waypointsExported: view.waypointsExported,
+    reasonNeeded: view.reasonNeeded,
   };
 }
 

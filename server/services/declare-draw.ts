@@ -6,12 +6,13 @@ import { Problem } from "#shared/problem.ts";
 import { canonicalText } from "#shared/record/chain.ts";
 import type { Context } from "../context.ts";
 import { insertDeclaration, liveDraw, openDeclaration } from "../db/draws.ts";
-import { appendEvent, hasEvent } from "../db/events.ts";
+import { appendEvent } from "../db/events.ts";
 import { findFrameHead } from "../db/frames.ts";
 import { type Reader, writeTx } from "../db/open.ts";
 import { currentSeason } from "../db/surveys.ts";
 import { actingMember } from "./acting-member.ts";
 import { newId } from "./new-id.ts";
+import { redrawReason } from "./redraw-reason.ts";
 
 interface Wanted {
   readonly frameId: string;
@@ -33,7 +34,8 @@ export function declareDraw(ctx: Context, wanted: Wanted): string {
   return writeTx(ctx.db, (tx) => {
     const seasonId = currentSeason(tx, ctx.surveyId).id;
     const frame = sealedFrame(tx, ctx.surveyId, wanted.frameId);
-    expectFreeSeason(tx, ctx.surveyId, seasonId, wanted.note);
+    expectFreeSeason(tx, seasonId);
+    if (wanted.note === "") expectNoReasonNeeded(tx, ctx);
     checkDesign(wanted.design, frame.units, wanted.reserves);
     checkLevel(Number(wanted.level));
     const declared = checked({
@@ -88,7 +90,7 @@ function sealedFrame(reader: Reader, surveyId: string, frameId: string): { units
   return { units, frameSha256 };
 }
 
-function expectFreeSeason(reader: Reader, surveyId: string, seasonId: string, note: string): void {
+function expectFreeSeason(reader: Reader, seasonId: string): void {
   const open = openDeclaration(reader, seasonId);
   if (open) {
     const { declaredAt } = open.declaration;
@@ -101,12 +103,17 @@ function expectFreeSeason(reader: Reader, surveyId: string, seasonId: string, no
   if (live) {
     throw new Problem("draw-live", `Draw ${live.draw.number} is in use. Withdraw it with a reason before a new one.`);
   }
-  if (note === "" && hasEvent(reader, surveyId, ["waypoints-exported"])) {
-    throw new Problem(
-      "reason-needed",
-      "Waypoints of an earlier draw were exported. Say in the note why cells are drawn again.",
-    );
-  }
+}
+
+const REASONS_ASKED = {
+  "waypoints-exported": "Waypoints of an earlier draw were exported.",
+  "third-draw-in-a-day": "Two seeds were given in this survey within the last 24 hours; all draws stay on record.",
+} as const;
+
+function expectNoReasonNeeded(reader: Reader, ctx: Context): void {
+  const asked = redrawReason(reader, ctx.surveyId, ctx.now());
+  if (asked === null) return;
+  throw new Problem("reason-needed", `${REASONS_ASKED[asked]} Say in the note why cells are drawn again.`);
 }
 
 /** @throws Problem `input-invalid` for what a declaration can't hold. */

@@ -14,13 +14,13 @@ import {
   liveDraw,
   seasonOfDraw,
 } from "../db/draws.ts";
-import { hasEvent } from "../db/events.ts";
 import { memberNames } from "../db/members.ts";
 import type { Reader } from "../db/open.ts";
 import { currentSeason } from "../db/surveys.ts";
 import { visitsOn } from "../db/visits.ts";
 import { drawInUse, type StratumInUse } from "./draw-in-use.ts";
 import { firstTarget } from "./first-target.ts";
+import { type RedrawReason, redrawReason } from "./redraw-reason.ts";
 import { ownCells, type OwnCells } from "./own-cells.ts";
 
 export interface DeclarationView {
@@ -50,7 +50,7 @@ export interface DrawsView {
   readonly declarations: readonly DeclarationView[];
   readonly draws: readonly DrawSummaryView[];
   readonly liveDrawId: string | null;
-  readonly waypointsExported: boolean;
+  readonly reasonNeeded: RedrawReason | null;
 }
 
 /** Who sees only their own cells does not get the seed: it and the frame would tell all the others. */
@@ -77,7 +77,7 @@ export function listDraws(ctx: Context): DrawsView {
       names,
     })),
     liveDrawId: liveDraw(ctx.db, currentSeason(ctx.db, ctx.surveyId).id)?.draw.id ?? null,
-    waypointsExported: hasEvent(ctx.db, ctx.surveyId, ["waypoints-exported"]),
+    reasonNeeded: redrawReason(ctx.db, ctx.surveyId, ctx.now()),
   };
 }
 

@@ -91,8 +91,8 @@ export const listDraws = contract({
       declarations: z.array(declaration),
       draws: z.array(drawSummary),
       liveDrawId: z.nullable(id),
-      /** A new draw needs a reason once waypoints were exported. */
-      waypointsExported: z.boolean(),
+      /** Why a new draw would have to give a reason, if it would. */
+      reasonNeeded: z.nullable(z.enum(["waypoints-exported", "third-draw-in-a-day"])),
     }),
   ),
 });

@@ -145,7 +145,29 @@ describe("withdrawing", () => {
     expect(silent.json.code).toBe("reason-needed");
     const said = declaring(survey.frame.frameId, { note: "the owner of the north end said no" });
     expect((await survey.team.planner.call(declareDraw, { params: survey.here(), body: said })).status).toBe(200);
-    expect((await survey.team.planner.call(listDraws, { params: survey.here() })).json.waypointsExported).toBe(true);
+    expect((await survey.team.planner.call(listDraws, { params: survey.here() })).json.reasonNeeded).toBe(
+      "waypoints-exported",
+    );
+  });
+
+  test("the third draw within 24 hours needs a reason, the third after a day does not", async () => {
+    const withdrawn = async (seed: string) => {
+      const draw = await drawCells(survey.team, declaring(survey.frame.frameId), seed);
+      const params = { ...survey.here(), drawId: draw.id };
+      await survey.team.planner.call(withdrawDraw, { params, body: { reason: "a permit was refused" } });
+    };
+    const asked = async () => (await survey.team.planner.call(listDraws, { params: survey.here() })).json.reasonNeeded;
+    await withdrawn("first seed");
+    expect(await asked()).toBeNull();
+    await withdrawn("second seed");
+    expect(await asked()).toBe("third-draw-in-a-day");
+    const body = declaring(survey.frame.frameId);
+    const silent = await survey.team.planner.call(declareDraw, { params: survey.here(), body });
+    expect(silent.json.code).toBe("reason-needed");
+    survey.server.setNow("2031-05-03T08:00:00.001Z");
+    expect(await asked()).toBeNull();
+    const nextDay = await survey.team.planner.call(declareDraw, { params: survey.here(), body });
+    expect(nextDay.status).toBe(200);
   });
 });
 

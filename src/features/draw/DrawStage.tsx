@@ -50,7 +50,7 @@ export function DrawStage(props: DrawStageProps) {
           surveyId={props.surveyId}
           frameId={frame.id}
           sealed={frame.sealed}
-          reasonNeeded={draws.data.waypointsExported}
+          reasonNeeded={draws.data.reasonNeeded !== null}
         />
       ) : (
         <p>A planner of the survey declares the draw here.</p>
