@@ -1,5 +1,5 @@
 import { levelText } from "./sentence.ts";
-import { figuresText } from "./number-text.ts";
+import { figuresText } from "#shared/units/number-text.ts";
 import type { EstimateResult, Figure, Limits } from "./result.ts";
 
 /** One line of the working: symbol = formula = formula with its values = result. A root is written √(…). */

@@ -1,5 +1,5 @@
 import { STATE_WORDS } from "#shared/counts/count.ts";
-import { countText, figuresText, listText, numberText, BEFORE_UNIT } from "./number-text.ts";
+import { countText, figuresText, listText, numberText, BEFORE_UNIT } from "#shared/units/number-text.ts";
 import type { EstimateResult, LimitKind } from "./result.ts";
 import { printedLimitsOf } from "./rounding.ts";
 import { estimateSentence, levelText, sentenceText, type TargetWords } from "./sentence.ts";

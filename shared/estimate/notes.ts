@@ -1,5 +1,5 @@
 import { STATE_WORDS } from "#shared/counts/count.ts";
-import { countText, figuresText, listText, numberText } from "./number-text.ts";
+import { countText, figuresText, listText, numberText } from "#shared/units/number-text.ts";
 import type { EstimateResult, MissingPick } from "./result.ts";
 import { estimateText, printedLimitsOf } from "./rounding.ts";
 

@@ -1,5 +1,5 @@
+import { figuresText, magnitudeOf, numberText } from "#shared/units/number-text.ts";
 import type { EstimateResult, Interval, Quantity } from "./result.ts";
-import { figuresText, numberText } from "./number-text.ts";
 
 /**
  * The power of ten of a standard error's second figure, at which an estimate is rounded: 599 → 1 (tens), 0.808 → −2.
@@ -9,7 +9,7 @@ export function roundingPlace(standardError: number): number {
   if (!(standardError > 0 && Number.isFinite(standardError))) {
     throw new RangeError(`a standard error above zero gives a place, got ${standardError}`);
   }
-  return Number(standardError.toExponential().split("e")[1]) - 1;
+  return magnitudeOf(standardError) - 1;
 }
 
 /** A number rounded at a power of ten, half away from zero: 2 926 at 1 is 2 930. */
@@ -25,8 +25,7 @@ export function roundAt(value: number, place: number): number {
 export function figuresFor(estimate: number, standardError: number): number {
   const rounded = roundAt(estimate, roundingPlace(standardError));
   if (rounded === 0) return 1;
-  const first = Number(Math.abs(rounded).toExponential().split("e")[1]);
-  return Math.max(1, first - roundingPlace(standardError) + 1);
+  return Math.max(1, magnitudeOf(rounded) - roundingPlace(standardError) + 1);
 }
 
 /** An estimate as precisely as two figures of its standard error warrant; without one, up to two decimals. */

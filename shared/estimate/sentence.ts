@@ -1,5 +1,5 @@
 import { levelPercent } from "./level.ts";
-import { BEFORE_UNIT, countText, figuresText, numberText } from "./number-text.ts";
+import { BEFORE_UNIT, countText, figuresText, numberText } from "#shared/units/number-text.ts";
 import type { AllZeroLimits, EstimateResult } from "./result.ts";
 import { estimateText, printedLimitsOf } from "./rounding.ts";
 

@@ -1,30 +1,19 @@
-/** All numbers, times and hashes on screen are written here, and rounded nowhere else. Full precision stays in files and data. */
+import { BEFORE_UNIT, countText, listText, numberText, significantText } from "#shared/units/number-text.ts";
 
-/** U+202F parts thousands; U+00A0 stands before a unit or a per cent sign; U+2212 is the minus. */
-const THOUSANDS = "\u202f";
-const BEFORE_UNIT = "\u00a0";
-const MINUS = "\u2212";
+/**
+ * Numbers, times and hashes on screen. How a number is written and rounded is shared/units/number-text.ts, how an estimate is
+ * rounded by its error shared/estimate/rounding.ts. Full precision stays in files and data.
+ */
 
-/** A number with a fixed number of decimals and thousands parted from 1 000 up. Minus zero loses its sign. Throws RangeError where it is not finite. */
+/** A number with a fixed number of decimals and thousands parted from 1 000 up. Throws RangeError where it is not finite. */
 export function formatNumber(value: number, decimals = 0): string {
-  if (!Number.isFinite(value)) throw new RangeError(`cannot write ${value} as a number`);
-  const fixed = Math.abs(value).toFixed(decimals);
-  const [whole = "", fraction] = fixed.split(".");
-  const parted = whole.replaceAll(/\B(?=(\d{3})+$)/g, THOUSANDS);
-  const negative = value < 0 && /[1-9]/.test(fixed);
-  return `${negative ? MINUS : ""}${parted}${fraction === undefined ? "" : `.${fraction}`}`;
+  return numberText(value, decimals);
 }
 
 /** A number with the decimals that it has (a count of 2.5, a cell of 12.25 m), at most twelve significant figures. */
 export function formatAsIs(value: number): string {
   const decimals = /\.(\d+)$/.exec(String(Number(value.toPrecision(12))))?.[1]?.length ?? 0;
   return formatNumber(value, decimals);
-}
-
-/** A whole number beyond 2⁵³, as text of digits. */
-export function formatWhole(value: bigint): string {
-  const digits = (value < 0n ? -value : value).toString().replaceAll(/\B(?=(\d{3})+$)/g, THOUSANDS);
-  return value < 0n ? `${MINUS}${digits}` : digits;
 }
 
 /** Number and unit with the space that belongs between them: "20 m". */
@@ -63,23 +52,7 @@ export function formatMillimetres(millimetres: number): string {
 
 /** Rounded to so many significant figures: 2 925.7 with 3 → "2 930". Zero stays "0". */
 export function formatSignificant(value: number, figures: number): string {
-  if (!Number.isInteger(figures) || figures < 1) throw new RangeError(`needs at least one figure, got ${figures}`);
-  if (value === 0) return "0";
-  const rounded = Number(value.toPrecision(figures));
-  const magnitude = Math.floor(Math.log10(Math.abs(rounded)));
-  return formatNumber(rounded, Math.max(0, figures - 1 - magnitude));
-}
-
-/**
- * An estimate as precisely as its standard error warrants: rounded at the place of the second figure of the standard error. 2 926 with
- * 599 → "2 930"; 3.948 with 0.808 → "3.95". A standard error of zero leaves the number with at most two decimals.
- */
-export function formatByError(value: number, standardError: number): string {
-  if (!(standardError > 0)) return formatAsIs(Number(value.toFixed(2)));
-  const place = Math.floor(Math.log10(standardError)) - 1;
-  if (place < 0) return formatNumber(value, Math.min(12, -place));
-  const step = Number(`1e${place}`);
-  return formatNumber(Math.round(value / step) * step);
+  return significantText(value, figures);
 }
 
 /** A hash as its first 8 and last 6 characters. */
@@ -142,12 +115,11 @@ export function formatBytes(bytes: number): string {
 }
 
 /** "1 cell", "741 cells": a number with its noun. */
-export function formatCount(value: number, one: string, many = `${one}s`): string {
-  return `${formatNumber(value)} ${value === 1 ? one : many}`;
+export function formatCount(value: number, one: string, many?: string): string {
+  return countText(value, one, many);
 }
 
 /** "A", "A and B", "A, B and C". */
 export function formatList(words: readonly string[]): string {
-  if (words.length <= 1) return words[0] ?? "";
-  return `${words.slice(0, -1).join(", ")} and ${words.at(-1) ?? ""}`;
+  return listText(words);
 }

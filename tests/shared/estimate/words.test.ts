@@ -22,6 +22,7 @@ describe("rounding", () => {
   // Two figures of 599 end at the tens: 2 926 → 2 930, in 3 figures. Two figures of 0.808 end at the hundredths.
   test.each([
     [2926, 599, "2 930", 3],
+    [4387.3, 599, "4 390", 3],
     [1950.4, 599, "1 950", 3],
     [3.948, 0.808, "3.95", 3],
     [111.5, 22.8, "112", 3],

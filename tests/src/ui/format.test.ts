@@ -2,7 +2,6 @@ import { afterEach, describe, expect, it, vi } from "vitest";
 import {
   formatArea,
   formatAsIs,
-  formatByError,
   formatBytes,
   formatCount,
   formatHash,
@@ -16,7 +15,6 @@ import {
   formatTime,
   formatTimeOfDay,
   formatUnit,
-  formatWhole,
 } from "../../../src/components/ui/format.ts";
 
 afterEach(() => {
@@ -48,11 +46,6 @@ describe("numbers on screen", () => {
     expect(formatAsIs(12)).toBe("12");
   });
 
-  it("writes whole numbers beyond 2⁵³ exactly", () => {
-    expect(formatWhole(9_007_199_254_740_993n)).toBe("9\u202f007\u202f199\u202f254\u202f740\u202f993");
-    expect(formatWhole(-1000n)).toBe("\u22121\u202f000");
-  });
-
   it("puts U+00A0 before a unit and before %", () => {
     expect(formatUnit("20", "m")).toBe("20\u00a0m");
     expect(formatPercent(0.2048)).toBe("20.5\u00a0%");
@@ -79,15 +72,6 @@ describe("numbers on screen", () => {
     expect(formatSignificant(99.96, 3)).toBe("100");
     expect(formatSignificant(0, 3)).toBe("0");
     expect(() => formatSignificant(1, 0)).toThrow(RangeError);
-  });
-
-  // Two figures of the standard error: 599 → tens; 0.808 → hundredths; 22.8 → ones.
-  it("writes an estimate as precisely as two figures of its standard error", () => {
-    expect(formatByError(2926, 599)).toBe("2\u202f930");
-    expect(formatByError(4387.3, 599)).toBe("4\u202f390");
-    expect(formatByError(3.948, 0.808)).toBe("3.95");
-    expect(formatByError(111.5, 22.8)).toBe("112");
-    expect(formatByError(12, 0)).toBe("12");
   });
 });
 
