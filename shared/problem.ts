@@ -60,7 +60,6 @@ export const PROBLEMS = {
   "nothing-to-export": { status: 409, title: "There is no cell to export" },
   "names-clash": { status: 422, title: "Waypoint names clash" },
   "pick-not-in-use": { status: 409, title: "This pick is not in use" },
-  "reserves-used-up": { status: 409, title: "No reserve is left" },
   // counts
   "count-invalid": { status: 422, title: "This count cannot be used" },
   "count-exists": { status: 409, title: "This cell has a count" },

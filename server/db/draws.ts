@@ -147,6 +147,10 @@ export function drawsOnFrame(reader: Reader, frameId: string): number {
 
 export function insertDraw(tx: Tx, row: DrawRow, entries: readonly EntryRow[]): void {
   tx.insert(draws).values(row).run();
+  insertEntries(tx, entries);
+}
+
+export function insertEntries(tx: Tx, entries: readonly EntryRow[]): void {
   for (let at = 0; at < entries.length; at += ROWS_AT_ONCE) {
     tx.insert(drawEntries)
       .values(entries.slice(at, at + ROWS_AT_ONCE))

@@ -9,6 +9,7 @@ import { type Reader, type Tx, writeTx } from "../db/open.ts";
 import { insertPickAct, pickActsOf, type VisitRow, visitsOn } from "../db/visits.ts";
 import { actingMember } from "./acting-member.ts";
 import { listInUseWith, type StratumInUse } from "./draw-in-use.ts";
+import { lengthenList } from "./lengthen-list.ts";
 import { bringsValue, cellName, inWords, keepEntry, keptBefore, visitHere } from "./keep-entry.ts";
 import { openVisitsFor } from "./open-visits-for.ts";
 import { seasonInUse } from "./read-visits.ts";
@@ -26,13 +27,13 @@ export interface Closing {
   readonly opened: readonly { readonly entry: EntryRow; readonly repeatsCountedCell: boolean }[];
   readonly passedOver: readonly number[];
   readonly reservesLeft: number;
-  /** Picks that found no reserve left. */
+  /** Picks that found no reserve left: without replacement a list ends with the frame. */
   readonly unreplaced: number;
 }
 
 /**
  * Says why a cell can't be counted, and opens the next reserve for each of its picks in use, strictly in draw order
- * (rule R6): nobody chooses a cell. Pressed twice it answers the same and does nothing more.
+ * (rule R6): nobody chooses a cell. A list that runs short is lengthened by its stream. Pressed twice it answers the same and does nothing more.
  */
 export function closePick(ctx: Context, visitId: string, wanted: Wanted): Closing {
   return writeTx(ctx.db, (tx) => {
@@ -65,6 +66,7 @@ export function closePick(ctx: Context, visitId: string, wanted: Wanted): Closin
       actedBy: memberId,
       actedAt: at,
     });
+    lengthenList(tx, ctx, drawId, pickInUse(tx, ctx, visit).list, at);
     const closing = closingOf(tx, ctx, visit, pickInUse(tx, ctx, visit).list);
     const opened = closing.opened.map(({ entry }) => entry);
     openVisitsFor(tx, ctx, { seasonId: visit.seasonId, frameId: visit.frameVersionId, at }, opened);

@@ -1,5 +1,4 @@
-import { sha256 } from "@noble/hashes/sha2.js";
-import { bytesToHex, utf8ToBytes } from "@noble/hashes/utils.js";
+import { entriesSha256 } from "#shared/draw/entries-hash.ts";
 import { checkSeed, madeHereSeed } from "#shared/draw/seed.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
@@ -149,10 +148,4 @@ function keepDraw(tx: Tx, ctx: Context, declarationId: string, entries: readonly
 function expectNotAbandoned({ abandoned }: DeclarationState): void {
   if (abandoned === null) return;
   throw new Problem("declaration-closed", `It was abandoned at ${abandoned.abandonedAt}. Declare a new draw.`);
-}
-
-/** SHA-256 of one line an entry, `stratum,position,unit` and a newline. */
-function entriesSha256(entries: readonly PlacedEntry[]): string {
-  const lines = entries.map(({ stratum, position, unit }) => `${stratum},${position},${unit}\n`);
-  return bytesToHex(sha256(utf8ToBytes(lines.join(""))));
 }

@@ -9,6 +9,7 @@ import {
   type DeclarationState,
   drawsOf,
   type DrawState,
+  entriesOf,
   findDeclaration,
   findDraw,
   liveDraw,
@@ -109,8 +110,9 @@ export function readDraw(ctx: Context, drawId: string): DrawView {
 export function readRecipe(ctx: Context, drawId: string): DrawRecipe {
   const { draw } = neededDraw(ctx.db, drawId);
   const state = neededDeclaration(ctx.db, draw.declarationId);
-  const { frameSha256, design, generator, reserves } = declaredText(state);
+  const { frameSha256, design, generator } = declaredText(state);
   if (state.seed === null) throw new Error(`draw ${drawId} has no seed`);
+  const reserves = entriesOf(ctx.db, drawId).length - design.n;
   return drawRecipe({ frameSha256, units: state.units, design, seed: state.seed.text, generator, reserves });
 }
 

@@ -1,4 +1,3 @@
-import { Problem } from "#shared/problem.ts";
 import { checkDesign, withReplacement, type Design } from "./design.ts";
 import { generatorNamed, type Generator, type GeneratorName } from "./generator.ts";
 import { checkSeed } from "./seed.ts";
@@ -76,19 +75,11 @@ export function drawEntries(
 }
 
 /**
- * How many reserves a lengthened list may have, at least `wanted` if the frame allows: without replacement a list ends
- * with the frame's last cell.
- * @throws Problem `reserves-used-up` where not one more entry can be drawn.
+ * How many reserves a lengthened list may have, at most those wanted: without replacement a list ends with the frame's
+ * last cell.
  */
-export function lengthenedReserves(design: Design, units: number, present: number, wanted: number): number {
-  const most = withReplacement(design.kind) ? wanted : Math.min(wanted, units - design.n);
-  if (most <= present) {
-    throw new Problem(
-      "reserves-used-up",
-      `All ${units} cells of the frame are in the draw's list. No reserve can open.`,
-    );
-  }
-  return most;
+export function lengthenedReserves(design: Design, units: number, wanted: number): number {
+  return withReplacement(design.kind) ? wanted : Math.min(wanted, units - design.n);
 }
 
 /** How many different units the entries hold. */

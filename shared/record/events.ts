@@ -77,6 +77,17 @@ export const EVENT_PAYLOADS = {
     /** SHA-256 of the entries, one line each: stratum,position,unit and a newline. */
     entriesSha256: sha256,
   }),
+  /** A list that ran short, lengthened by the same stream for the act that follows. */
+  "list-lengthened": z.object({
+    version: v1,
+    drawId: id,
+    stratum: z.string(),
+    /** Entries of this stratum before and after, picks and reserves together. */
+    from: z.int(),
+    to: z.int(),
+    /** SHA-256 of all entries of this stratum, as in draw-made. */
+    entriesSha256: sha256,
+  }),
   "draw-withdrawn": z.object({ version: v1, drawId: id, reason: z.string() }),
   "cells-assigned": z.object({
     version: v1,

@@ -3,6 +3,9 @@ import { describe, expect, test } from "vitest";
 import { amendCount, enterCounts } from "#shared/api/counts.ts";
 import { readDraw, withdrawDraw } from "#shared/api/draw.ts";
 import { closePick } from "#shared/api/field.ts";
+import { drawEntries } from "#shared/draw/draw.ts";
+import { replay } from "#shared/record/replay.ts";
+import { buildRecord } from "#server/services/build-record.ts";
 import { declaring, drawCells } from "../fixtures/sealed-frame.ts";
 import { surveyEachTest, visitAt } from "../fixtures/each-survey.ts";
 
@@ -124,12 +127,41 @@ describe("what is closed and what is not", () => {
     expect(visitAt(after, 2).count).toMatchObject({ state: "not-reached", amended: true });
   });
 
-  test("a pick that finds no reserve is told", async () => {
-    await drawCells(survey.team, declaring(survey.frame.frameId, { design: { kind: "srs-wor", n: 5 }, reserves: 1 }));
+  // R6: a list that runs short is lengthened by the same stream: the longer list begins with the shorter one.
+  test("a list that runs short is lengthened by its own stream, on record", async () => {
+    const design = { kind: "srs-wr" as const, n: 40 };
+    const draw = await drawCells(survey.team, declaring(survey.frame.frameId, { design, reserves: 1 }), "a typed seed");
+    const repeat = draw.entries.find((entry) => entry.repeatOf !== null && !entry.reserve);
+    const visit = (await survey.visits()).visits.find((one) => one.unit === repeat?.unit);
+    const times = visit?.orders.length ?? 0;
+    expect(times).toBe(2);
+    const frame = { sha256: survey.frame.frameSha256, units: 70 };
+    const longer = drawEntries(frame, design, "a typed seed", "sha256-counter", 2)[0]?.entries ?? [];
+    const { json } = await close(visit?.id ?? "");
+    expect(json).toMatchObject({ reservesLeft: 0, unreplaced: 0, passedOver: [] });
+    expect(json.opened.map(({ position }) => position)).toEqual([41, 42]);
+    expect(survey.kinds().slice(-2)).toEqual(["list-lengthened", "pick-closed"]);
+    const params = { ...survey.here(), drawId: draw.id };
+    const { entries } = (await survey.team.auditor.call(readDraw, { params })).json;
+    expect(entries.map(({ position, unit }) => [position, unit])).toEqual(
+      longer.map(({ position, unit }) => [position, unit]),
+    );
+    expect((await survey.visits()).picks).toBe(40);
+    const report = replay(buildRecord(survey.server.platform, survey.team.surveyId));
+    expect(report.checks.filter(({ outcome }) => outcome === "failed")).toEqual([]);
+  });
+
+  test("without replacement a list ends with the frame, and a pick that finds no reserve is told", async () => {
+    const design = { kind: "srs-wor" as const, n: 69 };
+    await drawCells(survey.team, declaring(survey.frame.frameId, { design, reserves: 0 }));
     const { visits: all } = await survey.visits();
-    expect((await close(visitAt(all, 1).id)).json).toMatchObject({ reservesLeft: 0, unreplaced: 0 });
+    expect((await close(visitAt(all, 1).id)).json).toMatchObject({
+      opened: [{ position: 70 }],
+      reservesLeft: 0,
+      unreplaced: 0,
+    });
     expect((await close(visitAt(all, 2).id)).json).toMatchObject({ opened: [], reservesLeft: 0, unreplaced: 1 });
-    expect((await survey.visits()).picks).toBe(4);
+    expect((await survey.visits()).picks).toBe(68);
   });
 
   test("a cell of a withdrawn draw can't be closed", async () => {

@@ -1,6 +1,5 @@
-import { sha256 } from "@noble/hashes/sha2.js";
-import { bytesToHex, utf8ToBytes } from "@noble/hashes/utils.js";
 import type { DrawEntries } from "#shared/draw/draw.ts";
+import { entriesSha256 } from "#shared/draw/entries-hash.ts";
 import { labelOf, unitAt } from "#shared/frame/list.ts";
 import { Problem } from "#shared/problem.ts";
 import {
@@ -17,6 +16,7 @@ import {
 } from "./check.ts";
 import { type Declared, declaredOf, type StoredDraw } from "./declared.ts";
 import type { RebuiltFrame } from "./frame-rebuilt.ts";
+import { lengtheningDifference } from "./lengthened.ts";
 
 /**
  * Repeats every draw from frame hash, N, design, seed and generator (rule R6), withdrawn ones too; and computes what an
@@ -48,6 +48,7 @@ function checkDraw(run: ReplayRun, declared: Declared, draw: StoredDraw): Check 
     () => compareLists(draw, again),
     () => compareCells(draw, frame),
     () => compareEvent(run, draw, again),
+    () => lengtheningDifference(run, { ...declared, draw }, again),
   ]);
   const picks = draw.lists.reduce((sum, { entries }) => sum + entries.filter(({ reserve }) => !reserve).length, 0);
   const reason = draw.withdrawn === null ? "" : `. Withdrawn: “${draw.withdrawn.reason}”`;
@@ -108,17 +109,19 @@ function compareEvent(run: ReplayRun, draw: StoredDraw, again: DrawEntries): Dif
   if (run.events.brokenAmong(["draw-made"]) !== null) return null;
   const event = run.events.of("draw-made").find(({ payload }) => payload.drawId === draw.id);
   if (event === undefined) return null; // the order of proof names it
-  const { picks, reserves, entriesSha256 } = event.payload;
+  const { picks, reserves } = event.payload;
   const where = `draw ${draw.number}`;
-  const shorter = again.map(({ stratum, entries }) => ({
-    stratum,
-    entries: entries.slice(0, entries.filter(({ reserve }) => !reserve).length + reserves),
-  }));
+  // As it was drawn: what lengthened it later has events of its own.
+  const drawn = again.flatMap(({ stratum, entries }) =>
+    entries
+      .slice(0, entries.filter(({ reserve }) => !reserve).length + reserves)
+      .map((entry) => ({ stratum, ...entry })),
+  );
   return firstDifference([
     () => differ(`${where}, number`, draw.number, event.payload.number),
     () => differ(`${where}, declaration`, draw.declarationId, event.payload.declarationId),
     () => differ(`${where}, picks in its event`, picks, picksOf(again)),
-    () => differ(`${where}, hash of its entries in its event`, entriesSha256, entriesHash(shorter)),
+    () => differ(`${where}, hash of its entries in its event`, event.payload.entriesSha256, entriesSha256(drawn)),
     () => differ(`${where}, drawn at`, draw.drawnAt, event.at),
     () => differ(`${where}, drawn by`, draw.member, event.member),
   ]);
@@ -126,15 +129,6 @@ function compareEvent(run: ReplayRun, draw: StoredDraw, again: DrawEntries): Dif
 
 function picksOf(lists: DrawEntries): number {
   return lists.reduce((sum, { entries }) => sum + entries.filter(({ reserve }) => !reserve).length, 0);
-}
-
-/** SHA-256 of the entries, one line each: stratum,position,unit and a newline. */
-export function entriesHash(lists: DrawEntries): string {
-  const hash = sha256.create();
-  for (const { stratum, entries } of lists) {
-    for (const { position, unit } of entries) hash.update(utf8ToBytes(`${stratum},${position},${unit}\n`));
-  }
-  return bytesToHex(hash.digest());
 }
 
 const MOST_UNITS_SHOWN = 100;

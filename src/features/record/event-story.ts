@@ -78,6 +78,12 @@ const TELLERS: Tellers = {
       p.reserves === 0 ? "No reserves." : `With ${formatCount(p.reserves, "reserve")} behind them.`,
       "drawn",
     ),
+  "list-lengthened": (p) =>
+    story(
+      `The draw’s list was lengthened to ${formatCount(p.to, "entry", "entries")}`,
+      `${formatCount(p.to - p.from, "entry", "entries")} more from the same stream, since its reserves were used up.`,
+      "drawn",
+    ),
   "draw-withdrawn": (p, by) =>
     story("A draw was withdrawn", sentences(quoted(p.reason), `${by}. Its picks stay on record.`), "withdrawn"),
   "cells-assigned": (p) =>

@@ -269,3 +269,34 @@ test("a chain that was written anew holds by itself and fails against a hash tha
   const { checks } = replay(anew, { heldHashes: [held] });
   expect(ids(checks.filter(({ outcome }) => outcome === "failed"))).toEqual(["held-hashes"]);
 });
+
+describe("a list that ran short", () => {
+  const short = { reserves: 1 };
+  const lengthening = (draft: Draft) => actOf(draft, "list-lengthened");
+
+  // R6: draw 2 has one reserve, and it falls on the closed cell, which was picked twice: two more entries open.
+  test("is lengthened by the same stream, and every check passes", () => {
+    expect(failed(() => undefined, short)).toEqual([]);
+  });
+
+  test("a list that is longer than its events say is named", () => {
+    const check = only(failed((draft) => draft.acts.splice(draft.acts.indexOf(lengthening(draft)), 1), short));
+    expect(check.id).toBe("draw-2");
+    expect(check.detail).toContain("draw 2, number of entries: the record says 15; expected 13");
+  });
+
+  test("another stream's entries are named by their hash", () => {
+    const check = only(
+      failed((draft) => {
+        lengthening(draft).payload["entriesSha256"] = "0".repeat(64);
+      }, short),
+    );
+    expect(check.detail).toContain("hash of its entries");
+  });
+
+  // Somebody who lengthens a list at will sees what would come next.
+  test("one that was lengthened further than it was opened is named", () => {
+    const check = only(failed((draft) => moveBefore(draft, lengthening(draft), actOf(draft, "cells-assigned")), short));
+    expect(check.detail).toContain("entries after: the record says 15; expected 12");
+  });
+});
