@@ -46,7 +46,7 @@ function picksTable({ lists, standing, newest }: EstimateView): string {
     return list.entries
       .filter((entry) => entry.position <= list.use.openedTo)
       .map((entry): CsvValue[] => {
-        const count = standing.get(entry.unit)?.entry;
+        const count = standing.get(entry.unit)?.inForce;
         return [
           entry.position,
           entry.unit,

@@ -1,6 +1,7 @@
 import { sha256 } from "@noble/hashes/sha2.js";
 import { bytesToHex } from "@noble/hashes/utils.js";
 import { type ColumnChoice, guessColumns } from "#shared/counts/guess-columns.ts";
+import { cellCount } from "#shared/counts/in-force.ts";
 import { type CountToWrite, matchTable, type TableVerdict } from "#shared/counts/match-table.ts";
 import { type CsvTable, readCsv } from "#shared/exchange/csv.ts";
 import { Problem } from "#shared/problem.ts";
@@ -14,7 +15,6 @@ import { keepFirstCount } from "./enter-counts.ts";
 import type { Said } from "./keep-entry.ts";
 import { newId } from "./new-id.ts";
 import { newUuid } from "./new-uuid.ts";
-import { cellCount } from "./read-estimate.ts";
 import { listVisits, type VisitView } from "./read-visits.ts";
 
 interface Wanted {

@@ -85,7 +85,7 @@ function othersOnRecord(ctx: Context, seasonId: string): { withdrawn: number; ab
 }
 
 function countedWhen({ standing }: EstimateView, day: (at: string) => string): MethodsFacts["counted"] {
-  const entries = [...standing.values()].map(({ entry }) => entry).filter((entry) => entry.state === "counted");
+  const entries = [...standing.values()].map(({ inForce }) => inForce).filter((entry) => entry.state === "counted");
   const days = entries.map((entry) => day(entry.madeAt)).toSorted();
   return {
     from: days.at(0) ?? "",

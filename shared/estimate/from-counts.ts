@@ -2,12 +2,11 @@ import { NOT_VISITED, checkValue, valueOf, type CellCount } from "#shared/counts
 import { Problem } from "#shared/problem.ts";
 import { distributionOf } from "./distribution.ts";
 import { farAbove } from "./far-above.ts";
-import { allZeroLimits } from "./limits-all-zero.ts";
+import { estimateFromValues } from "./from-values.ts";
 import { missingBounds } from "./missing-bounds.ts";
 import { carefulSum } from "./moments.ts";
-import { precisionOf, quantities } from "./quantities.ts";
 import { ESTIMATE_FORMAT, type EstimateResult, type EstimatedDesign, type LimitKind } from "./result.ts";
-import { srsEstimate, type SimpleRandomEstimate } from "./simple-random.ts";
+import { srsEstimate } from "./simple-random.ts";
 import { countedOutOfOrder, missingPicks, stateNumbers } from "./states.ts";
 
 /** One entry of the draw. */
@@ -39,7 +38,7 @@ export interface EstimateInput {
 }
 
 /** A pick with the number that it brings into the estimate. */
-interface ValuedPick extends DrawnPick {
+export interface ValuedPick extends DrawnPick {
   readonly value: number;
 }
 
@@ -56,16 +55,17 @@ function checkInput({ units, picks, closedPicks }: EstimateInput): void {
   }
 }
 
-function valuedPicks(picks: readonly DrawnPick[], counts: ReadonlyMap<number, CellCount>): ValuedPick[] {
-  return picks.flatMap((pick) => {
+/**
+ * The picks that bring a number, each with its own.
+ * @throws Problem `estimate-impossible` where none does
+ */
+export function valuedPicks(picks: readonly DrawnPick[], counts: ReadonlyMap<number, CellCount>): ValuedPick[] {
+  const valued = picks.flatMap((pick) => {
     const read = valueOf(counts.get(pick.unit) ?? NOT_VISITED);
     return read.known ? [{ ...pick, value: checkValue(read.value) }] : [];
   });
-}
-
-function estimateOf(input: EstimateInput, valued: readonly ValuedPick[]): SimpleRandomEstimate {
-  const values = valued.map((pick) => pick.value);
-  return srsEstimate({ design: input.design, units: input.units, values, distinct: distinctUnits(valued) });
+  if (valued.length > 0) return valued;
+  throw new Problem("estimate-impossible", `None of the ${picks.length} picks has a count. Enter counts first.`);
 }
 
 /** The sum over distinct cells: what was seen, each cell once. */
@@ -85,7 +85,13 @@ function withAmendedAsCounted(
     return value === undefined || known ? [] : [{ ...pick, value: checkValue(value) }];
   });
   if (back.length === 0) return { kind: "none-amended" };
-  const estimate = estimateOf(input, [...valued, ...back]);
+  const all = [...valued, ...back];
+  const estimate = srsEstimate({
+    design: input.design,
+    units: input.units,
+    values: all.map((pick) => pick.value),
+    distinct: distinctUnits(all),
+  });
   const error = estimate.standardErrorOfMean;
   return {
     kind: "amended",
@@ -94,12 +100,6 @@ function withAmendedAsCounted(
     total: input.units * estimate.mean,
     standardErrorOfTotal: error.kind === "known" ? { kind: "known", value: input.units * error.value } : error,
   };
-}
-
-/** Upper limits under a model: where all is zero and not every cell was seen. */
-function allZero(input: EstimateInput, seen: number, distinct: number): EstimateResult["allZero"] {
-  if (seen > 0 || distinct >= input.units) return { kind: "not-needed" };
-  return allZeroLimits(input.units, distinct, input.level);
 }
 
 /**
@@ -115,45 +115,44 @@ function allZero(input: EstimateInput, seen: number, distinct: number): Estimate
 export function estimateFromCounts(input: EstimateInput): EstimateResult {
   checkInput(input);
   const valued = valuedPicks(input.picks, input.counts);
-  if (valued.length === 0) {
-    throw new Problem(
-      "estimate-impossible",
-      `None of the ${input.picks.length} picks has a count. Enter counts first.`,
-    );
-  }
-  const estimate = estimateOf(input, valued);
+  const { design, units, areaM2, level } = input;
   const values = valued.map((pick) => pick.value);
   const distinctCells = distinctUnits(valued);
-  const seen = numberSeen(valued);
-  const precision = precisionOf(estimate, input.level);
+  const { sample, precision, ...quantities } = estimateFromValues({
+    design,
+    units,
+    values,
+    distinct: distinctCells,
+    areaM2,
+    level,
+  });
   const missing = missingPicks(input);
   return {
     format: ESTIMATE_FORMAT,
-    design: input.design,
+    design,
     estimator: "expansion",
-    units: input.units,
+    units,
     picksInUse: input.picks.length,
     picksCounted: valued.length,
     distinctCells,
     cellsInUse: distinctUnits(input.picks),
     countIn: input.countIn,
-    level: input.level,
+    level,
     declaredLimits: input.limits,
-    complete: estimate.complete,
-    sampleVariance: estimate.variance,
-    degreesOfFreedom: estimate.degreesOfFreedom,
+    complete: sample.complete,
+    sampleVariance: sample.variance,
+    degreesOfFreedom: sample.degreesOfFreedom,
     tQuantile: precision.t,
     coefficientOfVariation: precision.coefficientOfVariation,
     logNormalFactor: precision.logNormalFactor,
-    ...quantities(estimate, precision, input.units, input.areaM2),
-    allZero: allZero(input, seen, distinctCells),
-    seen,
+    ...quantities,
+    seen: numberSeen(valued),
     states: stateNumbers(input),
     missing,
-    missingBounds: missing.length === 0 ? { kind: "none-missing" } : missingBounds(input.units, values, missing.length),
+    missingBounds: missing.length === 0 ? { kind: "none-missing" } : missingBounds(units, values, missing.length),
     countedOutOfOrder: countedOutOfOrder(input),
     withAmendedAsCounted: withAmendedAsCounted(input, valued),
-    farAbove: farAbove(input.units, valued),
+    farAbove: farAbove(units, valued),
     distribution: distributionOf(values),
   };
 }

@@ -1,11 +1,9 @@
-import type { CellCount } from "#shared/counts/count.ts";
 import { areaSpokenForM2 } from "#shared/estimate/density.ts";
-import { type DrawnPick, estimateFromCounts } from "#shared/estimate/from-counts.ts";
+import { estimateOfDraw, type ListOfDraw } from "#shared/estimate/from-draw.ts";
 import type { EstimateResult } from "#shared/estimate/result.ts";
 import type { Entry } from "#shared/draw/draw.ts";
 import type { FrameCells } from "#shared/frame/cells.ts";
 import { labelOf, unitAt } from "#shared/frame/list.ts";
-import type { CountPayload } from "#shared/record/events.ts";
 import type { ReplayRun } from "./check.ts";
 import { type Declared, declaredOf, type StoredDraw } from "./declared.ts";
 import type { RebuiltFrame } from "./frame-rebuilt.ts";
@@ -29,23 +27,15 @@ export function estimateAgain(run: ReplayRun, of: EstimateOf): EstimateResult | 
   if (declared?.value == null || frame?.cells == null || frame.statement === null) return null;
   const lists = listsStanding(run, declared, of.until);
   if (lists.length === 0) return null;
-  const counts = countsStanding(run, { ...of, frameId: declared.draw.frameId }, of.until);
-  const picks = picksOf(frame.cells);
-  return estimateFromCounts({
+  const { cells, statement } = frame;
+  return estimateOfDraw({
     design: declared.value.design.kind,
-    units: frame.cells.units,
-    picks: lists.flatMap(({ use }) => use.inUse.map(picks)),
-    closedPicks: lists.flatMap(({ use, entries }) => {
-      const closed = new Set([...use.closed, ...use.passedOver].map(({ position }) => position));
-      return entries.filter(({ position }) => closed.has(position)).map(picks);
-    }),
-    counts: new Map([...counts].map(([unit, { inForce }]) => [unit, cellCount(inForce)])),
-    countedBefore: new Map(
-      [...counts].flatMap(([unit, { countedBefore }]) => (countedBefore === null ? [] : [[unit, countedBefore]])),
-    ),
-    countIn: frame.statement.countIn,
-    areaM2: areaOf(frame.statement, frame.cells),
-    level: Number(declared.value.level),
+    units: cells.units,
+    lists: lists.map(({ entries, use }) => ({ entries: entries.slice(0, use.openedTo).map(namedBy(cells)), use })),
+    standing: countsStanding(run, { ...of, frameId: declared.draw.frameId }, of.until),
+    countIn: statement.countIn,
+    areaM2: areaOf(statement, cells),
+    level: declared.value.level,
     limits: declared.value.limits,
   });
 }
@@ -68,17 +58,11 @@ function liveDrawAt(
   );
 }
 
-function picksOf(cells: FrameCells): (entry: Entry) => DrawnPick {
+function namedBy(cells: FrameCells): (entry: Entry) => ListOfDraw["entries"][number] {
   return ({ position, unit }) => {
     const { column, row } = unitAt(cells, unit);
-    return { order: position, unit, label: labelOf(cells, column, row) };
+    return { position, unit, label: labelOf(cells, column, row) };
   };
-}
-
-export function cellCount({ state, value }: Pick<CountPayload, "state" | "value">): CellCount {
-  if (state !== "counted") return { state };
-  if (value === null) throw new RangeError("a counted cell has a number");
-  return { state, value };
 }
 
 function areaOf(statement: NonNullable<RebuiltFrame["statement"]>, cells: FrameCells): number {

@@ -1,3 +1,4 @@
+import { type CountStanding, countsInForce } from "#shared/counts/in-force.ts";
 import type { Entry } from "#shared/draw/draw.ts";
 import { type EntriesInUse, entriesInUse, type FieldAct } from "#shared/field/in-use.ts";
 import { isClosing, type VisitState } from "#shared/field/states.ts";
@@ -21,13 +22,6 @@ export interface ListStanding {
   readonly entries: readonly Entry[];
   readonly acts: readonly ActOfEvent[];
   readonly use: EntriesInUse;
-}
-
-/** First counts of one target by unit, as the events have them. */
-export interface CountStanding {
-  readonly inForce: CountPayload;
-  /** The count in force before it was amended to a closing state, where it was. */
-  readonly countedBefore: number | null;
 }
 
 /**
@@ -101,32 +95,22 @@ function actOf(
   return !isClosing(state) && closed ? { kind: "reopen", unit } : null;
 }
 
-/** First counts of a target on a frame and season by unit, up to an event. */
+/** How each cell stands for a target on a frame and season, told by the events alone up to one of them. */
 export function countsStanding(
   run: ReplayRun,
   where: { readonly frameId: string; readonly seasonId: string; readonly targetId: string },
   until = Number.POSITIVE_INFINITY,
-): Map<number, CountStanding> {
+): Map<number, CountStanding<CountPayload>> {
   const seasonOf = new Map(run.record.visits.map((visit) => [visit.id, visit.seasonId]));
-  const standing = new Map<number, CountStanding>();
-  const events = [...run.events.of("count-entered"), ...run.events.of("count-amended")]
-    .filter(({ sequence }) => sequence <= until)
-    .toSorted((a, b) => a.sequence - b.sequence);
-  for (const { payload } of events) {
-    if (payload.purpose !== "first" || payload.frameId !== where.frameId || payload.targetId !== where.targetId)
-      continue;
-    if (seasonOf.get(payload.visitId) !== where.seasonId) continue;
-    const before = standing.get(payload.unit);
-    standing.set(payload.unit, {
-      inForce: payload,
-      countedBefore: isClosing(payload.state) ? (valueBefore(before) ?? before?.countedBefore ?? null) : null,
-    });
-  }
-  return standing;
-}
-
-/** The number that a count brought into the estimate: 0 for a cell that is not in the population. */
-function valueBefore(before: CountStanding | undefined): number | null {
-  if (before === undefined || isClosing(before.inForce.state)) return null;
-  return before.inForce.state === "not-in-population" ? 0 : before.inForce.value;
+  return countsInForce(
+    [...run.events.of("count-entered"), ...run.events.of("count-amended")]
+      .filter(({ sequence }) => sequence <= until)
+      .toSorted((a, b) => a.sequence - b.sequence)
+      .map(({ payload }) => payload)
+      .filter(({ purpose, frameId, targetId }) => {
+        return purpose === "first" && frameId === where.frameId && targetId === where.targetId;
+      })
+      .filter(({ visitId }) => seasonOf.get(visitId) === where.seasonId)
+      .map((payload) => [payload.unit, payload]),
+  );
 }
