@@ -6,7 +6,7 @@ import type { DrawnPick } from "#shared/estimate/from-counts.ts";
 import { type CsvTable, readCsv } from "#shared/exchange/csv.ts";
 import { Problem } from "#shared/problem.ts";
 
-interface PicksTable {
+export interface PicksTable {
   readonly picks: readonly DrawnPick[];
   readonly counts: ReadonlyMap<number, CellCount>;
   /** The table says which cell each pick is. */
@@ -33,6 +33,7 @@ export function readPicks(bytes: Uint8Array): PicksTable {
   const numbers = new Map<string, number>();
   const counts = new Map<number, CellCount>();
   const picks: DrawnPick[] = [];
+  const orders = new Set<number>();
   table.rows.forEach((row, place) => {
     const line = `Line ${table.lines[place] ?? place + 2}`;
     const label = columns.unit === -1 ? `#${place + 1}` : (row[columns.unit] ?? "").trim();
@@ -48,7 +49,12 @@ export function readPicks(bytes: Uint8Array): PicksTable {
     }
     numbers.set(label, unit);
     counts.set(unit, count);
-    picks.push({ order: orderOf(line, columns.pick === -1 ? "" : (row[columns.pick] ?? ""), place), unit, label });
+    const order = orderOf(line, columns.pick === -1 ? "" : (row[columns.pick] ?? ""), place);
+    if (orders.has(order)) {
+      throw new Problem("table-unreadable", `${line}: pick ${order} stands in an earlier line too. Number picks once.`);
+    }
+    orders.add(order);
+    picks.push({ order, unit, label });
   });
   return { picks, counts, unitsKnown: columns.unit !== -1, notes };
 }

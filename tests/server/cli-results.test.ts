@@ -42,6 +42,67 @@ describe("estimate", () => {
     expect(refusal(await quillet([...start, "srs-wr", "--estimator", "ratio"]), 2)).toContain("not in this version");
   });
 
+  // Counts 1 … 6: mean 3.5, s² = 17.5/5, SE = √(3.5/6) with no correction, total 4 × 3.5.
+  test("with replacement there may be more picks than cells, also where the table names none", async () => {
+    const counts = file("many.csv", "pick,count\n1,1\n2,2\n3,3\n4,4\n5,5\n6,6\n");
+    const start = ["estimate", "--counts", counts, "--units", "4", "--design"];
+    const result = json(await quillet([...start, "srs-wr"]));
+    expect(result).toMatchObject({ n: 6, distinct: null, mean: 3.5, variance: 3.5, total: 14 });
+    expect(result["standardErrorOfMean"]).toBeCloseTo(0.7637626158259734, 12);
+    expect(refusal(await quillet([...start, "srs-wor"]), 1)).toContain("6 cells, and the frame has 4");
+  });
+
+  test("a table that names more cells than the frame has is refused with both numbers", async () => {
+    const counts = file("over.csv", "pick,unit,count\n1,A1,1\n2,A2,2\n3,A3,\n");
+    const ran = await quillet(["estimate", "--counts", counts, "--design", "srs-wr", "--units", "2"]);
+    expect(refusal(ran, 1)).toContain("The table names 3 cells, and --units says that the frame has 2.");
+  });
+
+  // N·(−ln α)/m with m = 3 distinct cells of four picks: 300 × 2.995732/3 one-sided, 300 × (−ln 0.025 = 3.688879)/3 two-sided.
+  test("where every count is zero the upper limits under the Poisson model stand, each named", async () => {
+    const counts = file("zeros.csv", "pick,unit,count\n1,A1,0\n2,B2,0\n3,A1,0\n4,C3,0\n");
+    const ran = await quillet(["estimate", "--counts", counts, "--design", "srs-wr", "--units", "300"]);
+    const limits = json(ran)["limits"] as Record<string, { lower: number; upper: number } | null>;
+    expect(limits).toMatchObject({ t: null, lognormal: null });
+    expect(limits["poissonOneSided"]?.lower).toBe(0);
+    expect(limits["poissonOneSided"]?.upper).toBeCloseTo(299.5732273553991, 9);
+    expect(limits["poissonTwoSided"]?.upper).toBeCloseTo(368.8879454113936, 9);
+    expect(ran.stderr).toBe("");
+  });
+
+  // Four picks are taken to be four cells: 300 × 2.995732/4.
+  test("zeros of cells that the table doesn't name: the limits say what they take for granted", async () => {
+    const counts = file("zeros-unnamed.csv", "pick,count\n1,0\n2,0\n3,0\n4,0\n");
+    const start = ["estimate", "--counts", counts, "--design", "srs-wr", "--units"];
+    const ran = await quillet([...start, "300"]);
+    const limits = json(ran)["limits"] as Record<string, { upper: number }>;
+    expect(limits["poissonOneSided"]?.upper).toBeCloseTo(224.6799205165493, 9);
+    expect(ran.stderr).toContain("each pick is taken to be a cell of its own");
+    const few = await quillet([...start, "3"]);
+    expect(json(few)["limits"]).toEqual({ t: null, lognormal: null });
+    expect(few.stderr).toContain("nobody can say whether every cell was seen");
+  });
+
+  test("no upper limit is made up where something was found or all was counted", async () => {
+    const found = file("found.csv", "pick,count\n1,0\n2,1\n");
+    const whole = file("whole.csv", "pick,count\n1,0\n2,0\n");
+    const start = ["estimate", "--design", "srs-wor", "--units"];
+    expect(Object.keys(json(await quillet([...start, "9", "--counts", found]))["limits"] as object)).toEqual([
+      "t",
+      "lognormal",
+    ]);
+    expect(json(await quillet([...start, "2", "--counts", whole]))["limits"]).toEqual({
+      t: { lower: 0, upper: 0 },
+      lognormal: { lower: 0, upper: 0 },
+    });
+  });
+
+  test("a pick that stands twice is named by its line", async () => {
+    const counts = file("twice.csv", "pick,unit,count\n1,A1,3\n1,A2,4\n");
+    const ran = await quillet(["estimate", "--counts", counts, "--design", "srs-wr", "--units", "20"]);
+    expect(refusal(ran, 1)).toContain("Line 3: pick 1 stands in an earlier line too.");
+  });
+
   test("two counts of one cell are refused", async () => {
     const counts = file("two.csv", "pick,unit,count\n1,A1,3\n2,A1,4\n");
     const ran = await quillet(["estimate", "--counts", counts, "--design", "srs-wr", "--units", "20"]);
