@@ -5,10 +5,11 @@ interface Events {
   events: RecordEvent[];
   newest: { sequence: number; sha256: string };
   keyFingerprint: string;
+  elsewhere: { sameSource: number; sameFrame: number };
   more: boolean;
 }
 
-export function presentEvents({ events, newest, keyFingerprint, more, names }: EventsView): Events {
+export function presentEvents({ events, newest, keyFingerprint, elsewhere, more, names }: EventsView): Events {
   return {
     events: events.map((row) => ({
       sequence: row.sequence,
@@ -21,6 +22,7 @@ export function presentEvents({ events, newest, keyFingerprint, more, names }: E
     })),
     newest: { sequence: newest.sequence, sha256: newest.sha256 },
     keyFingerprint,
+    elsewhere: { ...elsewhere },
     more,
   };
 }

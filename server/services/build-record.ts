@@ -12,6 +12,7 @@ import {
   entriesOf,
   seasonDrawsOf,
 } from "../db/draws.ts";
+import { elsewhereOf } from "../db/elsewhere.ts";
 import { keptEstimatesOf } from "../db/estimates.ts";
 import { allEvents, type EventRow } from "../db/events.ts";
 import { findFrame, framesOf } from "../db/frames.ts";
@@ -34,6 +35,7 @@ export function buildRecord(
     software: { name: "Quillet", version: platform.version },
     survey: surveyPart(db, surveyId),
     publicKey: publicKeyOf(platform.signingKey),
+    elsewhere: elsewhereOf(db, surveyId),
     people: peoplePart(db, surveyId),
     areas: areasOf(db, surveyId).toReversed().map(areaPart),
     frames: framesPart(db, surveyId),

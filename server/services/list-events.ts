@@ -1,5 +1,6 @@
 import { keyFingerprint, publicKeyOf } from "#shared/record/sign.ts";
 import type { Context } from "../context.ts";
+import { type Elsewhere, elsewhereOf } from "../db/elsewhere.ts";
 import { type EventRow, eventsBefore, newestEvent } from "../db/events.ts";
 import { memberNames } from "../db/members.ts";
 
@@ -9,6 +10,7 @@ export interface EventsView {
   readonly events: readonly EventRow[];
   readonly newest: EventRow;
   readonly keyFingerprint: string;
+  readonly elsewhere: Elsewhere;
   readonly more: boolean;
   readonly names: ReadonlyMap<string, string>;
 }
@@ -22,6 +24,7 @@ export function listEvents(ctx: Context, before: number | null): EventsView {
     events: rows.slice(0, EVENTS_A_PAGE),
     newest,
     keyFingerprint: keyFingerprint(publicKeyOf(ctx.signingKey)),
+    elsewhere: elsewhereOf(ctx.db, ctx.surveyId),
     more: rows.length > EVENTS_A_PAGE,
     names: memberNames(ctx.db, ctx.surveyId),
   };

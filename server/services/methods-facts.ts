@@ -59,6 +59,7 @@ export function methodsOf(ctx: Context, view: EstimateView): string {
       number: draw.draw.number,
       picks: declared.design.n,
       reserves: declared.reserves,
+      added: addedTo(view),
       generator: declared.generator,
       seed: state.seed.text,
       seedSource,
@@ -71,6 +72,12 @@ export function methodsOf(ctx: Context, view: EstimateView): string {
     software: { name: "Quillet", version: ctx.version },
   };
   return methodsStatement(facts, result);
+}
+
+/** Entries beyond those that were declared. */
+function addedTo({ lists, declaration }: EstimateView): number {
+  const { reserves } = declaration.declared;
+  return lists.reduce((sum, { entries, picks }) => sum + entries.length - picks - reserves, 0);
 }
 
 /** Draws and declarations of the season that ended without being used. */

@@ -28,6 +28,8 @@ export const listEvents = contract({
       events: z.array(recordEvent),
       newest: z.object({ sequence: z.int(), sha256: sha256Hex }),
       keyFingerprint: sha256Hex,
+      /** Other surveys of this installation with the same boundary file or the same frame. */
+      elsewhere: z.object({ sameSource: z.int(), sameFrame: z.int() }),
       more: z.boolean(),
     }),
   ),

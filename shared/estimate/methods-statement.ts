@@ -31,6 +31,8 @@ export interface MethodsFacts {
     readonly number: number;
     readonly picks: number;
     readonly reserves: number;
+    /** Entries by which the list was lengthened after its reserves were used up. */
+    readonly added: number;
     readonly generator: string;
     readonly seed: string;
     readonly seedSource: { readonly kind: "made-here" } | { readonly kind: "typed"; readonly by: string };
@@ -138,9 +140,14 @@ function drawText(facts: MethodsFacts, result: EstimateResult): string {
   return [
     `The draw was declared on ${dayText(draw.declaredAt)}, after the frame was sealed and before there was a seed, and made on ${dayText(draw.drawnAt)}.`,
     `It is a simple random sample of ${countText(draw.picks, "pick")} ${replacement}, with ${countText(draw.reserves, "reserve")} in the same stream (generator ${code(draw.generator)}).`,
+    draw.added === 0
+      ? ""
+      : `When these were used up the list was lengthened by ${countText(draw.added, "entry", "entries")} of the same stream.`,
     seedText(facts),
     others.length === 0 ? "It is the only draw of this season." : `On record beside it: ${listText(others)}.`,
-  ].join(" ");
+  ]
+    .filter((sentence) => sentence !== "")
+    .join(" ");
 }
 
 function countsText({ counted, countingRule }: MethodsFacts, result: EstimateResult): string {

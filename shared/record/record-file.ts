@@ -183,6 +183,8 @@ export const recordFile = z.strictObject({
   survey,
   /** Ed25519, hexadecimal: signs every event. */
   publicKey: sha256,
+  /** Told by the installation when the record was saved: its other surveys with the same boundary file or frame (rule R7). */
+  elsewhere: z.strictObject({ sameSource: z.int().check(z.gte(0)), sameFrame: z.int().check(z.gte(0)) }),
   people: z.array(z.strictObject({ member: id, name: text, roles: z.array(role) })),
   areas: z.array(area),
   frames: z.array(frame),

@@ -6,6 +6,7 @@ import { readSurvey } from "#shared/api/surveys.ts";
 import { parseRecordFile, type RecordFile } from "#shared/record/record-file.ts";
 import { replay } from "#shared/record/replay.ts";
 import { startTeam, startTestServer, type Team, type TestServer } from "../fixtures/server.ts";
+import { anotherSurvey, putSealedFrame } from "../fixtures/sealed-frame.ts";
 import { runWholeSurvey } from "../fixtures/whole-survey.ts";
 
 let server: TestServer;
@@ -40,6 +41,16 @@ describe("the record file", () => {
     ]);
     expect(record.pickActs.map((act) => act.kind)).toEqual(["close", "close-counted"]);
     expect(record.people.map((person) => person.name).toSorted()).toEqual(["Auditor", "Counter", "Lead", "Planner"]);
+  });
+
+  // R7: the record counts the installation's other surveys with the same boundary file.
+  test("counts the other surveys that began with its boundary file", async () => {
+    expect(record.elsewhere).toEqual({ sameSource: 0, sameFrame: 0 });
+    putSealedFrame(server, (await anotherSurvey(team)).surveyId);
+    expect((await team.auditor.call(listEvents, { params: here() })).json.elsewhere).toEqual({
+      sameSource: 1,
+      sameFrame: 1,
+    });
   });
 
   test("names people and never an address", () => {

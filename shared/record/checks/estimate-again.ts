@@ -41,7 +41,7 @@ export function estimateAgain(run: ReplayRun, of: EstimateOf): EstimateResult | 
 }
 
 /** The newest draw of the season that was made and not withdrawn at that event. */
-function liveDrawAt(
+export function liveDrawAt(
   run: ReplayRun,
   { seasonId, until }: EstimateOf,
 ): (Declared & { readonly draw: StoredDraw }) | null {

@@ -15,7 +15,7 @@ import {
   verdict,
 } from "./check.ts";
 import { placesOf, said } from "./counts.ts";
-import { type EstimateOf, estimateAgain } from "./estimate-again.ts";
+import { type EstimateOf, estimateAgain, liveDrawAt } from "./estimate-again.ts";
 
 type Kept = RecordFile["estimates"][number];
 
@@ -61,7 +61,17 @@ function checkKept(run: ReplayRun, kept: Kept, id: string, title: string): Check
     () => differ("settings, limits", kept.settings["limits"], again.declaredLimits),
     () => differ("settings, level", Number(kept.settings["level"]), again.level),
   ]);
-  return verdict(id, title, difference, inWords(again));
+  return verdict(id, title, difference, `${inWords(again)}${chosenLate(run, kept, event?.sequence ?? 0)}`);
+}
+
+/** Rule R7: what was declared after the first count of its season is said to be chosen after counts were seen. */
+function chosenLate(run: ReplayRun, { seasonId, targetId }: Kept, until: number): string {
+  const live = liveDrawAt(run, { seasonId, targetId, until });
+  const declared = run.events.of("draw-declared").find(({ payload }) => payload.declarationId === live?.stored.id);
+  const seasonOf = new Map(run.record.visits.map((visit) => [visit.id, visit.seasonId]));
+  const first = run.events.of("count-entered").find(({ payload }) => seasonOf.get(payload.visitId) === seasonId);
+  if (declared === undefined || first === undefined || declared.sequence < first.sequence) return "";
+  return `. Limits and level were declared in event ${declared.sequence}, after the first count in event ${first.sequence}: chosen after counts were seen`;
 }
 
 /** An event of an estimate that the list leaves out. */

@@ -30,8 +30,23 @@ function compare(run: ReplayRun, { name, stored, value }: Declared): Difference 
   ]);
 }
 
-function detail(run: ReplayRun, { stored, value }: Declared): string {
+function detail(run: ReplayRun, declared: Declared): string {
+  const { stored, value } = declared;
   if (stored.seed === null || value === null) return "Its declaration is not the one that was sealed.";
   const name = nameOf(run.record, stored.seed.member);
-  return `${quotedSeed(stored.seed.text)}. ${seedSourceSentence(value.seedSource, name)}`;
+  return `${quotedSeed(stored.seed.text)}. ${seedSourceSentence(value.seedSource, name)}${usedBefore(run, declared)}`;
+}
+
+/** Names the earlier declarations whose list begins with the same cells, since frame, generator and seed are the same. */
+function usedBefore(run: ReplayRun, { stored, value, seed }: Declared): string {
+  const all = declaredOf(run.record, run.events);
+  const same = all
+    .slice(
+      0,
+      all.findIndex((one) => one.stored.id === stored.id),
+    )
+    .filter((one) => one.seed === seed && one.value?.frameSha256 === value?.frameSha256)
+    .filter((one) => one.value !== null && one.value.generator === value?.generator)
+    .map(({ name }) => name);
+  return same.length === 0 ? "" : ` The same seed on the same frame as ${same.join(" and ")}: the same cells.`;
 }

@@ -42,8 +42,17 @@ export function checkTold(run: ReplayRun): Check[] {
     counted(draws.length, "draw"),
     `${withdrawn} withdrawn`,
     `${abandoned} abandoned`,
-  ];
-  return [verdict("told", TITLE, difference, detail.join(", "))];
+  ].join(", ");
+  return [verdict("told", TITLE, difference, `${detail}. ${elsewhere(run)}`)];
+}
+
+/** Rule R7: what the installation said of its other surveys; no event holds it, and no record can prove it. */
+function elsewhere({ record }: ReplayRun): string {
+  const { sameSource, sameFrame } = record.elsewhere;
+  if (sameSource + sameFrame === 0)
+    return "The installation tells of no other survey with this boundary file or frame.";
+  const file = `${counted(sameSource, "other survey")} with the same boundary file`;
+  return `The installation tells of ${file}, ${sameFrame} with the same frame: draws there are not in this record.`;
 }
 
 /** What an event tells of and its list leaves out. */

@@ -3,7 +3,7 @@ import { readRecordFile, type RecordEvent } from "#shared/api/record.ts";
 import { addressOf } from "../../api/call.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
-import { formatCount, formatDay } from "../../components/ui/format.ts";
+import { formatCount, type Times } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { HashBlock } from "../../components/ui/HashBlock.tsx";
 import { MarginNote } from "../../components/ui/MarginNote.tsx";
@@ -12,6 +12,7 @@ import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { Timeline } from "../../components/ui/Timeline.tsx";
 import { TimelineDay } from "../../components/ui/TimelineDay.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { EventLine } from "./EventLine.tsx";
 import { storyLines } from "./event-story.ts";
 import { useEvents } from "./queries.ts";
@@ -23,6 +24,7 @@ interface RecordStageProps {
 
 /** The story of the record, newest first, and what proves it: newest hash, key, record file, the way to replay. */
 export function RecordStage({ surveyId, replayTo }: RecordStageProps) {
+  const times = useTimes();
   const events = useEvents(surveyId);
   if (events.isPending) {
     return (
@@ -43,11 +45,11 @@ export function RecordStage({ surveyId, replayTo }: RecordStageProps) {
   return (
     <ReadingPage
       title={`${formatCount(head.newest.sequence, "event")} in one unbroken chain.`}
-      lead="Each event holds the hash of the one before and is signed. What was withdrawn, closed or amended stays readable. All times in UTC."
+      lead={`Each event holds the hash of the one before and is signed. What was withdrawn, closed or amended stays readable. Times on the clock of ${times.zone}; the record file holds them in UTC.`}
       margin={<RecordMargin surveyId={surveyId} replayTo={replayTo} head={head} />}
     >
       <Timeline label="Events, newest first">
-        {daysOf(shown).map(({ day, events: ofDay }) => (
+        {daysOf(shown, times).map(({ day, events: ofDay }) => (
           <Day key={day} day={day} events={ofDay} />
         ))}
       </Timeline>
@@ -65,6 +67,7 @@ interface MarginProps extends RecordStageProps {
   readonly head: {
     readonly newest: { readonly sequence: number; readonly sha256: string };
     readonly keyFingerprint: string;
+    readonly elsewhere: { readonly sameSource: number; readonly sameFrame: number };
   };
 }
 
@@ -92,11 +95,24 @@ function RecordMargin({ surveyId, replayTo, head }: MarginProps) {
           Ed25519, fingerprint <Hash value={head.keyFingerprint} label="key fingerprint" />.
         </p>
       </MarginNote>
+      {head.elsewhere.sameSource > 0 && (
+        <MarginNote title="The same boundary elsewhere">
+          <p>{elsewhereText(head.elsewhere)}</p>
+        </MarginNote>
+      )}
       <MarginNote title="What no record shows">
         <p>That a cell was truly visited, or that this server’s clock was right.</p>
       </MarginNote>
     </>
   );
+}
+
+function elsewhereText({ sameSource, sameFrame }: MarginProps["head"]["elsewhere"]): string {
+  const frames =
+    sameFrame === 0
+      ? "none with the same frame"
+      : `${formatCount(sameFrame, "of them", "of them")} with the same frame`;
+  return `${formatCount(sameSource, "other survey")} of this installation began with this boundary file, ${frames}. Their draws are in their own records.`;
 }
 
 function Day({ day, events }: { readonly day: string; readonly events: readonly RecordEvent[] }) {
@@ -110,10 +126,10 @@ function Day({ day, events }: { readonly day: string; readonly events: readonly 
   );
 }
 
-function daysOf(events: readonly RecordEvent[]): { day: string; events: RecordEvent[] }[] {
+function daysOf(events: readonly RecordEvent[], times: Times): { day: string; events: RecordEvent[] }[] {
   const days: { day: string; events: RecordEvent[] }[] = [];
   for (const event of events) {
-    const day = formatDay(event.at);
+    const day = times.day(event.at);
     const last = days.at(-1);
     if (last?.day === day) last.events.push(event);
     else days.push({ day, events: [event] });

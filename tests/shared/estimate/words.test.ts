@@ -216,6 +216,7 @@ describe("the methods statement", () => {
       number: 1,
       picks: 5,
       reserves: 5,
+      added: 2,
       generator: "sha256-counter",
       seed: "007`x",
       seedSource: { kind: "typed", by: "Ines" },
@@ -235,6 +236,7 @@ describe("the methods statement", () => {
     expect(text).toContain("version 2, sealed on 1 June 2031, is a grid of 20 × 20 m cells");
     expect(text).toContain("The estimate speaks for 2.00 ha.");
     expect(text).toContain("was chosen by Ines; nothing shows that only one was tried.");
+    expect(text).toContain("lengthened by 2 entries of the same stream");
     expect(text).toContain("1 other draw withdrawn");
     expect(text).toContain("variance N² · s² / n");
     expect(text).toContain("chosen after counts were seen");

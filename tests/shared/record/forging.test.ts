@@ -300,3 +300,35 @@ describe("a list that ran short", () => {
     expect(check.detail).toContain("entries after: the record says 15; expected 12");
   });
 });
+
+describe("what is told beside a check that passes", () => {
+  const detailOf = (record: RecordFile, id: string): string =>
+    found(replay(record).checks.find((check) => check.id === id)).detail;
+
+  // R7: a draw that was declared after the first count of its season.
+  test("limits that were declared after a count are said to be chosen after counts were seen", () => {
+    const record = goodRecord();
+    expect(detailOf(record, "estimate-1")).not.toContain("chosen after");
+    const late = goodRecord((draft) => {
+      moveBefore(draft, actOf(draft, "count-entered"), actOf(draft, "draw-declared", 2));
+    });
+    expect(detailOf(late, "estimate-1")).toContain("chosen after counts were seen");
+  });
+
+  test("a seed that an earlier declaration on the frame had is pointed out", () => {
+    const again = goodRecord((draft) => {
+      const first = found(draft.record.declarations[0]);
+      const second = found(draft.record.declarations[1]);
+      actOf(draft, "seed-given", 1).payload["seed"] = found(first.seed ?? undefined).text;
+      found(second.seed ?? undefined).text = found(first.seed ?? undefined).text;
+    });
+    expect(detailOf(again, "seed-2")).toContain("The same seed on the same frame as draw 1: the same cells.");
+    expect(detailOf(again, "seed-3")).not.toContain("The same seed");
+  });
+
+  test("other surveys with the same boundary file are told", () => {
+    expect(detailOf(goodRecord(), "told")).toContain(
+      "1 other survey with the same boundary file, 0 with the same frame",
+    );
+  });
+});
