@@ -29,13 +29,15 @@ export function openDb(file: string) {
   sqlite.pragma("recursive_triggers = ON"); // so that REPLACE meets the DELETE triggers
   const db = drizzle({ client: sqlite, schema, casing: "snake_case" });
 
-  dropTriggers(sqlite);
   sqlite.pragma("foreign_keys = OFF"); // a table rebuild would delete the rows that point at it
-  migrate(db, { migrationsFolder: join(projectRoot(), "drizzle") });
+  if (migrationsPending(sqlite)) {
+    dropTriggers(sqlite);
+    migrate(db, { migrationsFolder: MIGRATIONS });
+  }
   const broken = sqlite.pragma("foreign_key_check") as unknown[];
   if (broken.length > 0) throw new Error(`${broken.length} foreign keys are broken after the migration of ${file}`);
   sqlite.pragma("foreign_keys = ON");
-  sqlite.exec(readFileSync(join(projectRoot(), "server/db/triggers.sql"), "utf8"));
+  setTriggers(sqlite);
   return db;
 }
 
@@ -46,6 +48,26 @@ export function writeTx<T>(db: Db, work: (tx: Tx) => T): T {
 
 export function closeDb(db: Db): void {
   db.$client.close();
+}
+
+const MIGRATIONS = join(projectRoot(), "drizzle");
+
+function migrationsPending(sqlite: Database.Database): boolean {
+  const journal = JSON.parse(readFileSync(join(MIGRATIONS, "meta/_journal.json"), "utf8")) as { entries: unknown[] };
+  const known = sqlite.prepare("SELECT 1 FROM sqlite_master WHERE name = '__drizzle_migrations'").get();
+  const made = known === undefined ? 0 : sqlite.prepare("SELECT count(*) FROM __drizzle_migrations").pluck().get();
+  return made !== journal.entries.length;
+}
+
+/** All at once, so that no other process that has the file open ever writes without them. */
+function setTriggers(sqlite: Database.Database): void {
+  const triggers = readFileSync(join(projectRoot(), "server/db/triggers.sql"), "utf8");
+  sqlite
+    .transaction(() => {
+      dropTriggers(sqlite);
+      sqlite.exec(triggers);
+    })
+    .immediate();
 }
 
 function dropTriggers(sqlite: Database.Database): void {
