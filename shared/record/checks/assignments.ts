@@ -32,8 +32,8 @@ export function checkAssignments(run: ReplayRun): Check[] {
   }
   const places = placesOf(run);
   const byVisit = new Map(assignments.map((one) => [one.visitId, one]));
-  const difference = firstDifference(
-    visits.map((visit) => (): Difference | null => {
+  const difference = firstDifference([
+    ...visits.map((visit) => (): Difference | null => {
       const expected = last.get(`${visit.frameId} ${visit.unit}`);
       const found = byVisit.get(visit.id);
       const where = places.get(visit.id) ?? visit.id;
@@ -44,6 +44,7 @@ export function checkAssignments(run: ReplayRun): Check[] {
         () => differ(`${where}, given at`, found?.assignedAt, expected?.at),
       ]);
     }),
-  );
+    () => differ("cells given to somebody", assignments.length, byVisit.size),
+  ]);
   return [verdict("assignments", TITLE, difference, `${counted(assignments.length, "cell")} given to somebody`)];
 }

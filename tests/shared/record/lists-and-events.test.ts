@@ -154,3 +154,13 @@ test("a draw made and then named abandoned is still live for the next declaratio
   const check = report.checks.find(({ id }) => id === "order");
   expect(check?.detail).toContain("while draw 1 was live");
 });
+
+test("a cell that is given twice is named", () => {
+  const check = onlyIn(({ assignments }) => {
+    assignments.unshift({ ...found(assignments[0]), member: found(assignments[0]).member, day: "Tuesday" });
+  });
+  expect(check).toMatchObject({
+    id: "assignments",
+    difference: { where: "cells given to somebody", found: "2", expected: "1" },
+  });
+});
