@@ -1,6 +1,8 @@
 import { useMutationState } from "@tanstack/react-query";
 import { Link } from "react-router-dom";
+import { problemOf } from "../api/problem-of.ts";
 import { Menu } from "../components/ui/Menu.tsx";
+import { useTimes } from "../components/ui/use-times.ts";
 import { useSession, useSignOut } from "../features/accounts/queries.ts";
 import { paths } from "./paths.ts";
 
@@ -11,20 +13,20 @@ interface HeaderEndProps {
   readonly links?: boolean;
 }
 
-/** The time of the last act on this page that was kept, on the clock of whoever reads it. */
+/** The time of the last act that was kept. */
 function Kept() {
-  const times = useMutationState({
+  const times = useTimes();
+  const kept = useMutationState({
     filters: { status: "success", predicate: (mutation) => mutation.meta?.keeps === true },
     select: (mutation) => mutation.state.submittedAt,
   });
-  const last = Math.max(0, ...times);
+  const last = Math.max(0, ...kept);
   if (last === 0) return null;
-  const at = new Date(last);
-  const two = (value: number) => String(value).padStart(2, "0");
+  const at = new Date(last).toISOString();
   return (
-    <span role="status">
-      Kept {two(at.getHours())}:{two(at.getMinutes())}
-    </span>
+    <time role="status" dateTime={at} title={times.time(at)}>
+      {`Kept ${times.timeOfDay(at)}${times.zone === "UTC" ? " UTC" : ""}`}
+    </time>
   );
 }
 
@@ -39,6 +41,7 @@ export function HeaderEnd({ roles, links = false }: HeaderEndProps) {
   const name = roles === undefined || roles === "" ? account.name : `${account.name}, ${roles}`;
   return (
     <>
+      {signOut.isError && <span role="alert">{`You are still signed in. ${problemOf(signOut.error).title}.`}</span>}
       <Kept />
       {links && (
         <Link to={paths.replay} className="q-header-link">

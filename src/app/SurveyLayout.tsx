@@ -1,22 +1,29 @@
-import { Link, Outlet, useLocation, useParams } from "react-router-dom";
+import { Link, Outlet, useLocation, useMatch, useParams } from "react-router-dom";
 import { ownerMay, reach } from "#shared/access/table.ts";
-import type { Survey } from "#shared/api/surveys.ts";
+import { STAGES, type Survey } from "#shared/api/surveys.ts";
+import { problemOf } from "../api/problem-of.ts";
 import { AppShell } from "../components/ui/AppShell.tsx";
 import { Button } from "../components/ui/Button.tsx";
 import { ButtonLink } from "../components/ui/ButtonLink.tsx";
 import { formatList } from "../components/ui/format.ts";
 import { Refusal } from "../components/ui/Refusal.tsx";
 import { RuledLoading } from "../components/ui/RuledLoading.tsx";
+import { TimeZoneContext } from "../components/ui/use-times.ts";
 import { useSurvey } from "../features/surveys/queries.ts";
 import { CurrentSurveyContext } from "./current-survey.ts";
 import { DemoNotice } from "./DemoNotice.tsx";
 import { HeaderEnd } from "./HeaderEnd.tsx";
 import { NotForRole } from "./NotForRole.tsx";
-import { paths } from "./paths.ts";
+import { paths, patterns } from "./paths.ts";
 import { PlainShell } from "./PlainShell.tsx";
 import { STAGE_NAMES, stations } from "./stages.ts";
 import { useAccount } from "./use-account.ts";
 import { useDemo } from "./use-demo.ts";
+
+/** The survey is not there for this person; any other failure leaves the page, and what is typed on it, as it is. */
+function isGone(error: Error | null): boolean {
+  return error !== null && [403, 404].includes(problemOf(error).status);
+}
 
 /** Header, rail and page of one survey; its pages find the survey with useCurrentSurvey. */
 export function SurveyLayout() {
@@ -25,6 +32,9 @@ export function SurveyLayout() {
   const account = useAccount();
   const { pathname } = useLocation();
   const onPeople = pathname === paths.people(surveyId);
+  if (survey.data !== undefined && !isGone(survey.error)) {
+    return <LoadedSurvey survey={survey.data} onPeople={onPeople} />;
+  }
   if (survey.isPending) {
     return (
       <PlainShell here="Survey" crumbs={[{ label: "Surveys", to: paths.surveys }]}>
@@ -34,53 +44,52 @@ export function SurveyLayout() {
       </PlainShell>
     );
   }
-  if (survey.isError) {
-    const asOwner = onPeople && account.isOwner && ownerMay("people.change");
-    return (
-      <PlainShell here="Survey" crumbs={[{ label: "Surveys", to: paths.surveys }]}>
-        {asOwner ? (
-          <Outlet />
-        ) : (
-          <div className="grid max-w-160 gap-4 p-8">
-            <Refusal error={survey.error} next={<Button onClick={() => void survey.refetch()}>Try again</Button>} />
-            <ButtonLink to={paths.surveys}>To the surveys</ButtonLink>
-          </div>
-        )}
-      </PlainShell>
-    );
-  }
-  return <LoadedSurvey survey={survey.data} onPeople={onPeople} />;
+  const asOwner = onPeople && account.isOwner && ownerMay("people.change");
+  return (
+    <PlainShell here="Survey" crumbs={[{ label: "Surveys", to: paths.surveys }]}>
+      {asOwner ? (
+        <Outlet />
+      ) : (
+        <div className="grid max-w-160 gap-4 p-8">
+          <Refusal error={survey.error} next={<Button onClick={() => void survey.refetch()}>Try again</Button>} />
+          <ButtonLink to={paths.surveys}>To the surveys</ButtonLink>
+        </div>
+      )}
+    </PlainShell>
+  );
 }
 
 function LoadedSurvey({ survey, onPeople }: { readonly survey: Survey; readonly onPeople: boolean }) {
-  const { pathname } = useLocation();
   const demo = useDemo();
-  const stage = Object.keys(STAGE_NAMES).find((name) => pathname === `${paths.survey(survey.id)}/${name}`);
+  const part = useMatch(patterns.stage)?.params.stage ?? "";
+  const stage = STAGES.find((name) => name === part);
   const seen = stations(survey.id, survey.roles, survey.stages);
   const mayRead = stage === undefined || seen.some((station) => station.id === stage);
-  const pageName = onPeople ? "People" : stage === undefined ? "" : STAGE_NAMES[stage as keyof typeof STAGE_NAMES];
+  const pageName = onPeople ? "People" : stage === undefined ? "" : STAGE_NAMES[stage];
   return (
     <CurrentSurveyContext value={survey}>
-      <title>{`${pageName === "" ? "" : `${pageName}, `}${survey.name} · Quillet`}</title>
-      <AppShell
-        home={paths.home}
-        crumbs={[{ label: "Surveys", to: paths.surveys }]}
-        here={survey.name}
-        hereNote={`${survey.target}, season ${survey.season}`}
-        end={<HeaderEnd roles={formatList(survey.roles)} />}
-        notice={demo ? <DemoNotice /> : undefined}
-        stages={seen}
-        {...(stage !== undefined && { currentStage: stage })}
-        railFoot={
-          reach(survey.roles, "people.see") === "none" ? undefined : (
-            <Link to={paths.people(survey.id)} aria-current={onPeople ? "page" : undefined}>
-              People
-            </Link>
-          )
-        }
-      >
-        {mayRead ? <Outlet /> : <NotForRole survey={survey} stage={pageName} first={seen[0]?.to ?? paths.surveys} />}
-      </AppShell>
+      <TimeZoneContext value={survey.timeZone}>
+        <title>{`${pageName === "" ? "" : `${pageName}, `}${survey.name} · Quillet`}</title>
+        <AppShell
+          home={paths.home}
+          crumbs={[{ label: "Surveys", to: paths.surveys }]}
+          here={survey.name}
+          hereNote={`${survey.target}, season ${survey.season}`}
+          end={<HeaderEnd roles={formatList(survey.roles)} />}
+          notice={demo ? <DemoNotice /> : undefined}
+          stages={seen}
+          {...(stage !== undefined && { currentStage: stage })}
+          railFoot={
+            reach(survey.roles, "people.see") === "none" ? undefined : (
+              <Link to={paths.people(survey.id)} aria-current={onPeople ? "page" : undefined}>
+                People
+              </Link>
+            )
+          }
+        >
+          {mayRead ? <Outlet /> : <NotForRole survey={survey} stage={pageName} first={seen[0]?.to ?? paths.surveys} />}
+        </AppShell>
+      </TimeZoneContext>
     </CurrentSurveyContext>
   );
 }

@@ -6,6 +6,7 @@ export const patterns = {
   surveys: "/surveys",
   newSurvey: "/surveys/new",
   survey: "/surveys/:surveyId",
+  stage: "/surveys/:surveyId/:stage",
   people: "/surveys/:surveyId/people",
   account: "/account",
   replay: "/replay",

@@ -65,46 +65,63 @@ export function formatSeed(seed: string): string {
   return `"${seed}"`;
 }
 
-const MONTHS = [
-  "January",
-  "February",
-  "March",
-  "April",
-  "May",
-  "June",
-  "July",
-  "August",
-  "September",
-  "October",
-  "November",
-  "December",
-];
-
-function two(value: number): string {
-  return String(value).padStart(2, "0");
+/** Instants (ISO 8601 text) on the clock of one time zone. Each throws RangeError for what is no time. */
+export interface Times {
+  /** The zone's name: "Europe/Paris"; "UTC" where this browser does not know it. */
+  readonly zone: string;
+  /** Day and time with the zone's abbreviation: "3 June 2031, 11:12 CEST". */
+  readonly time: (iso: string) => string;
+  /** "3 June 2031" */
+  readonly day: (iso: string) => string;
+  /** "11:12", where the zone is said once beside it. */
+  readonly timeOfDay: (iso: string) => string;
 }
 
-function instant(iso: string): Date {
-  const date = new Date(iso);
-  if (Number.isNaN(date.getTime())) throw new RangeError(`cannot read "${iso}" as a time`);
-  return date;
+/** The one way from an instant to what is read on screen. */
+export function timesIn(timeZone: string): Times {
+  const clock = clockOf(timeZone);
+  const partsOf = (iso: string) => {
+    const date = new Date(iso);
+    if (Number.isNaN(date.getTime())) throw new RangeError(`cannot read "${iso}" as a time`);
+    const parts = clock.formatToParts(date);
+    return (type: Intl.DateTimeFormatPartTypes) => parts.find((part) => part.type === type)?.value ?? "";
+  };
+  const day = (iso: string) => {
+    const part = partsOf(iso);
+    return `${part("day")} ${part("month")} ${part("year")}`;
+  };
+  const timeOfDay = (iso: string) => {
+    const part = partsOf(iso);
+    return `${part("hour")}:${part("minute")}`;
+  };
+  // Zones without an abbreviation of their own come as "GMT-4".
+  const abbreviation = (iso: string) =>
+    partsOf(iso)("timeZoneName")
+      .replace(/^GMT(?=[+-])/, "UTC")
+      .replace("-", "\u2212");
+  return {
+    zone: clock.resolvedOptions().timeZone,
+    day,
+    timeOfDay,
+    time: (iso) => `${day(iso)}, ${timeOfDay(iso)} ${abbreviation(iso)}`,
+  };
 }
 
-/** The day in UTC: "3 June 2031". */
-export function formatDay(iso: string): string {
-  const date = instant(iso);
-  return `${date.getUTCDate()} ${MONTHS[date.getUTCMonth()] ?? ""} ${date.getUTCFullYear()}`;
-}
-
-/** The time of day in UTC, without saying so: "09:12", for a column whose head says UTC. */
-export function formatTimeOfDay(iso: string): string {
-  const date = instant(iso);
-  return `${two(date.getUTCHours())}:${two(date.getUTCMinutes())}`;
-}
-
-/** Day and time in UTC, as on records: "3 June 2031, 09:12 UTC". */
-export function formatTime(iso: string): string {
-  return `${formatDay(iso)}, ${formatTimeOfDay(iso)} UTC`;
+function clockOf(timeZone: string): Intl.DateTimeFormat {
+  const shown = {
+    year: "numeric",
+    month: "long",
+    day: "numeric",
+    hour: "2-digit",
+    minute: "2-digit",
+    hourCycle: "h23",
+    timeZoneName: "short",
+  } as const;
+  try {
+    return new Intl.DateTimeFormat("en-GB", { ...shown, timeZone });
+  } catch {
+    return new Intl.DateTimeFormat("en-GB", { ...shown, timeZone: "UTC" });
+  }
 }
 
 /** A file's size: "41 KB", "2.3 MB" (powers of 1 000). */

@@ -1,7 +1,8 @@
 import { readAreaFile, type AreaVersion } from "#shared/api/area.ts";
 import { addressOf } from "../../api/call.ts";
-import { formatBytes, formatTime } from "../../components/ui/format.ts";
+import { formatBytes } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { AreaVersions } from "./AreaVersions.tsx";
 import { FileRow } from "./FileRow.tsx";
 import { ImportReportList } from "./ImportReportList.tsx";
@@ -17,6 +18,7 @@ interface AreaPanelProps {
 
 /** One version of the study area: its file, the import report, and the other versions. */
 export function AreaPanel({ surveyId, areas, shown, onShow, onReplace, mayReadFiles }: AreaPanelProps) {
+  const times = useTimes();
   const { report } = shown;
   return (
     <>
@@ -35,7 +37,7 @@ export function AreaPanel({ surveyId, areas, shown, onShow, onReplace, mayReadFi
         <Hash value={report.sha256} label="hash of the file" />
       </FileRow>
       <p className="q-help">
-        Imported {formatTime(shown.importedAt)} by {shown.importedBy}.{" "}
+        Imported {times.time(shown.importedAt)} by {shown.importedBy}.{" "}
         {mayReadFiles && (
           <a href={addressOf(readAreaFile, { params: { surveyId, areaId: shown.id } })} download="">
             Original file

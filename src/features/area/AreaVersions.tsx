@@ -1,7 +1,8 @@
 import { readAreaFile, type AreaVersion } from "#shared/api/area.ts";
 import { addressOf } from "../../api/call.ts";
 import { Fold } from "../../components/ui/Fold.tsx";
-import { formatArea, formatDay } from "../../components/ui/format.ts";
+import { formatArea } from "../../components/ui/format.ts";
+import { useTimes } from "../../components/ui/use-times.ts";
 
 interface AreaVersionsProps {
   readonly surveyId: string;
@@ -13,6 +14,7 @@ interface AreaVersionsProps {
 
 /** Every boundary that was ever imported; frames stay with the one they were made on. */
 export function AreaVersions({ surveyId, areas, shown, onShow, mayRead }: AreaVersionsProps) {
+  const times = useTimes();
   return (
     <div className="mt-4">
       <Fold quiet title="Versions" aside={`${areas.length}`} open={areas.length > 1}>
@@ -22,7 +24,7 @@ export function AreaVersions({ surveyId, areas, shown, onShow, mayRead }: AreaVe
               <span>
                 <b>Version {area.number}</b>, {formatArea(area.report.geodesicAreaM2)}
                 <br />
-                {area.report.fileName}, {formatDay(area.importedAt)}, {area.importedBy}
+                {area.report.fileName}, {times.day(area.importedAt)}, {area.importedBy}
               </span>
               <span>
                 {area.id === shown ? (

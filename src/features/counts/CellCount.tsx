@@ -3,9 +3,9 @@ import type { CountEntry } from "#shared/api/counts.ts";
 import type { Visit } from "#shared/api/field.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
-import { formatTime } from "../../components/ui/format.ts";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { AmendCount } from "./AmendCount.tsx";
 import { EnterCount } from "./EnterCount.tsx";
 import { saidText } from "./said-text.ts";
@@ -23,6 +23,7 @@ interface CellCountProps {
 
 /** What opens below a cell: the entry form, or what was written down with its history and the way to amend it. */
 export function CellCount({ surveyId, visit, target, mayEnter, mayAmend, onSaved }: CellCountProps) {
+  const times = useTimes();
   const [amending, setAmending] = useState(false);
   const { count } = visit;
   if (count.state === "not-visited") {
@@ -43,7 +44,7 @@ export function CellCount({ surveyId, visit, target, mayEnter, mayAmend, onSaved
   return (
     <div className="grid gap-3 py-3">
       <p>
-        {`${saidText(count.state === "counted" ? { state: "counted", value: count.value } : { state: count.state }, target.plural)}, by ${count.by}, ${formatTime(count.at)}${count.amended ? ", amended" : ""}.`}
+        {`${saidText(count.state === "counted" ? { state: "counted", value: count.value } : { state: count.state }, target.plural)}, by ${count.by}, ${times.time(count.at)}${count.amended ? ", amended" : ""}.`}
         {count.note !== "" && ` “${count.note}”`}
       </p>
       {mayAmend && (
@@ -69,6 +70,7 @@ function Entries({
   readonly visitId: string;
   readonly plural: string;
 }) {
+  const times = useTimes();
   const entries = useEntries(surveyId, visitId);
   if (entries.data === undefined) {
     return entries.error === null ? <RuledLoading label="Loading the entries" /> : <Refusal error={entries.error} />;
@@ -78,7 +80,7 @@ function Entries({
       {entries.data.map((entry) => (
         <li key={entry.id}>
           <b>{saidText(saidIn(entry), plural)}</b>
-          {`, by ${entry.observer}, ${formatTime(entry.madeAt)}`}
+          {`, by ${entry.observer}, ${times.time(entry.madeAt)}`}
           {entry.reason !== "" && `. Amended: “${entry.reason}”`}
           {entry.note !== "" && `. “${entry.note}”`}
         </li>

@@ -1,12 +1,12 @@
 import { useState } from "react";
 import type { Visit } from "#shared/api/field.ts";
 import { useVisits } from "../../api/visits.ts";
-import { isSettled, markOf } from "../../api/visit-words.ts";
+import { isVisited, markOf } from "../../api/visit-words.ts";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import type { DataColumn } from "../../components/ui/data-column.ts";
 import { DataTable } from "../../components/ui/DataTable.tsx";
 import { EmptyState } from "../../components/ui/EmptyState.tsx";
-import { formatAsIs, formatCount, formatNumber, formatTime } from "../../components/ui/format.ts";
+import { formatAsIs, formatCount, formatNumber, type Times } from "../../components/ui/format.ts";
 import { Ledger } from "../../components/ui/Ledger.tsx";
 import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
@@ -14,6 +14,7 @@ import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { Section } from "../../components/ui/Section.tsx";
 import { VISIT_STATE_WORDS, type VisitMarkState } from "../../components/ui/visit-states.ts";
 import { VisitStateLabel } from "../../components/ui/VisitStateLabel.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { VISIT_COLUMNS } from "../../components/visits/visit-columns.tsx";
 import { CellCount } from "./CellCount.tsx";
 import { ImportCounts } from "./ImportCounts.tsx";
@@ -53,12 +54,13 @@ export function CountsStage(props: CountsStageProps) {
 }
 
 function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }) {
+  const times = useTimes();
   const [open, setOpen] = useState<string | null>(null);
   const { visits } = data;
-  const settled = visits.filter(isSettled).length;
+  const settled = visits.filter(isVisited).length;
   const openNext = (after: string) => {
     const place = visits.findIndex(({ id }) => id === after);
-    const next = [...visits.slice(place + 1), ...visits.slice(0, place)].find((visit) => !isSettled(visit));
+    const next = [...visits.slice(place + 1), ...visits.slice(0, place)].find((visit) => !isVisited(visit));
     setOpen(next?.id ?? null);
   };
   return (
@@ -69,7 +71,7 @@ function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }
     >
       <DataTable
         caption="Cells and their counts"
-        columns={columnsFor(props.target.plural)}
+        columns={columnsFor(props.target.plural, times)}
         rows={visits}
         rowId={(visit) => visit.id}
         chosen={open}
@@ -87,7 +89,7 @@ function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }
   );
 }
 
-function columnsFor(plural: string): DataColumn<Visit>[] {
+function columnsFor(plural: string, times: Times): DataColumn<Visit>[] {
   return [
     ...VISIT_COLUMNS,
     {
@@ -110,7 +112,7 @@ function columnsFor(plural: string): DataColumn<Visit>[] {
         count.state === "not-visited" ? (
           ""
         ) : (
-          <span className="whitespace-nowrap">{`${count.by}, ${formatTime(count.at)}${count.amended ? ", amended" : ""}`}</span>
+          <span className="whitespace-nowrap">{`${count.by}, ${times.time(count.at)}${count.amended ? ", amended" : ""}`}</span>
         ),
     },
   ];

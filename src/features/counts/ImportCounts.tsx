@@ -4,10 +4,11 @@ import { Banner } from "../../components/ui/Banner.tsx";
 import { Button } from "../../components/ui/Button.tsx";
 import { Checkbox } from "../../components/ui/Checkbox.tsx";
 import { FileDrop } from "../../components/ui/FileDrop.tsx";
-import { formatCount, formatList, formatTime } from "../../components/ui/format.ts";
+import { formatCount, formatList } from "../../components/ui/format.ts";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { Section } from "../../components/ui/Section.tsx";
 import { showToast } from "../../components/ui/show-toast.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { ColumnChoice, type Columns } from "./ColumnChoice.tsx";
 import { useImportCounts } from "./queries.ts";
 import { VerdictTable } from "./VerdictTable.tsx";
@@ -88,6 +89,7 @@ export function ImportCounts({ surveyId, targetId }: ImportCountsProps) {
 }
 
 function Told({ verdict }: { readonly verdict: ImportVerdict }) {
+  const times = useTimes();
   return (
     <>
       {verdict.written && (
@@ -96,7 +98,7 @@ function Told({ verdict }: { readonly verdict: ImportVerdict }) {
         </Banner>
       )}
       {verdict.importedBefore !== null && !verdict.written && (
-        <Banner title={`The same file was read in ${formatTime(verdict.importedBefore)}.`}>
+        <Banner title={`The same file was read in ${times.time(verdict.importedBefore)}.`}>
           What it holds is there already; only rows that are new would be written.
         </Banner>
       )}

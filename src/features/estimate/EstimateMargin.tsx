@@ -5,15 +5,17 @@ import { addressOf } from "../../api/call.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { CodeBlock } from "../../components/ui/CodeBlock.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
-import { formatArea, formatTime } from "../../components/ui/format.ts";
+import { formatArea } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { MarginNote } from "../../components/ui/MarginNote.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import type { Estimate } from "./queries.ts";
 
 const LIMITS = { "log-normal": "Log-normal", t: "Student t" } as const;
 
 /** What the number speaks for, which limits and since when, and what can be taken away. */
 export function EstimateMargin({ surveyId, estimate }: { readonly surveyId: string; readonly estimate: Estimate }) {
+  const times = useTimes();
   const { context, result, methods } = estimate;
   const params = { surveyId };
   return (
@@ -30,7 +32,7 @@ export function EstimateMargin({ surveyId, estimate }: { readonly surveyId: stri
         <p>
           {context.chosenAfterCounts.includes("limits")
             ? `${LIMITS[result.declaredLimits]}, chosen after counts were seen.`
-            : `${LIMITS[result.declaredLimits]}, declared with the draw, ${formatTime(context.declaration.declaredAt)}, before the first count.`}
+            : `${LIMITS[result.declaredLimits]}, declared with the draw, ${times.time(context.declaration.declaredAt)}, before the first count.`}
         </p>
       </MarginNote>
       <MarginNote title="Which draw">

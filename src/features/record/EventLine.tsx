@@ -1,12 +1,14 @@
 import type { RecordEvent } from "#shared/api/record.ts";
 import { Fold } from "../../components/ui/Fold.tsx";
-import { formatCount, formatTimeOfDay } from "../../components/ui/format.ts";
+import { formatCount } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { TimelineEntry } from "../../components/ui/TimelineEntry.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { eventStory, type StoryLine } from "./event-story.ts";
 
 /** One line of the story: an event, or a day's counts by one person with each of them under a fold. */
 export function EventLine({ events }: StoryLine) {
+  const times = useTimes();
   const [newest] = events;
   const oldest = events.at(-1);
   if (newest === undefined || oldest === undefined) return null;
@@ -14,7 +16,11 @@ export function EventLine({ events }: StoryLine) {
     const { title, text, mark } = eventStory(newest);
     return (
       <TimelineEntry
-        when={<time dateTime={newest.at}>{formatTimeOfDay(newest.at)}</time>}
+        when={
+          <time dateTime={newest.at} title={`${newest.at}, as in the record`}>
+            {times.timeOfDay(newest.at)}
+          </time>
+        }
         mark={mark}
         title={title}
         meta={<EventProof event={newest} />}
@@ -25,7 +31,7 @@ export function EventLine({ events }: StoryLine) {
   }
   return (
     <TimelineEntry
-      when={`${formatTimeOfDay(oldest.at)} to ${formatTimeOfDay(newest.at)}`}
+      when={`${times.timeOfDay(oldest.at)} to ${times.timeOfDay(newest.at)}`}
       title={`${formatCount(events.length, "cell")} written down`}
       meta={<span>{`events ${oldest.sequence} to ${newest.sequence}`}</span>}
     >

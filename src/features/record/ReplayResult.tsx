@@ -1,13 +1,14 @@
 import { Button } from "../../components/ui/Button.tsx";
 import { CodeBlock } from "../../components/ui/CodeBlock.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
-import { formatNumber, formatTime } from "../../components/ui/format.ts";
+import { formatNumber } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { KeyValues } from "../../components/ui/KeyValues.tsx";
 import { MarginNote } from "../../components/ui/MarginNote.tsx";
 import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Section } from "../../components/ui/Section.tsx";
 import { Seed } from "../../components/ui/Seed.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { CheckList } from "./CheckList.tsx";
 import type { ReplayDone } from "./use-replay.ts";
 
@@ -48,6 +49,7 @@ export function ReplayResult({ done, onAnother }: ReplayResultProps) {
 }
 
 function ResultMargin({ done, onAnother }: ReplayResultProps) {
+  const times = useTimes();
   const { summary } = done.report;
   return (
     <>
@@ -66,7 +68,7 @@ function ResultMargin({ done, onAnother }: ReplayResultProps) {
             Newest hash <Hash value={summary.newest.sha256} label="newest hash" />
           </p>
         )}
-        {summary.exportedAt !== "" && <p>{`Saved ${formatTime(summary.exportedAt)} by ${summary.software}.`}</p>}
+        {summary.exportedAt !== "" && <p>{`Saved ${times.time(summary.exportedAt)} by ${summary.software}.`}</p>}
       </MarginNote>
       {summary.seeds.map((seed) => (
         <MarginNote key={seed.of} title={`Seed of ${seed.of}`}>

@@ -1,8 +1,8 @@
 import { Link } from "react-router-dom";
 import { Button } from "../../components/ui/Button.tsx";
-import { formatDay } from "../../components/ui/format.ts";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { Section } from "../../components/ui/Section.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { useOtherSurveys } from "./queries.ts";
 
 interface OtherSurveysProps {
@@ -12,6 +12,7 @@ interface OtherSurveysProps {
 
 /** For an owner: the surveys in which they hold no role, each with the way to its people. Nothing where there are none. */
 export function OtherSurveys({ peopleOf }: OtherSurveysProps) {
+  const times = useTimes();
   const others = useOtherSurveys();
   if (others.isError) {
     return <Refusal error={others.error} next={<Button onClick={() => void others.refetch()}>Try again</Button>} />;
@@ -27,7 +28,7 @@ export function OtherSurveys({ peopleOf }: OtherSurveysProps) {
           {others.data.map(({ id, name, createdAt }) => (
             <li key={id}>
               <Link to={peopleOf(id)}>{`People of ${name}`}</Link>
-              <span className="text-ink-3">{` · started ${formatDay(createdAt)}`}</span>
+              <span className="text-ink-3">{` · started ${times.day(createdAt)}`}</span>
             </li>
           ))}
         </ul>

@@ -12,9 +12,8 @@ import {
   formatPercent,
   formatSeed,
   formatSignificant,
-  formatTime,
-  formatTimeOfDay,
   formatUnit,
+  timesIn,
 } from "../../../src/components/ui/format.ts";
 
 afterEach(() => {
@@ -85,12 +84,22 @@ describe("texts and times on screen", () => {
     expect(formatSeed("007 3")).toBe('"007 3"');
   });
 
-  it("writes times of records in UTC, whatever the machine's zone", () => {
+  // Central European Summer Time is UTC+2 from 30 March to 26 October 2031, winter time UTC+1; Lima is UTC−5 all year.
+  it("writes times on the clock of a zone, with its abbreviation, whatever the machine's zone", () => {
     vi.stubEnv("TZ", "America/Lima");
-    expect(formatTime("2031-06-03T09:12:44Z")).toBe("3 June 2031, 09:12 UTC");
-    expect(formatTime("2031-06-03T01:12:44+02:00")).toBe("2 June 2031, 23:12 UTC");
-    expect(formatTimeOfDay("2031-12-31T00:05:00Z")).toBe("00:05");
-    expect(() => formatTime("yesterday")).toThrow(RangeError);
+    const paris = timesIn("Europe/Paris");
+    expect(paris.time("2031-06-03T09:12:44Z")).toBe("3 June 2031, 11:12 CEST");
+    expect(paris.time("2031-12-31T23:05:00Z")).toBe("1 January 2032, 00:05 CET");
+    expect(paris.day("2031-06-02T22:30:00Z")).toBe("3 June 2031");
+    expect(paris.timeOfDay("2031-06-02T22:30:00Z")).toBe("00:30");
+    expect(timesIn("America/Lima").time("2031-06-03T02:12:44Z")).toBe("2 June 2031, 21:12 UTC\u22125");
+    expect(() => paris.time("yesterday")).toThrow(RangeError);
+  });
+
+  it("writes times in UTC where that is the zone, or where the browser does not know the zone", () => {
+    expect(timesIn("UTC").time("2031-06-03T01:12:44+02:00")).toBe("2 June 2031, 23:12 UTC");
+    expect(timesIn("Mars/Olympus").time("2031-06-03T09:12:44Z")).toBe("3 June 2031, 09:12 UTC");
+    expect(timesIn("Mars/Olympus").zone).toBe("UTC");
   });
 
   it("writes sizes, counted nouns and lists", () => {
