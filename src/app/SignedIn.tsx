@@ -10,17 +10,15 @@ import { AccountContext } from "./use-account.ts";
 export function SignedIn() {
   const session = useSession();
   const { pathname, search } = useLocation();
-  if (session.isPending) {
-    return (
-      <div className="p-8">
-        <RuledLoading />
-      </div>
-    );
-  }
-  if (session.isError) {
+  // Asked again now and then: when only that fails, the page stays, with what is typed on it.
+  if (session.data === undefined) {
     return (
       <div className="mx-auto max-w-160 p-8">
-        <Refusal error={session.error} next={<Button onClick={() => void session.refetch()}>Try again</Button>} />
+        {session.isError ? (
+          <Refusal error={session.error} next={<Button onClick={() => void session.refetch()}>Try again</Button>} />
+        ) : (
+          <RuledLoading />
+        )}
       </div>
     );
   }

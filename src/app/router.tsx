@@ -2,6 +2,7 @@ import { createBrowserRouter, Navigate, type RouteObject } from "react-router-do
 import { RuledLoading } from "../components/ui/RuledLoading.tsx";
 import { paths, patterns } from "./paths.ts";
 import { ErrorPage } from "./pages/ErrorPage.tsx";
+import { Root } from "./Root.tsx";
 import { SignedIn } from "./SignedIn.tsx";
 
 const waiting = (
@@ -24,6 +25,7 @@ const stageRoutes: RouteObject[] = [
 
 export const routes: RouteObject[] = [
   {
+    element: <Root />,
     errorElement: <ErrorPage />,
     hydrateFallbackElement: waiting,
     children: [

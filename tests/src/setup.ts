@@ -25,6 +25,7 @@ vi.stubGlobal("ResizeObserver", SilentObserver);
 Element.prototype.scrollIntoView = () => undefined;
 Element.prototype.hasPointerCapture = () => false;
 HTMLElement.prototype.scrollTo = () => undefined;
+window.scrollTo = () => undefined;
 
 afterEach(() => {
   cleanup();

@@ -10,17 +10,14 @@ import { paths } from "../paths.ts";
 export function FramePage() {
   const survey = useCurrentSurvey();
   const areas = useAreas(survey.id);
-  if (areas.isPending) {
-    return (
-      <div className="p-8">
-        <RuledLoading label="Loading the study area" lines={5} />
-      </div>
-    );
-  }
-  if (areas.isError) {
+  if (areas.data === undefined) {
     return (
       <div className="max-w-160 p-8">
-        <Refusal error={areas.error} next={<Button onClick={() => void areas.refetch()}>Try again</Button>} />
+        {areas.isError ? (
+          <Refusal error={areas.error} next={<Button onClick={() => void areas.refetch()}>Try again</Button>} />
+        ) : (
+          <RuledLoading label="Loading the study area" lines={5} />
+        )}
       </div>
     );
   }

@@ -35,14 +35,18 @@ export function PeoplePage() {
   return (
     <ReadingPage
       title="People"
-      lead={members.isSuccess ? `${formatCount(members.data.length, "person", "people")} in this survey.` : undefined}
+      lead={
+        members.data !== undefined
+          ? `${formatCount(members.data.length, "person", "people")} in this survey.`
+          : undefined
+      }
       margin={roles}
     >
       {members.isPending && <RuledLoading label="Loading the people" />}
       {members.isError && (
         <Refusal error={members.error} next={<Button onClick={() => void members.refetch()}>Try again</Button>} />
       )}
-      {members.isSuccess && <MemberTable members={members.data} />}
+      {members.data !== undefined && <MemberTable members={members.data} />}
       {mayAdd && (
         <Section title="Add somebody">
           <AddMember surveyId={surveyId} />

@@ -65,8 +65,8 @@ export function SurveysPage() {
         {surveys.isError && (
           <Refusal error={surveys.error} next={<Button onClick={() => void surveys.refetch()}>Try again</Button>} />
         )}
-        {surveys.isSuccess && <LoadedSurveys surveys={surveys.data} />}
-        {surveys.isSuccess && account.isOwner && <OtherSurveys peopleOf={paths.people} />}
+        {surveys.data !== undefined && <LoadedSurveys surveys={surveys.data} />}
+        {surveys.data !== undefined && account.isOwner && <OtherSurveys peopleOf={paths.people} />}
       </div>
     </PlainShell>
   );

@@ -3,6 +3,7 @@ import { classes } from "./classes.ts";
 import type { DataColumn, RowTone } from "./data-column.ts";
 import { DataTableHead } from "./DataTableHead.tsx";
 import { DataTableRow } from "./DataTableRow.tsx";
+import { useShowChosen } from "./use-show-chosen.ts";
 import { useSortedRows, type SortState } from "./use-sorted-rows.ts";
 import { useVisibleLines } from "./use-visible-lines.ts";
 
@@ -50,6 +51,12 @@ function moveFocus(
   return true;
 }
 
+/** The row that the Tab key reaches: the chosen one, or the first in the page. */
+function tabStop<Row>(indices: readonly number[], lines: readonly Line<Row>[], chosen: string | null): number {
+  const inPage = indices.map((index) => lines[index]);
+  return (inPage.find((line) => line?.id === chosen) ?? inPage[0])?.index ?? 0;
+}
+
 /** Rows, each with what is open below it as a line of its own. */
 function linesOf<Row>(
   rows: readonly Row[],
@@ -76,11 +83,9 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
     lines.map((line) => line.key),
     frame,
   );
-  const focusable = Math.max(
-    0,
-    rows.findIndex((row) => rowId(row) === chosen),
-  );
+  const focusable = tabStop(indices, lines, chosen);
   const show = (row: number) => scrollTo(lines.findIndex((line) => line.index === row));
+  useShowChosen(frame, chosen, () => rows.findIndex((row) => rowId(row) === chosen), virtual ? show : undefined);
   const choice = (line: Line<Row>) =>
     onChoose === undefined
       ? null

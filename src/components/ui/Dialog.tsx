@@ -1,6 +1,7 @@
 import { Dialog as Radix } from "radix-ui";
 import { useRef, type ReactNode } from "react";
 import { classes } from "./classes.ts";
+import { focusMain } from "./focus-main.ts";
 
 interface DialogProps {
   readonly open: boolean;
@@ -15,7 +16,7 @@ interface DialogProps {
   readonly wide?: boolean;
 }
 
-/** A question that needs an answer before the page goes on. Escape and the scrim leave it; the focus returns to where it was. */
+/** A question that needs an answer before the page goes on. Escape and the scrim leave it; the focus returns to where it was, or to the page. */
 export function Dialog({ open, onOpenChange, title, lead, children, actions, wide = false }: DialogProps) {
   const opener = useRef<Element | null>(null);
   return (
@@ -30,6 +31,7 @@ export function Dialog({ open, onOpenChange, title, lead, children, actions, wid
           onCloseAutoFocus={(event) => {
             event.preventDefault();
             if (opener.current instanceof HTMLElement) opener.current.focus();
+            focusMain();
           }}
           {...(lead === undefined && { "aria-describedby": undefined })}
         >
