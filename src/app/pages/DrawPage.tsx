@@ -11,6 +11,7 @@ export function DrawPage() {
       mayDraw={reach(survey.roles, "draw.make") !== "none"}
       mayRepeat={reach(survey.roles, "record.read") !== "none"}
       frameTo={paths.stage(survey.id, "frame")}
+      recordTo={paths.stage(survey.id, "record")}
       fieldTo={paths.stage(survey.id, "field")}
     />
   );

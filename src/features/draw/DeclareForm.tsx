@@ -1,47 +1,62 @@
 import { useState } from "react";
-import type { FrameVersion } from "#shared/api/frame.ts";
+import { flushSync } from "react-dom";
 import { GENERATORS } from "#shared/draw/generator.ts";
+import { Banner } from "../../components/ui/Banner.tsx";
 import { Button } from "../../components/ui/Button.tsx";
 import { Field } from "../../components/ui/Field.tsx";
+import { focusFirstInvalid } from "../../components/ui/focus-first-invalid.ts";
 import { Fold } from "../../components/ui/Fold.tsx";
+import { formatCount, formatNumber } from "../../components/ui/format.ts";
 import { NumberInput } from "../../components/ui/NumberInput.tsx";
 import { RadioCards } from "../../components/ui/RadioCards.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { Select } from "../../components/ui/Select.tsx";
 import { TextArea } from "../../components/ui/TextArea.tsx";
-import { type DeclareReading, type DeclareTexts, FIRST_TEXTS, readDeclareForm, usualReserves } from "./declare-form.ts";
-import { DESIGN_TEXTS, DESIGN_TITLES, LIMITS_TEXTS, LIMITS_TITLES, shareSentence } from "./draw-words.ts";
-import { useDeclare } from "./queries.ts";
-
-type Sealed = NonNullable<FrameVersion["sealed"]>;
+import { type DeclareReading, type DeclareTexts, readDeclareForm, usualReserves } from "./declare-form.ts";
+import {
+  DESIGN_TEXTS,
+  DESIGN_TITLES,
+  LIMITS_TEXTS,
+  LIMITS_TITLES,
+  redrawLead,
+  type RedrawReason,
+  shareSentence,
+} from "./draw-words.ts";
+import type { useDeclare } from "./queries.ts";
 
 interface DeclareFormProps {
-  readonly surveyId: string;
   readonly frameId: string;
-  readonly sealed: Sealed;
-  readonly reasonNeeded: boolean;
+  readonly units: number;
+  /** What was typed; kept by the page. */
+  readonly texts: DeclareTexts;
+  readonly onTexts: (change: (before: DeclareTexts) => DeclareTexts) => void;
+  readonly declare: ReturnType<typeof useDeclare>;
+  readonly reasonNeeded: RedrawReason | null;
+  /** Draws that were made on this frame version before. */
+  readonly drawsOnFrame: number;
 }
 
 /** All that a draw is, said before its seed exists. What was typed stays when the server refuses. */
-export function DeclareForm({ surveyId, frameId, sealed, reasonNeeded }: DeclareFormProps) {
-  const [texts, setTexts] = useState(FIRST_TEXTS);
+export function DeclareForm(props: DeclareFormProps) {
+  const { frameId, units, texts, onTexts, declare, reasonNeeded, drawsOnFrame } = props;
   const [shown, setShown] = useState(false);
-  const declare = useDeclare(surveyId);
-  const reading = readDeclareForm(texts, { frameId, units: sealed.units, reasonNeeded });
-  const set = (part: Partial<DeclareTexts>) => setTexts((before) => ({ ...before, ...part }));
+  const reading = readDeclareForm(texts, { frameId, units, reasonNeeded: reasonNeeded !== null });
+  const set = (part: Partial<DeclareTexts>) => onTexts((before) => ({ ...before, ...part }));
   const errorOf = (field: keyof typeof reading.errors) =>
-    shown || (field === "n" && texts.n !== "") ? reading.errors[field] : undefined;
+    shown || (field !== "note" && texts[field] !== "") ? reading.errors[field] : undefined;
   return (
     <form
       className="grid max-w-(--size-measure) gap-6"
       noValidate
       onSubmit={(event) => {
         event.preventDefault();
-        setShown(true);
-        if (reading.body !== null) declare.mutate(reading.body);
+        flushSync(() => setShown(true));
+        if (reading.body === null) focusFirstInvalid(event.currentTarget);
+        else if (!declare.isPending) declare.mutate(reading.body);
       }}
     >
-      <DesignFields texts={texts} set={set} errorOf={errorOf} reading={reading} units={sealed.units} />
+      {reasonNeeded !== null && <RedrawBanner {...redrawLead(reasonNeeded, drawsOnFrame)} />}
+      <DesignFields texts={texts} set={set} errorOf={errorOf} reading={reading} units={units} />
       {reading.notes.map((note) => (
         <p key={note} className="q-help">
           {note}
@@ -50,8 +65,8 @@ export function DeclareForm({ surveyId, frameId, sealed, reasonNeeded }: Declare
       <LimitsAndSeed texts={texts} set={set} />
       <LevelAndGenerator texts={texts} set={set} error={errorOf("level")} />
       <Field
-        label={reasonNeeded ? "Why there is a new draw" : "Note"}
-        aside={reasonNeeded ? undefined : "may stay empty"}
+        label={reasonNeeded === null ? "Note" : "Why there is a new draw"}
+        aside={reasonNeeded === null ? "may stay empty" : undefined}
         error={errorOf("note")}
         help="Stands in the declaration, for whoever reads it in years."
       >
@@ -67,6 +82,14 @@ export function DeclareForm({ surveyId, frameId, sealed, reasonNeeded }: Declare
         <p className="q-help">Nothing is drawn yet. The declaration is sealed and stays on record, however it ends.</p>
       </div>
     </form>
+  );
+}
+
+function RedrawBanner({ title, text }: { readonly title: string; readonly text: string }) {
+  return (
+    <Banner tone="ochre" title={title}>
+      {text}
+    </Banner>
   );
 }
 
@@ -99,7 +122,11 @@ function DesignFields({ texts, set, errorOf, reading, units }: DesignFieldsProps
         <Field
           label="Picks, n"
           error={errorOf("n")}
-          help={reading.body === null ? `The frame holds ${units} cells.` : shareSentence(reading.body.design.n, units)}
+          help={
+            reading.body === null
+              ? `The frame holds ${formatCount(units, "cell")}.`
+              : shareSentence(reading.body.design.n, units)
+          }
         >
           <NumberInput value={texts.n} onChange={(event) => set({ n: event.target.value })} />
         </Field>
@@ -109,7 +136,7 @@ function DesignFields({ texts, set, errorOf, reading, units }: DesignFieldsProps
           error={errorOf("reserves")}
           help={
             texts.reserves.trim() === "" && usual !== null
-              ? `Empty means ${usual}: a fifth of the picks, at least 5. Opened in order, only when a pick is closed.`
+              ? `Empty means ${formatNumber(usual)}: a fifth of the picks, at least 5. Opened in order, only when a pick is closed.`
               : "Opened strictly in draw order, only when a pick is closed."
           }
         >
@@ -155,8 +182,11 @@ function LimitsAndSeed({ texts, set }: PartProps) {
 }
 
 function LevelAndGenerator({ texts, set, error }: PartProps & { readonly error: string | undefined }) {
+  // What is wrong must be in sight; once opened for that it stays open, or it would close over what is being typed.
+  const [open, setOpen] = useState(false);
+  if (error !== undefined && !open) setOpen(true);
   return (
-    <Fold quiet title="Confidence level and generator">
+    <Fold quiet title="Confidence level and generator" open={open}>
       <div className="grid gap-4 py-3 md:grid-cols-2">
         <Field label="Confidence level" error={error} help="Of the limits, in per cent.">
           <NumberInput unit="%" value={texts.level} onChange={(event) => set({ level: event.target.value })} />

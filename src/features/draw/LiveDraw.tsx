@@ -1,18 +1,21 @@
 import { type ReactNode, useMemo, useState } from "react";
 import { Link } from "react-router-dom";
-import type { DrawDetail } from "#shared/api/draw.ts";
+import type { DrawDetail, DrawEntry } from "#shared/api/draw.ts";
 import { withReplacement } from "#shared/draw/design.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { Facts } from "../../components/ui/Facts.tsx";
-import { formatTime } from "../../components/ui/format.ts";
+import { Fold } from "../../components/ui/Fold.tsx";
+import { formatNumber } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Seed } from "../../components/ui/Seed.tsx";
 import { Tabs } from "../../components/ui/Tabs.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { FrameSheetMap } from "../../map/FrameSheetMap.tsx";
 import { LegendEntry } from "../../map/LegendEntry.tsx";
 import { PicksLayer } from "../../map/PicksLayer.tsx";
+import { DeclarationFacts } from "./DeclarationFacts.tsx";
 import { DESIGN_TITLES, picksSentence, repeatsSentence, seedOrigin } from "./draw-words.ts";
 import { PicksTable } from "./PicksTable.tsx";
 import { useWithdraw } from "./queries.ts";
@@ -26,12 +29,16 @@ interface LiveDrawProps {
   readonly mayDraw: boolean;
   readonly mayRepeat: boolean;
   readonly fieldTo: string;
+  readonly recordTo: string;
+  /** What was refused because somebody else had acted meanwhile. */
+  readonly notice: ReactNode;
   /** Declarations and draws before this one. */
   readonly history: ReactNode;
 }
 
 /** The draw in use: what it is, where its seed comes from, its cells on the map and in draw order. */
-export function LiveDraw({ surveyId, draw, mayDraw, mayRepeat, fieldTo, history }: LiveDrawProps) {
+export function LiveDraw(props: LiveDrawProps) {
+  const { surveyId, draw, mayDraw, mayRepeat, fieldTo, recordTo, notice, history } = props;
   const [withdrawing, setWithdrawing] = useState(false);
   const [repeating, setRepeating] = useState(false);
   const withdraw = useWithdraw(surveyId);
@@ -52,7 +59,11 @@ export function LiveDraw({ surveyId, draw, mayDraw, mayRepeat, fieldTo, history 
       }
       band={<DrawFacts draw={draw} onRepeat={mayRepeat ? () => setRepeating(true) : undefined} />}
     >
-      <DrawBody surveyId={surveyId} draw={draw} />
+      {notice}
+      <DrawBody surveyId={surveyId} draw={draw} recordTo={recordTo} />
+      <Fold quiet title="As declared" aside="before the seed existed">
+        <DeclarationFacts declaration={declaration} />
+      </Fold>
       {history}
       <ReasonDialog
         open={withdrawing}
@@ -70,6 +81,7 @@ export function LiveDraw({ surveyId, draw, mayDraw, mayRepeat, fieldTo, history 
 }
 
 function DrawFacts({ draw, onRepeat }: { readonly draw: DrawDetail; readonly onRepeat: (() => void) | undefined }) {
+  const times = useTimes();
   const { declaration } = draw;
   return (
     <Facts
@@ -81,7 +93,7 @@ function DrawFacts({ draw, onRepeat }: { readonly draw: DrawDetail; readonly onR
             <>
               {seedOrigin(declaration)}
               <br />
-              {declaration.seed !== null && formatTime(declaration.seed.at)}
+              {declaration.seed !== null && times.time(declaration.seed.at)}
             </>
           ),
         },
@@ -115,11 +127,13 @@ function DrawFacts({ draw, onRepeat }: { readonly draw: DrawDetail; readonly onR
 }
 
 /** Map and list; choosing a cell in one shows it in the other. */
-export function DrawBody({ surveyId, draw }: { readonly surveyId: string; readonly draw: DrawDetail }) {
+function DrawBody({ surveyId, draw, recordTo }: Pick<LiveDrawProps, "surveyId" | "draw" | "recordTo">) {
   const [chosen, setChosen] = useState<string | null>(null);
   const picks = useMemo(() => sheetPicks(draw.entries), [draw.entries]);
-  const used = draw.entries.filter(({ state }) => state === "in-use" || state === "closed");
-  const waiting = draw.entries.filter(({ state }) => state === "reserve" || state === "passed-over");
+  const { used, waiting } = useMemo(() => {
+    const waits = ({ state }: DrawEntry) => state === "reserve" || state === "passed-over";
+    return { used: draw.entries.filter((entry) => !waits(entry)), waiting: draw.entries.filter(waits) };
+  }, [draw.entries]);
   const choose = (unit: string) => setChosen((before) => (before === unit ? null : unit));
   return (
     <div className="q-map-and-list">
@@ -131,7 +145,7 @@ export function DrawBody({ surveyId, draw }: { readonly surveyId: string; readon
         legend={
           <>
             <LegendEntry symbol="drawn">drawn, with its order</LegendEntry>
-            <LegendEntry symbol="repeat">drawn twice, visited once</LegendEntry>
+            <LegendEntry symbol="repeat">drawn again, visited once</LegendEntry>
             <LegendEntry symbol="reserve">reserve</LegendEntry>
             <LegendEntry symbol="chosen">chosen in the list</LegendEntry>
           </>
@@ -144,21 +158,21 @@ export function DrawBody({ surveyId, draw }: { readonly surveyId: string; readon
         tabs={[
           {
             id: "picks",
-            label: `Picks ${used.length}`,
+            label: `Picks ${formatNumber(used.length)}`,
             content: <PicksTable caption="Picks in draw order" entries={used} chosen={chosen} onChoose={choose} />,
           },
           {
             id: "reserves",
-            label: `Reserves ${waiting.length}`,
+            label: `Reserves ${formatNumber(waiting.length)}`,
             content:
               waiting.length === 0 ? (
                 <p className="q-help py-3">No reserve is left.</p>
               ) : (
-                <PicksTable waiting caption="Reserves in order" entries={waiting} chosen={chosen} onChoose={choose} />
+                <PicksTable caption="Reserves in order" entries={waiting} chosen={chosen} onChoose={choose} />
               ),
           },
         ]}
-        note={<Link to="../record">on record</Link>}
+        note={<Link to={recordTo}>on record</Link>}
       />
     </div>
   );

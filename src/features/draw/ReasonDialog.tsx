@@ -17,7 +17,7 @@ interface ReasonDialogProps {
   readonly onReason: (reason: string) => void;
 }
 
-/** An act that stays on record needs a reason; what was typed stays when it is refused. */
+/** An act that stays on record needs a reason; what was typed stays when it is refused, and the dialog while the act is under way. */
 export function ReasonDialog({ open, onOpenChange, title, lead, act, busy, error, onReason }: ReasonDialogProps) {
   const form = useId();
   const [reason, setReason] = useState("");
@@ -26,12 +26,16 @@ export function ReasonDialog({ open, onOpenChange, title, lead, act, busy, error
   return (
     <Dialog
       open={open}
-      onOpenChange={onOpenChange}
+      onOpenChange={(next) => {
+        if (!busy) onOpenChange(next);
+      }}
       title={title}
       lead={lead}
       actions={
         <>
-          <Button onClick={() => onOpenChange(false)}>Leave it as it is</Button>
+          <Button disabled={busy} onClick={() => onOpenChange(false)}>
+            Leave it as it is
+          </Button>
           <Button variant="danger" type="submit" form={form} busy={busy}>
             {act}
           </Button>
@@ -45,7 +49,7 @@ export function ReasonDialog({ open, onOpenChange, title, lead, act, busy, error
         onSubmit={(event) => {
           event.preventDefault();
           setShown(true);
-          if (!tooShort) onReason(reason.trim());
+          if (!tooShort && !busy) onReason(reason.trim());
         }}
       >
         <Field label="Reason" error={shown && tooShort ? "Say why: it stands in the record." : undefined}>

@@ -1,3 +1,4 @@
+import { Button } from "../../components/ui/Button.tsx";
 import { CodeBlock } from "../../components/ui/CodeBlock.tsx";
 import { Dialog } from "../../components/ui/Dialog.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
@@ -22,6 +23,7 @@ export function RecipeDialog({ surveyId, drawId, open, onOpenChange }: RecipeDia
       onOpenChange={onOpenChange}
       title="Repeat this draw yourself"
       lead="With nothing of ours: Python’s standard library, or the tools of a shell."
+      actions={<Button onClick={() => onOpenChange(false)}>Close</Button>}
     >
       {recipe.isPending && <RuledLoading label="Loading the recipe" />}
       {recipe.isError && <Refusal error={recipe.error} />}

@@ -1,6 +1,7 @@
 import { type Design, designNotes, checkDesign, reserveDefault } from "#shared/draw/design.ts";
 import { readLevel } from "#shared/estimate/level.ts";
 import { Problem } from "#shared/problem.ts";
+import { formatNumber } from "../../components/ui/format.ts";
 import { readNumber } from "../../components/ui/read-number.ts";
 import type { NewDeclaration } from "./queries.ts";
 
@@ -17,6 +18,10 @@ export interface DeclareTexts {
   readonly note: string;
 }
 
+/** As a declaration holds it: "0." and six decimals. */
+const LONGEST_LEVEL = 8;
+const LONGEST_NOTE = 2000;
+
 export const FIRST_TEXTS: DeclareTexts = {
   kind: "srs-wr",
   n: "",
@@ -28,8 +33,15 @@ export const FIRST_TEXTS: DeclareTexts = {
   note: "",
 };
 
+interface Errors {
+  n?: string;
+  reserves?: string;
+  level?: string;
+  note?: string;
+}
+
 export interface DeclareReading {
-  readonly errors: { readonly n?: string; readonly reserves?: string; readonly level?: string; readonly note?: string };
+  readonly errors: Readonly<Errors>;
   /** Said beside what can be declared all the same. */
   readonly notes: readonly string[];
   /** What would be declared; null while something is missing or wrong. */
@@ -54,7 +66,7 @@ export function readDeclareForm(texts: DeclareTexts, ground: Ground): DeclareRea
   const n = wholeNumber(texts.n);
   const reserves = texts.reserves.trim() === "" ? usualReserves(texts, ground.units) : wholeNumber(texts.reserves);
   const level = levelOf(texts.level);
-  const errors: { n?: string; reserves?: string; level?: string; note?: string } = {};
+  const errors: Errors = {};
   if (n === null || n < 1)
     errors.n =
       texts.n.trim() === ""
@@ -64,15 +76,16 @@ export function readDeclareForm(texts: DeclareTexts, ground: Ground): DeclareRea
     errors.reserves = `“${texts.reserves}” is no number of reserves. Use a whole number, or leave it empty.`;
   if (level instanceof Problem) errors.level = level.message;
   if (ground.reasonNeeded && texts.note.trim().length < 3)
-    errors.note = "Waypoints of an earlier draw were handed out: say why there is a new one.";
+    errors.note = "Say why there is a new draw: it stands in the declaration.";
+  if (texts.note.trim().length > LONGEST_NOTE)
+    errors.note = `Use at most ${formatNumber(LONGEST_NOTE)} characters: these are ${formatNumber(texts.note.trim().length)}.`;
   if (n === null || reserves === null || level instanceof Problem || errors.n !== undefined)
     return { errors, notes: [], body: null };
   const design: Design = { kind: texts.kind, n };
-  try {
-    checkDesign(design, ground.units, reserves);
-  } catch (error) {
-    if (!(error instanceof Problem)) throw error;
-    return { errors: { ...errors, n: error.message }, notes: [], body: null };
+  const refused = refusalOf(() => checkDesign(design, ground.units, reserves));
+  if (refused !== null) {
+    const field = refusalOf(() => checkDesign(design, ground.units, 0)) === null ? "reserves" : "n";
+    return { errors: { ...errors, [field]: refused.message }, notes: [], body: null };
   }
   const { generator, limits, seedSource, note } = texts;
   const body = { frameId: ground.frameId, design, generator, reserves, limits, level, seedSource, note: note.trim() };
@@ -86,8 +99,20 @@ function wholeNumber(text: string): number | null {
 
 /** "95", "95 %" and "0.95" alike, as decimal text, or why it is none. */
 function levelOf(text: string): string | Problem {
+  let level = "";
+  const refused = refusalOf(() => {
+    level = String(readLevel(text));
+  });
+  if (refused !== null) return refused;
+  return level.length <= LONGEST_LEVEL
+    ? level
+    : new Problem("input-invalid", `“${text}” is finer than a level is kept. Use at most four decimals of a per cent.`);
+}
+
+function refusalOf(check: () => unknown): Problem | null {
   try {
-    return String(readLevel(text));
+    check();
+    return null;
   } catch (error) {
     if (error instanceof Problem) return error;
     throw error;

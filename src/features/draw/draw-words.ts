@@ -1,5 +1,8 @@
 import type { Declaration, DrawDetail, DrawEntry } from "#shared/api/draw.ts";
 import { formatCount, formatNumber, formatPercent } from "../../components/ui/format.ts";
+import type { Draws } from "./past-declarations.ts";
+
+export type RedrawReason = NonNullable<Draws["reasonNeeded"]>;
 
 export const DESIGN_TITLES = {
   "srs-wr": "Simple random, with replacement",
@@ -43,6 +46,17 @@ export function repeatsSentence(entries: readonly DrawEntry[], withReplacement: 
 /** How much of the frame is drawn. */
 export function shareSentence(n: number, units: number): string {
   return `${formatNumber(n)} of ${formatNumber(units)} cells is ${formatPercent(n / units)} of the frame.`;
+}
+
+/** Why a further draw has to say why it is made, and what it will be. */
+export function redrawLead(reason: RedrawReason, drawsOnFrame: number): { title: string; text: string } {
+  const text = `This will be draw ${drawsOnFrame + 1} on this frame. All draws stay on record.`;
+  switch (reason) {
+    case "waypoints-exported":
+      return { title: "Waypoints of an earlier draw were handed out.", text };
+    case "third-draw-in-a-day":
+      return { title: "Two seeds were given here within a day.", text };
+  }
 }
 
 /** Where a seed comes from, said plainly. */

@@ -1,4 +1,5 @@
-import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import { useMutation, useMutationState, useQuery, useQueryClient } from "@tanstack/react-query";
+import { useState } from "react";
 import type * as z from "zod/mini";
 import {
   abandonDeclaration,
@@ -9,6 +10,7 @@ import {
   readRecipe,
   withdrawDraw,
 } from "#shared/api/draw.ts";
+import { Problem } from "#shared/problem.ts";
 import { call } from "../../api/call.ts";
 import { foreverKey, surveyKey } from "../../api/keys.ts";
 
@@ -37,18 +39,39 @@ export function useRecipe(surveyId: string, drawId: string, wanted: boolean) {
   });
 }
 
-/** After any act on draws everything of the survey may look different. */
+const actKey = (surveyId: string) => ["draw-act", surveyId];
+
+/** After any act on draws, refused ones too, everything of the survey may look different. */
 function useAct<Input, Output>(surveyId: string, act: (input: Input) => Promise<Output>) {
   const queries = useQueryClient();
   return useMutation({
+    mutationKey: actKey(surveyId),
     meta: { keeps: true },
     mutationFn: act,
     onSettled: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }
 
-export function useDeclare(surveyId: string) {
-  return useAct(surveyId, (body: NewDeclaration) => call(declareDraw, { params: { surveyId }, body }));
+/**
+ * The refusal of the last act since the page was opened, where somebody else had acted meanwhile: what was to be acted on is then
+ * gone from the page, and so is whatever would have shown the refusal.
+ */
+export function useOvertaken(surveyId: string): Problem | null {
+  const [since] = useState(() => Date.now());
+  const acts = useMutationState({
+    filters: { mutationKey: actKey(surveyId) },
+    select: ({ state }) => ({ error: state.error, at: state.submittedAt }),
+  });
+  const last = acts.at(-1);
+  return last?.error instanceof Problem && last.error.status === 409 && last.at >= since ? last.error : null;
+}
+
+export function useDeclare(surveyId: string, onDeclared: () => void) {
+  return useAct(surveyId, async (body: NewDeclaration) => {
+    const declaration = await call(declareDraw, { params: { surveyId }, body });
+    onDeclared();
+    return declaration;
+  });
 }
 
 export interface SeedGiven {
