@@ -13,6 +13,7 @@ export function FieldPage() {
       mayAssign={reach(survey.roles, "field.assign") !== "none"}
       mayClose={reach(survey.roles, "field.close") !== "none"}
       mayExport={reach(survey.roles, "field.export") !== "none"}
+      mayEnter={reach(survey.roles, "counts.enter") !== "none"}
       ownOnly={reach(survey.roles, "survey.see") === "own"}
       drawTo={paths.stage(survey.id, "draw")}
       countsTo={paths.stage(survey.id, "counts")}

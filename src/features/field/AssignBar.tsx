@@ -1,37 +1,36 @@
 import { useState } from "react";
-import type { Member } from "#shared/api/surveys.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { Field } from "../../components/ui/Field.tsx";
-import { formatCount } from "../../components/ui/format.ts";
+import { formatCount, formatNumber } from "../../components/ui/format.ts";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { Select } from "../../components/ui/Select.tsx";
 import { showToast } from "../../components/ui/show-toast.tsx";
 import { TextInput } from "../../components/ui/TextInput.tsx";
-import { useAssign } from "./queries.ts";
+import { useAssign, useFieldMembers } from "./queries.ts";
 
 interface AssignBarProps {
   readonly surveyId: string;
-  readonly members: readonly Member[];
-  readonly selected: ReadonlySet<string>;
+  /** Ids of visits. */
+  readonly selected: readonly string[];
+  /** How many of them the list does not show at the moment. */
+  readonly hidden: number;
   readonly onDone: () => void;
 }
 
 /** Gives the selected cells to somebody for a day, or takes them back. */
-export function AssignBar({ surveyId, members, selected, onDone }: AssignBarProps) {
+export function AssignBar({ surveyId, selected, hidden, onDone }: AssignBarProps) {
   const [memberId, setMemberId] = useState("");
   const [day, setDay] = useState("");
+  const members = useFieldMembers(surveyId);
   const assign = useAssign(surveyId);
+  const takingBack = assign.isPending && assign.variables.memberId === null;
   const send = (to: string | null) => {
-    const visitIds = [...selected];
+    if (assign.isPending) return;
     assign.mutate(
-      { visitIds, memberId: to, day: to === null ? "" : day },
+      { visitIds: [...selected], memberId: to, day: to === null ? "" : day },
       {
-        onSuccess: () => {
-          showToast(
-            to === null
-              ? `${formatCount(visitIds.length, "cell")} taken back.`
-              : `${formatCount(visitIds.length, "cell")} shared out.`,
-          );
+        onSuccess: ({ assigned }) => {
+          showToast(`${formatCount(assigned, "cell")} ${to === null ? "taken back" : "shared out"}.`);
           onDone();
         },
       },
@@ -39,16 +38,12 @@ export function AssignBar({ surveyId, members, selected, onDone }: AssignBarProp
   };
   return (
     <section aria-label="Share out" className="grid gap-3">
-      <p>
-        {selected.size === 0
-          ? "Select cells in the list, then say who goes."
-          : `${formatCount(selected.size, "cell")} selected.`}
-      </p>
+      <p role="status">{selectedText(selected.length, hidden)}</p>
       <div className="grid items-end gap-3 md:grid-cols-[minmax(0,1fr)_minmax(0,1fr)_auto_auto]">
         <Field label="Give to">
           <Select value={memberId} onChange={(event) => setMemberId(event.target.value)}>
             <option value="">Choose a person</option>
-            {members.map((member) => (
+            {members.data?.map((member) => (
               <option key={member.id} value={member.id}>
                 {`${member.name} (${member.roles.join(", ")})`}
               </option>
@@ -56,21 +51,33 @@ export function AssignBar({ surveyId, members, selected, onDone }: AssignBarProp
           </Select>
         </Field>
         <Field label="Day" aside="may stay empty">
-          <TextInput value={day} placeholder="Tuesday 3 June" onChange={(event) => setDay(event.target.value)} />
+          <TextInput
+            value={day}
+            maxLength={60}
+            placeholder="Tuesday 3 June"
+            onChange={(event) => setDay(event.target.value)}
+          />
         </Field>
         <Button
           variant="primary"
-          disabled={selected.size === 0 || memberId === ""}
-          busy={assign.isPending}
+          disabled={selected.length === 0 || memberId === ""}
+          busy={assign.isPending && !takingBack}
           onClick={() => send(memberId)}
         >
           Share out
         </Button>
-        <Button disabled={selected.size === 0} onClick={() => send(null)}>
+        <Button disabled={selected.length === 0} busy={takingBack} onClick={() => send(null)}>
           Take back
         </Button>
       </div>
+      {members.data === undefined && members.isError && <Refusal error={members.error} />}
       {assign.isError && <Refusal error={assign.error} />}
     </section>
   );
+}
+
+function selectedText(selected: number, hidden: number): string {
+  if (selected === 0) return "Select cells in the list, then say who goes.";
+  const text = `${formatCount(selected, "cell")} selected`;
+  return hidden === 0 ? `${text}.` : `${text}, ${formatNumber(hidden)} of them hidden by the filter.`;
 }

@@ -4,9 +4,10 @@ import { Button } from "../../components/ui/Button.tsx";
 import { formatNumber } from "../../components/ui/format.ts";
 import { Section } from "../../components/ui/Section.tsx";
 import { AssignBar } from "./AssignBar.tsx";
-import { useFieldMembers } from "./queries.ts";
 import { shownVisits, type VisitFilter, VisitFilters } from "./VisitFilters.tsx";
 import { VisitTable } from "./VisitTable.tsx";
+
+const EVERY_CELL: VisitFilter = { who: "", state: "" };
 
 interface CellsToVisitProps {
   readonly surveyId: string;
@@ -18,15 +19,16 @@ interface CellsToVisitProps {
   readonly onClosing: ((visitId: string) => void) | undefined;
 }
 
-/** The list: filtered, shared out by selection, and the way to close the chosen cell. */
+/** The list: filtered, and shared out by selection. A cell that is selected stays so when the filter hides it, and that is said. */
 export function CellsToVisit({ surveyId, visits, mayAssign, chosen, onChoose, onClosing }: CellsToVisitProps) {
-  const [filter, setFilter] = useState<VisitFilter>({ who: "", state: "" });
-  const [selected, setSelected] = useState<ReadonlySet<string>>(new Set());
-  const members = useFieldMembers(surveyId, mayAssign);
+  const [filter, setFilter] = useState(EVERY_CELL);
+  const [ticked, setTicked] = useState<ReadonlySet<string>>(new Set());
   const shown = shownVisits(visits, filter);
-  const chosenVisit = visits.find(({ id }) => id === chosen);
+  const selected = new Set(visits.map(({ id }) => id).filter((id) => ticked.has(id)));
+  const open = shown.filter(({ state }) => state === "in-use");
+  const hiddenChoice = shown.some(({ id }) => id === chosen) ? undefined : visits.find(({ id }) => id === chosen);
   const select = (visitId: string, on: boolean) => {
-    setSelected((before) => {
+    setTicked((before) => {
       const after = new Set(before);
       if (on) after.add(visitId);
       else after.delete(visitId);
@@ -39,29 +41,27 @@ export function CellsToVisit({ surveyId, visits, mayAssign, chosen, onChoose, on
         <>
           <AssignBar
             surveyId={surveyId}
-            members={members.data ?? []}
-            selected={selected}
-            onDone={() => setSelected(new Set())}
+            selected={[...selected]}
+            hidden={selected.size - shown.filter(({ id }) => selected.has(id)).length}
+            onDone={() => setTicked(new Set())}
           />
           <p className="my-2 flex flex-wrap gap-4">
-            <Button variant="link" size="small" onClick={() => setSelected(new Set(shown.map(({ id }) => id)))}>
-              {`Select all ${formatNumber(shown.length)} shown`}
+            <Button variant="link" size="small" onClick={() => setTicked(new Set(open.map(({ id }) => id)))}>
+              {`Select all ${formatNumber(open.length)} shown`}
             </Button>
             {selected.size > 0 && (
-              <Button variant="link" size="small" onClick={() => setSelected(new Set())}>
+              <Button variant="link" size="small" onClick={() => setTicked(new Set())}>
                 Select none
               </Button>
             )}
           </p>
         </>
       )}
-      {onClosing !== undefined && chosenVisit !== undefined && (
+      {hiddenChoice !== undefined && (
         <p className="my-2">
-          <Button
-            disabled={chosenVisit.state === "closed" || chosenVisit.count.state === "counted"}
-            onClick={() => onClosing(chosenVisit.id)}
-          >
-            {`Close ${chosenVisit.label}…`}
+          {`${hiddenChoice.label} is hidden by the filter. `}
+          <Button variant="link" size="small" onClick={() => setFilter(EVERY_CELL)}>
+            Show every cell
           </Button>
         </p>
       )}
@@ -71,6 +71,7 @@ export function CellsToVisit({ surveyId, visits, mayAssign, chosen, onChoose, on
         onSelect={select}
         chosen={chosen}
         onChoose={(id) => onChoose(chosen === id ? null : id)}
+        onClosing={onClosing}
       />
     </Section>
   );

@@ -1,6 +1,7 @@
 import { useId, useState } from "react";
 import type { Visit } from "#shared/api/field.ts";
 import { STATE_MEANINGS, STATE_WORDS } from "#shared/counts/count.ts";
+import { CLOSING_STATES, type ClosingState } from "#shared/field/states.ts";
 import { Banner } from "../../components/ui/Banner.tsx";
 import { Button } from "../../components/ui/Button.tsx";
 import { Dialog } from "../../components/ui/Dialog.tsx";
@@ -10,9 +11,6 @@ import { RadioCards } from "../../components/ui/RadioCards.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { TextArea } from "../../components/ui/TextArea.tsx";
 import { type Closed, type Closing, useClosePick } from "./queries.ts";
-
-const CLOSING = ["refused", "unsafe", "not-reached", "lost"] as const;
-type ClosingState = (typeof CLOSING)[number];
 
 interface ClosePickDialogProps {
   readonly surveyId: string;
@@ -25,7 +23,9 @@ interface ClosePickDialogProps {
 export function ClosePickDialog({ surveyId, visit, reservesLeft, onClose }: ClosePickDialogProps) {
   const form = useId();
   const [id] = useState(() => crypto.randomUUID());
-  const [state, setState] = useState<ClosingState | null>(CLOSING.find((one) => one === visit.count.state) ?? null);
+  const [state, setState] = useState<ClosingState | null>(
+    CLOSING_STATES.find((one) => one === visit.count.state) ?? null,
+  );
   const [reason, setReason] = useState("");
   const [shown, setShown] = useState(false);
   const close = useClosePick(surveyId);
@@ -36,7 +36,7 @@ export function ClosePickDialog({ surveyId, visit, reservesLeft, onClose }: Clos
       wide
       open
       onOpenChange={(open) => {
-        if (!open) onClose();
+        if (!open && !close.isPending) onClose();
       }}
       title={close.isSuccess ? `${visit.label} is closed` : `Close cell ${visit.label}?`}
       lead={close.isSuccess ? undefined : openingText(visit.orders.length, reservesLeft)}
@@ -47,7 +47,9 @@ export function ClosePickDialog({ surveyId, visit, reservesLeft, onClose }: Clos
           </Button>
         ) : (
           <>
-            <Button onClick={onClose}>Leave it open</Button>
+            <Button disabled={close.isPending} onClick={onClose}>
+              Leave it open
+            </Button>
             <Button variant="danger" type="submit" form={form} busy={close.isPending}>
               Close the pick
             </Button>
@@ -65,7 +67,7 @@ export function ClosePickDialog({ surveyId, visit, reservesLeft, onClose }: Clos
           onSubmit={(event) => {
             event.preventDefault();
             setShown(true);
-            if (ready !== null) close.mutate(ready);
+            if (ready !== null && !close.isPending) close.mutate(ready);
           }}
         >
           <Banner tone="ochre" title="Never a nicer cell in its place.">
@@ -76,7 +78,7 @@ export function ClosePickDialog({ surveyId, visit, reservesLeft, onClose }: Clos
             value={state}
             onChange={setState}
             {...(shown && state === null && { error: "Say what happened." })}
-            options={CLOSING.map((one) => ({ value: one, title: STATE_WORDS[one], text: STATE_MEANINGS[one] }))}
+            options={CLOSING_STATES.map((one) => ({ value: one, title: STATE_WORDS[one], text: STATE_MEANINGS[one] }))}
           />
           <Field
             label="Reason"
@@ -92,11 +94,13 @@ export function ClosePickDialog({ surveyId, visit, reservesLeft, onClose }: Clos
 }
 
 function openingText(picks: number, reservesLeft: number): string {
-  if (reservesLeft === 0) return "No reserve is left: the pick stays without a count, and the estimate says so.";
-  const opened = Math.min(picks, reservesLeft);
-  return picks === 1
-    ? "The next reserve in draw order opens in its place."
-    : `It was picked ${picks} times: the next ${formatCount(opened, "reserve")} in draw order open in its place.`;
+  const next =
+    picks === 1
+      ? "The next reserve in draw order opens in its place."
+      : `It was picked ${picks} times: the next ${picks} reserves in draw order open in its place.`;
+  if (reservesLeft >= picks) return next;
+  const left = reservesLeft === 0 ? "No reserve is" : `Only ${formatCount(reservesLeft, "reserve is", "reserves are")}`;
+  return `${next} ${left} left: the list goes on from the same seed, as long as the frame has cells for it.`;
 }
 
 function closedText({ opened, passedOver, unreplaced, reservesLeft }: Closed): string {
@@ -107,8 +111,12 @@ function closedText({ opened, passedOver, unreplaced, reservesLeft }: Closed): s
     ...opened
       .filter(({ repeatsCountedCell }) => repeatsCountedCell)
       .map(({ label }) => `${label} was counted before: its count enters again, nobody has to go.`),
-    passedOver.length === 0 ? "" : `Passed over, because on closed cells: ${formatList(passedOver.map(String))}.`,
-    unreplaced === 0 ? "" : `${formatCount(unreplaced, "pick")} found no reserve.`,
+    passedOver.length === 0
+      ? ""
+      : `Passed over, because their cells are closed: ${formatList(passedOver.map((position) => `pick ${position}`))}.`,
+    unreplaced === 0
+      ? ""
+      : `${formatCount(unreplaced, "pick")} found no reserve: the frame has no further cell for it.`,
     `${formatCount(reservesLeft, "reserve")} left.`,
   ];
   return parts.filter((part) => part !== "").join(" ");

@@ -1,7 +1,7 @@
 import { useState } from "react";
 import type { Visit } from "#shared/api/field.ts";
 import { useVisits } from "../../api/visits.ts";
-import { isSettled } from "../../api/visit-words.ts";
+import { isSettled, isVisited, peopleWithCells, waitsForLead } from "../../api/visit-words.ts";
 import { Banner } from "../../components/ui/Banner.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { EmptyState } from "../../components/ui/EmptyState.tsx";
@@ -15,7 +15,6 @@ import { CellsToVisit } from "./CellsToVisit.tsx";
 import { ClosePickDialog } from "./ClosePickDialog.tsx";
 import { FieldMap } from "./FieldMap.tsx";
 import { Safety } from "./Safety.tsx";
-import { waitsForLead } from "./VisitTable.tsx";
 import { WaypointPanel } from "./WaypointPanel.tsx";
 
 export interface FieldStageProps {
@@ -25,6 +24,7 @@ export interface FieldStageProps {
   readonly mayAssign: boolean;
   readonly mayClose: boolean;
   readonly mayExport: boolean;
+  readonly mayEnter: boolean;
   /** Sees only the cells that are theirs. */
   readonly ownOnly: boolean;
   readonly drawTo: string;
@@ -74,7 +74,12 @@ function Field({ data, ...props }: FieldStageProps & { readonly data: Visits }) 
       band={
         <Ledger
           items={ledgerOf(data, props.ownOnly)}
-          action={<ButtonLink to={props.countsTo}>Enter counts</ButtonLink>}
+          action={
+            // The one filled button of the page is "Share out" where cells can be shared out.
+            <ButtonLink variant={props.mayEnter && !props.mayAssign ? "primary" : "quiet"} to={props.countsTo}>
+              {props.mayEnter ? "Enter counts" : "To the counts"}
+            </ButtonLink>
+          }
         />
       }
       margin={<FieldMargin {...props} visits={data.visits} />}
@@ -123,7 +128,7 @@ function FieldMargin({ visits, ...props }: FieldStageProps & { readonly visits: 
             surveyId={props.surveyId}
             surveyName={props.surveyName}
             visits={visits}
-            people={props.ownOnly ? [] : peopleOf(visits)}
+            people={props.ownOnly ? [] : peopleWithCells(visits)}
           />
         </MarginNote>
       )}
@@ -143,7 +148,7 @@ function ledgerOf(data: Visits, ownOnly: boolean) {
   const assigned = data.visits.filter(({ assignedTo }) => assignedTo !== null).length;
   const own = [
     { key: "Counted", value: formatNumber(counted) },
-    { key: "Not visited yet", value: formatNumber(data.visits.filter((visit) => !isSettled(visit)).length) },
+    { key: "Not visited yet", value: formatNumber(data.visits.filter((visit) => !isVisited(visit)).length) },
   ];
   if (ownOnly) return own;
   return [
@@ -157,10 +162,4 @@ function ledgerOf(data: Visits, ownOnly: boolean) {
 function prefixText({ completePrefix, picks }: Visits): string {
   if (completePrefix === 0) return "no pick is complete from the first on";
   return completePrefix >= picks ? "every pick is settled" : `picks 1 to ${completePrefix} are complete`;
-}
-
-function peopleOf(visits: readonly Visit[]): { id: string; name: string }[] {
-  const people = new Map<string, string>();
-  for (const { assignedTo } of visits) if (assignedTo !== null) people.set(assignedTo.memberId, assignedTo.name);
-  return [...people].map(([id, name]) => ({ id, name }));
 }

@@ -1,7 +1,6 @@
 import type { Visit } from "#shared/api/field.ts";
-import { isSettled } from "../../api/visit-words.ts";
+import { isSettled, isVisited, peopleWithCells, waitsForLead } from "../../api/visit-words.ts";
 import { Select } from "../../components/ui/Select.tsx";
-import { waitsForLead } from "./VisitTable.tsx";
 
 export interface VisitFilter {
   /** A member's id, "nobody", or everybody where empty. */
@@ -14,7 +13,7 @@ export function shownVisits(visits: readonly Visit[], { who, state }: VisitFilte
     (visit) =>
       (who === "" || (who === "nobody" ? visit.assignedTo === null : visit.assignedTo?.memberId === who)) &&
       (state === "" ||
-        (state === "open" && !isSettled(visit)) ||
+        (state === "open" && !isVisited(visit)) ||
         (state === "settled" && isSettled(visit)) ||
         (state === "reported" && waitsForLead(visit))),
   );
@@ -27,8 +26,6 @@ interface VisitFiltersProps {
 }
 
 export function VisitFilters({ visits, filter, onFilter }: VisitFiltersProps) {
-  const people = new Map<string, string>();
-  for (const { assignedTo } of visits) if (assignedTo !== null) people.set(assignedTo.memberId, assignedTo.name);
   return (
     <span className="flex flex-wrap gap-2">
       <Select
@@ -38,7 +35,7 @@ export function VisitFilters({ visits, filter, onFilter }: VisitFiltersProps) {
         options={[
           { value: "", label: "everybody’s" },
           { value: "nobody", label: "nobody’s yet" },
-          ...[...people].map(([value, label]) => ({ value, label })),
+          ...peopleWithCells(visits).map(({ id, name }) => ({ value: id, label: name })),
         ]}
       />
       <Select

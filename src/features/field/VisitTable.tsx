@@ -1,9 +1,10 @@
 import type { Visit } from "#shared/api/field.ts";
-import { markOf } from "../../api/visit-words.ts";
+import { markOf, waitsForLead } from "../../api/visit-words.ts";
 import type { DataColumn } from "../../components/ui/data-column.ts";
 import { DataTable } from "../../components/ui/DataTable.tsx";
 import { VisitStateLabel } from "../../components/ui/VisitStateLabel.tsx";
 import { VISIT_COLUMNS } from "../../components/visits/visit-columns.tsx";
+import { VisitDetail } from "./VisitDetail.tsx";
 
 interface VisitTableProps {
   readonly visits: readonly Visit[];
@@ -12,58 +13,67 @@ interface VisitTableProps {
   readonly onSelect: (visitId: string, on: boolean) => void;
   readonly chosen: string | null;
   readonly onChoose: (visitId: string) => void;
+  /** Asks to close a cell; absent where that may not be done. */
+  readonly onClosing: ((visitId: string) => void) | undefined;
 }
 
-/** The cells to visit, one row a cell however often it was picked. */
-export function VisitTable({ visits, selected, onSelect, chosen, onChoose }: VisitTableProps) {
-  const columns: DataColumn<Visit>[] = [
-    ...VISIT_COLUMNS,
-    {
-      id: "who",
-      head: "Who and when",
-      sortBy: (visit) => visit.assignedTo?.name,
-      cell: (visit) => <span className="whitespace-nowrap">{whoText(visit)}</span>,
-    },
-    {
-      id: "state",
-      head: "State",
-      sortBy: (visit) => visit.count.state,
-      cell: (visit) => (
-        <span>
-          <VisitStateLabel state={markOf(visit.count)} />
-          {noteOf(visit) !== "" && <span className="q-help block">{noteOf(visit)}</span>}
-        </span>
-      ),
-    },
-  ];
-  const select: DataColumn<Visit> = {
-    id: "select",
-    head: <span className="sr-only">Selected</span>,
+const COLUMNS: readonly DataColumn<Visit>[] = [
+  ...VISIT_COLUMNS,
+  {
+    id: "who",
+    head: "Who and when",
+    sortBy: (visit) => visit.assignedTo?.name,
+    cell: (visit) => <span className="whitespace-nowrap">{whoText(visit)}</span>,
+  },
+  {
+    id: "state",
+    head: "State",
+    sortBy: (visit) => visit.count.state,
     cell: (visit) => (
-      <input
-        type="checkbox"
-        className="q-check"
-        aria-label={`Select ${visit.label}`}
-        checked={selected?.has(visit.id) ?? false}
-        onClick={(event) => event.stopPropagation()}
-        onChange={(event) => onSelect(visit.id, event.target.checked)}
-      />
+      <span>
+        <VisitStateLabel state={markOf(visit.count)} />
+        {noteOf(visit) !== "" && <span className="q-help block">{noteOf(visit)}</span>}
+      </span>
     ),
-  };
+  },
+];
+
+/** The cells to visit, one row a cell however often it was picked; the chosen one opens below its row. */
+export function VisitTable({ visits, selected, onSelect, chosen, onChoose, onClosing }: VisitTableProps) {
   return (
     <DataTable
       dense
       caption="Cells to visit"
-      columns={selected === null ? columns : [select, ...columns]}
+      columns={selected === null ? COLUMNS : [selectColumn(selected, onSelect), ...COLUMNS]}
       rows={visits}
       rowId={(visit) => visit.id}
       chosen={chosen}
       onChoose={onChoose}
       tone={(visit) => (waitsForLead(visit) ? "attention" : undefined)}
+      detail={(visit) => visit.id === chosen && <VisitDetail visit={visit} onClosing={onClosing} />}
       initialSort={{ column: "order", direction: "ascending" }}
       empty="No cell fits the filter."
     />
   );
+}
+
+/** The whole cell of the table ticks, so that a thumb need not hit the box. */
+function selectColumn(selected: ReadonlySet<string>, onSelect: VisitTableProps["onSelect"]): DataColumn<Visit> {
+  return {
+    id: "select",
+    head: <span className="sr-only">Selected</span>,
+    cell: (visit) => (
+      <label className="q-check-cell" onClick={(event) => event.stopPropagation()}>
+        <input
+          type="checkbox"
+          className="q-check"
+          aria-label={`Select ${visit.label}`}
+          checked={selected.has(visit.id)}
+          onChange={(event) => onSelect(visit.id, event.target.checked)}
+        />
+      </label>
+    ),
+  };
 }
 
 function whoText(visit: Visit): string {
@@ -72,13 +82,8 @@ function whoText(visit: Visit): string {
   return day === "" ? name : `${name}, ${day}`;
 }
 
-/** Reported as not countable, but not closed: no reserve has been opened for it. */
-export function waitsForLead(visit: Visit): boolean {
-  return visit.state === "in-use" && ["refused", "unsafe", "not-reached", "lost"].includes(visit.count.state);
-}
-
 function noteOf(visit: Visit): string {
   if (waitsForLead(visit)) return "reported, not closed yet";
   if (visit.state === "closed") return "closed";
-  return visit.openedFor === null ? "" : `reserve, opened for ${visit.openedFor}`;
+  return visit.openedFor === null ? "" : `reserve, opened for pick ${visit.openedFor}`;
 }

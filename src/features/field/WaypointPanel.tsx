@@ -1,6 +1,12 @@
 import { useState } from "react";
 import type { Visit } from "#shared/api/field.ts";
-import { NAME_LENGTHS, NAME_SCHEMES, type NameScheme, waypointNames } from "#shared/field/waypoint-names.ts";
+import {
+  NAME_LENGTHS,
+  NAME_SCHEMES,
+  type NameScheme,
+  type WaypointNames,
+  waypointNames,
+} from "#shared/field/waypoint-names.ts";
 import { Banner } from "../../components/ui/Banner.tsx";
 import { Button } from "../../components/ui/Button.tsx";
 import { Field } from "../../components/ui/Field.tsx";
@@ -35,7 +41,8 @@ const SCHEME_WORDS: Readonly<Record<NameScheme, string>> = {
 export function WaypointPanel({ surveyId, surveyName, visits, people }: WaypointPanelProps) {
   const [settings, setSettings] = useState<Settings>({ length: 10, scheme: "label", prefix: "" });
   const { length, scheme, prefix } = settings;
-  const [memberId, setMemberId] = useState("");
+  const [chosen, setChosen] = useState("");
+  const memberId = people.some(({ id }) => id === chosen) ? chosen : "";
   const exporting = useExportWaypoints(surveyId);
   const going = visits.filter(
     (visit) => visit.state === "in-use" && (memberId === "" || visit.assignedTo?.memberId === memberId),
@@ -60,6 +67,7 @@ export function WaypointPanel({ surveyId, surveyName, visits, people }: Waypoint
       prefix: prefix.trim(),
       memberId: memberId === "" ? null : memberId,
     };
+    if (exporting.isPending) return;
     exporting.mutate({ body, fileName: `${name}.${format}` });
   };
   return (
@@ -68,25 +76,13 @@ export function WaypointPanel({ surveyId, surveyName, visits, people }: Waypoint
         <Field label="Cells of">
           <Select
             value={memberId}
-            onChange={(event) => setMemberId(event.target.value)}
+            onChange={(event) => setChosen(event.target.value)}
             options={[{ value: "", label: "everybody" }, ...people.map(({ id, name }) => ({ value: id, label: name }))]}
           />
         </Field>
       )}
       <NameSettings settings={settings} onSettings={setSettings} prefixFits={prefixFits} />
-      <p>
-        {going.length === 0 ? "There is no cell to go to." : `${formatCount(going.length, "waypoint")}, one a cell: `}
-        <span className="q-mono">{named.names.slice(0, 4).join(" ")}</span>
-        {named.names.length > 4 && " …"}
-      </p>
-      {named.clashes.length > 0 && (
-        <Banner tone="ochre" title={`${formatCount(named.clashes.length, "name")} would stand for several cells.`}>
-          {`${named.clashes
-            .slice(0, 3)
-            .map(({ name, labels }) => `${name}: ${formatList(labels)}`)
-            .join("; ")}. ${named.nextStep ?? ""}`}
-        </Banner>
-      )}
+      <NamesPreview named={named} />
       {exporting.isError && <Refusal error={exporting.error} />}
       <div className="flex flex-wrap gap-3">
         <Button
@@ -109,6 +105,35 @@ export function WaypointPanel({ surveyId, surveyName, visits, people }: Waypoint
         corners, in degrees and in the frame’s metres.
       </p>
     </div>
+  );
+}
+
+/** The first names as the unit will show them, and what stands for several cells. */
+function NamesPreview({ named }: { readonly named: WaypointNames }) {
+  const { names, clashes, nextStep, notes } = named;
+  return (
+    <>
+      {notes.map((note) => (
+        <p key={note} className="q-help">
+          {note}
+        </p>
+      ))}
+      <p>
+        {names.length === 0 ? "There is no cell to go to." : `${formatCount(names.length, "waypoint")}, one a cell: `}
+        <span className="q-mono">{names.slice(0, 4).join(" ")}</span>
+        {names.length > 4 && " …"}
+      </p>
+      <div role="status">
+        {clashes.length > 0 && (
+          <Banner tone="ochre" title={`${formatCount(clashes.length, "name")} would stand for several cells.`}>
+            {`${clashes
+              .slice(0, 3)
+              .map(({ name, labels }) => `${name}: ${formatList(labels)}`)
+              .join("; ")}. ${nextStep ?? ""}`}
+          </Banner>
+        )}
+      </div>
+    </>
   );
 }
 

@@ -7,12 +7,11 @@ import { surveyKey } from "../../api/keys.ts";
 import { saveFile } from "../../api/save-file.ts";
 
 /** People who can be given cells: those with a role in the field. */
-export function useFieldMembers(surveyId: string, maySee: boolean) {
+export function useFieldMembers(surveyId: string) {
   return useQuery({
     queryKey: surveyKey(surveyId, "people"),
     queryFn: ({ signal }) => call(listMembers, { params: { surveyId }, signal }),
     select: ({ members }): Member[] => members.filter(({ roles }) => roles.some((role) => role !== "auditor")),
-    enabled: maySee,
   });
 }
 
