@@ -1,7 +1,9 @@
 import type { CrsChoice } from "#shared/api/area.ts";
 import type { FrameSpec, FrameSummary } from "#shared/api/frame.ts";
 import type { ImportReport } from "#shared/area/report.ts";
+import type { CountsTask, JudgedCounts } from "./judge-counts.ts";
 import type { EntriesTask, PlacedEntry } from "./place-entries.ts";
+import type { WaypointsTask, WrittenWaypoints } from "./write-waypoints.ts";
 
 /** The kinds of heavy work: what goes in and what comes out. Each runs in a worker thread (server/jobs/worker.ts). */
 export interface JobTasks {
@@ -21,6 +23,8 @@ export interface JobTasks {
     readonly salt: string;
   };
   "place-entries": EntriesTask;
+  "write-waypoints": WaypointsTask;
+  "judge-counts": CountsTask;
 }
 
 export interface JobResults {
@@ -51,6 +55,8 @@ export interface JobResults {
     readonly summary: FrameSummary;
   };
   "place-entries": PlacedEntry[];
+  "write-waypoints": WrittenWaypoints;
+  "judge-counts": JudgedCounts;
 }
 
 export type JobName = keyof JobTasks;

@@ -1,10 +1,12 @@
 import { Problem } from "#shared/problem.ts";
 import type { JobAnswer } from "./jobs.ts";
 import { searchEpsg } from "./epsg.ts";
+import { judgeCountsTask } from "./judge-counts.ts";
 import { makePlaneTask } from "./make-plane.ts";
 import { placeEntries } from "./place-entries.ts";
 import { readAreaTask } from "./read-area.ts";
 import { sealFrameTask } from "./seal-frame.ts";
+import { writeWaypoints } from "./write-waypoints.ts";
 import type { JobName, JobResults, JobTasks } from "./tasks.ts";
 
 type Work = { [N in JobName]: (task: JobTasks[N]) => JobResults[N] | Promise<JobResults[N]> };
@@ -15,6 +17,8 @@ const work: Work = {
   "search-crs": ({ text, projectedOnly }) => searchEpsg(text, 20, { projectedOnly }),
   "seal-frame": sealFrameTask,
   "place-entries": placeEntries,
+  "write-waypoints": writeWaypoints,
+  "judge-counts": judgeCountsTask,
 };
 
 /** Runs one task in a worker thread; a refusal comes back as a value, since errors lose their class on the way. */

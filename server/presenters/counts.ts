@@ -1,4 +1,5 @@
-import type { CountEntry, ImportVerdict } from "#shared/api/counts.ts";
+import type { CountEntry, ImportVerdict, TableQuestion } from "#shared/api/counts.ts";
+import type { TableQuestion as JudgedQuestion } from "#shared/counts/match-table.ts";
 import type { ImportView } from "../services/import-counts.ts";
 import type { EntriesView } from "../services/list-entries.ts";
 
@@ -20,21 +21,26 @@ export function presentEntries({ entries, names }: EntriesView): CountEntry[] {
   }));
 }
 
-const ROWS_SHOWN = 3;
-
-export function presentImport(view: ImportView): ImportVerdict {
-  const { columns, rows, notInTable, toWrite, notes } = view.verdict;
-  const { unit, label, count, state, note } = columns;
+export function presentImport({ judged, written, importedBefore }: ImportView): ImportVerdict {
   return {
-    fileSha256: view.fileSha256,
-    header: [...view.table.header],
-    firstRows: view.table.rows.slice(0, ROWS_SHOWN).map((row) => [...row]),
-    columns: { unit, label, count, state, note },
-    notes: [...view.notes, ...notes],
-    rows: rows.map(({ row, verdict, message, cell, said, flag }) => ({ row, verdict, message, cell, said, flag })),
-    notInTable: notInTable.map((cell) => cell.label),
-    toWrite: toWrite.length,
-    written: view.written,
-    importedBefore: view.importedBefore,
+    fileSha256: judged.fileSha256,
+    header: [...judged.header],
+    firstRows: judged.firstRows.map((row) => [...row]),
+    columns: judged.columns,
+    notes: [...judged.notes],
+    questions: judged.questions.map(presentQuestion),
+    dateOrder: judged.dateOrder,
+    rows: judged.rows.map(({ row, verdict, message, cell, said, day, by, flag }) => ({
+      ...{ row, verdict, message, cell, said, day, by, flag },
+    })),
+    numbers: { ...judged.numbers },
+    notInTable: [...judged.notInTable],
+    toWrite: judged.toWrite.length,
+    written,
+    importedBefore,
   };
+}
+
+function presentQuestion(question: JudgedQuestion): TableQuestion {
+  return question.kind === "observer" ? { ...question, candidates: [...question.candidates] } : question;
 }

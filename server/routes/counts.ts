@@ -22,5 +22,7 @@ export function countRoutes(mount: Mount): void {
 
   mount.survey(api.listEntries, (ctx, { params }) => ({ entries: presentEntries(listEntries(ctx, params.visitId)) }));
 
-  mount.survey(api.importCounts, (ctx, { body, file }) => presentImport(importCounts(ctx, file, body)));
+  mount.survey(api.importCounts, async (ctx, { body, file, signal }) =>
+    presentImport(await importCounts(ctx, file, body, signal)),
+  );
 }

@@ -13,8 +13,8 @@ export function fieldRoutes(mount: Mount): void {
 
   mount.survey(api.closePick, (ctx, { params, body }) => presentClosing(closePick(ctx, params.visitId, body)));
 
-  mount.survey(api.exportWaypoints, (ctx, { body }) => {
-    const { name, format, text } = exportWaypoints(ctx, body);
+  mount.survey(api.exportWaypoints, async (ctx, { body, signal }) => {
+    const { name, format, text } = await exportWaypoints(ctx, body, signal);
     return { type: format === "gpx" ? "application/gpx+xml" : "text/csv", fileName: name, body: text };
   });
 }

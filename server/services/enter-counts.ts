@@ -14,6 +14,8 @@ export interface NewCount {
   readonly said: Said;
   readonly note: string;
   readonly madeAt: string;
+  /** Who counted, where it was somebody else than whoever writes it down. */
+  readonly observerId?: string;
 }
 
 /** Writes down first counts, all or none; an entry that is sent twice is kept once. */
@@ -56,7 +58,7 @@ function firstEntry(ctx: Context, count: NewCount, importId: string | null): Cou
     id: count.id,
     visitId: count.visitId,
     targetId: count.targetId,
-    observerId: memberId,
+    observerId: count.observerId ?? memberId,
     purpose: "first",
     state: count.said.state,
     value: valueOf(count.said),

@@ -2,6 +2,7 @@ import * as z from "zod/mini";
 import { id, none, reason, sha256Hex, surveyParams, utc, uuid } from "#shared/api/common.ts";
 import { contract, json } from "#shared/api/contract.ts";
 import { visit, visitState } from "#shared/api/field.ts";
+import { LONGEST_NAME } from "#shared/counts/table-observers.ts";
 
 const value = z.number().check(z.minimum(0), z.maximum(1e12));
 const note = z.string().check(z.trim(), z.maxLength(2000));
@@ -86,7 +87,20 @@ export const tableColumns = z.object({
   count: z.int(),
   state: z.int(),
   note: z.int(),
+  observer: z.int(),
+  date: z.int(),
 });
+
+/** Which of two numbers comes first in dates such as 03/04/2031. */
+export const dateOrder = z.enum(["day-first", "month-first"]);
+
+const nameInFile = z.string().check(z.maxLength(LONGEST_NAME));
+
+/** A name in the file is a member's; or it stays a name in the notes, spelled so. */
+export const observerAnswer = z.union([
+  z.object({ written: nameInFile, member: id }),
+  z.object({ written: nameInFile, name: nameInFile }),
+]);
 
 export const rowVerdict = z.object({
   /** Line of the table, the first data row being 1. */
@@ -95,8 +109,38 @@ export const rowVerdict = z.object({
   message: z.string(),
   cell: z.string(),
   said: z.string(),
+  /** The day of the count on the clocks of the place, as it was read ("2031-05-03"); empty where the row tells none. */
+  day: z.string(),
+  /** Who counted: a member's name, or one that stays in the note; empty where the row tells none. */
+  by: z.string(),
+  /** What to look at although the row is good; empty for most. */
   flag: z.string(),
 });
+
+/** Asked once a file or once a name; no row that waits for an answer is written. */
+export const tableQuestion = z.discriminatedUnion("kind", [
+  z.object({
+    kind: z.literal("date-order"),
+    why: z.string(),
+    /** One of the dates, and the day that it would be either way. */
+    written: z.string(),
+    dayFirst: z.string(),
+    monthFirst: z.string(),
+    rows: z.int(),
+  }),
+  z.object({
+    kind: z.literal("observer"),
+    written: z.string(),
+    rows: z.int(),
+    candidates: z.array(
+      z.discriminatedUnion("kind", [
+        z.object({ kind: z.literal("member"), member: id, name: z.string() }),
+        z.object({ kind: z.literal("spelling"), name: z.string() }),
+      ]),
+    ),
+  }),
+]);
+export type TableQuestion = z.infer<typeof tableQuestion>;
 
 export const importVerdict = z.object({
   fileSha256: sha256Hex,
@@ -104,7 +148,13 @@ export const importVerdict = z.object({
   firstRows: z.array(z.array(z.string())),
   columns: tableColumns,
   notes: z.array(z.string()),
+  questions: z.array(tableQuestion),
+  /** The order by which dates were read; null where none needed it or it is asked. */
+  dateOrder: z.nullable(dateOrder),
+  /** At most 5,000 rows of the table, those first that are written, asked about or refused. */
   rows: z.array(rowVerdict),
+  /** How many rows have each verdict, of all. */
+  numbers: z.record(rowVerdict.shape.verdict, z.int()),
   /** Drawn cells that the table doesn't name: not yet counted, never zero. */
   notInTable: z.array(z.string()),
   toWrite: z.int(),
@@ -124,9 +174,14 @@ export const importCounts = contract({
   query: none,
   body: z.object({
     targetId: id,
-    columns: z.optional(tableColumns),
+    /** Columns that a person chose; what is left out is guessed. */
+    columns: z.optional(z.partial(tableColumns)),
     /** Texts such as "nil" that the reader has said mean zero. */
     zeroWords: z.array(z.string().check(z.maxLength(40))).check(z.maxLength(20)),
+    /** The answer to the question of that kind. */
+    dateOrder: z.optional(dateOrder),
+    /** Answers to the questions about names. */
+    observers: z.optional(z.array(observerAnswer).check(z.maxLength(1000))),
     /** null judges; the hash that was judged writes. */
     write: z.nullable(sha256Hex),
   }),

@@ -42,7 +42,18 @@ const NAMES: Readonly<Record<TableColumn, readonly string[]>> = {
   state: ["state", "status", "visit state", "outcome", "result"],
   note: ["reason", "note", "notes", "remark", "remarks", "comment", "comments"],
   observer: ["observer", "counted by", "counter", "who", "initials", "recorder", "observers", "name of observer"],
-  date: ["date", "counted at", "day", "made at", "counted on", "time", "date and time"],
+  date: [
+    "date",
+    "date and time",
+    "counted on",
+    "counted at",
+    "date counted",
+    "survey date",
+    "visit date",
+    "made at",
+    "day",
+    "timestamp",
+  ],
 };
 
 /** Columns that look like units or counts but are places in the draw. */

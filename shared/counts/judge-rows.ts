@@ -10,13 +10,25 @@ export interface CellToCount {
   readonly unit: number;
   readonly label: string;
   readonly orders: readonly number[];
+  /** When the cell was first to be visited: drawn, or opened as a reserve. */
+  readonly openedAt?: string;
 }
 
 export type Verdict = "new" | "same" | "different" | "not-drawn" | "empty" | "question" | "refused";
 
 /** What can be wrong with a row beside its count. */
 export type RowProblem =
-  RefusedKind | QuestionKind | "no-cell" | "label-mangled" | "unit-unreadable" | "unit-label" | "state";
+  | RefusedKind
+  | QuestionKind
+  | "no-cell"
+  | "label-mangled"
+  | "unit-unreadable"
+  | "unit-label"
+  | "state"
+  | "date-order"
+  | "date-impossible"
+  | "date-future"
+  | "observer";
 
 /** What somebody says of a cell: anything but that nobody was there. */
 export type SaidCount = Exclude<CellCount, { state: "not-visited" }>;
@@ -36,6 +48,7 @@ export interface ReadRow {
   readonly found?: CellToCount;
   readonly count?: SaidCount;
   readonly note: string;
+  /** As written, outer spaces and all: they may be what parts one spelling from another. */
   readonly observer: string;
   readonly date: string;
 }
@@ -147,7 +160,8 @@ export function readRows(
   rules: CountRules,
 ): ReadRow[] {
   return rows.map((cells, i) => {
-    const text = (column: number): string => (column < 0 ? "" : (cells[column] ?? "").trim());
+    const written = (column: number): string => (column < 0 ? "" : (cells[column] ?? ""));
+    const text = (column: number): string => written(column).trim();
     const [unitText, label, said, stateText] = [
       text(columns.unit),
       text(columns.label),
@@ -158,7 +172,8 @@ export function readRows(
     const found = findCell(unitText, label, index);
     const named = "orders" in found;
     const judgement = named ? judgeSaid(said, stateText, note, rules) : found;
-    const extra = { note, observer: text(columns.observer), date: text(columns.date) };
+    const observer = text(columns.observer) === "" ? "" : written(columns.observer);
+    const extra = { note, observer, date: text(columns.date) };
     const words = [said, stateText].filter((part) => part !== "").join(", ");
     const cell = named ? found.label : label === "" ? unitText : label;
     return { row: i + 1, ...judgement, cell, said: words, ...(named ? { found } : {}), ...extra };

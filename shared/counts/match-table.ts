@@ -12,6 +12,16 @@ import {
   type Verdict,
 } from "./judge-rows.ts";
 import type { CountRules } from "./read-count-text.ts";
+import type { DateOrder } from "./read-date-text.ts";
+import { judgeDates, type DatedRow, type DateOrderQuestion, type DateRules } from "./table-dates.ts";
+import {
+  judgeObservers,
+  observerOf,
+  type Observer,
+  type ObserverAnswer,
+  type ObserverQuestion,
+  type ObserverSaid,
+} from "./table-observers.ts";
 
 export interface TableToMatch {
   readonly header: readonly string[];
@@ -24,11 +34,23 @@ export interface TableToMatch {
   readonly rules: CountRules;
   /** Names of what is counted, to know its column by. */
   readonly targetWords?: readonly string[];
+  readonly dates: DateRules;
+  /** Everybody of the survey. */
+  readonly members: readonly Observer[];
+  /** What a person has said of names in the file. */
+  readonly observers: readonly ObserverAnswer[];
 }
 
-interface RowVerdict extends Omit<ReadRow, "found"> {
+/** What is asked once a file or once a name. */
+export type TableQuestion = DateOrderQuestion | ObserverQuestion;
+
+export interface RowVerdict extends Omit<ReadRow, "found"> {
   readonly unit?: number;
   readonly orders?: readonly number[];
+  /** The day of the count as it was read, on the clocks of the place; empty where the row tells none. */
+  readonly day: string;
+  /** Who counted: a member's name, or the name that stays in the note; empty where the row tells none. */
+  readonly by: string;
   /** What to look at although the row is good; empty for most. */
   readonly flag: string;
 }
@@ -39,9 +61,11 @@ export interface CountToWrite {
   readonly unit: number;
   readonly label: string;
   readonly count: SaidCount;
+  /** The row's note, with the name of an observer who is no member and with a date that could not be read. */
   readonly note: string;
-  readonly observer: string;
-  readonly date: string;
+  readonly observer: ObserverSaid;
+  /** The moment of the count; null where the row tells none. */
+  readonly madeAt: string | null;
 }
 
 export interface TableVerdict {
@@ -54,11 +78,17 @@ export interface TableVerdict {
   readonly numbers: Readonly<Record<Verdict, number>>;
   /** How many rows of each kind of question or refusal. */
   readonly kinds: readonly { readonly kind: RowProblem; readonly rows: number }[];
-  /** What is asked or missing before anything can be matched; empty where all is known. */
+  readonly questions: readonly TableQuestion[];
+  /** The order by which dates were read; null where none needed it. */
+  readonly dateOrder: DateOrder | null;
+  /** The answers that brought a name in the file to a member or to another spelling, among the rows to write. */
+  readonly merged: readonly ObserverAnswer[];
+  /** What is missing before anything can be matched, and how dates and names were read. */
   readonly notes: readonly string[];
 }
 
 const MOST_NAMED = 4;
+const LONGEST_NOTE = 2000;
 
 const list = (words: readonly (string | number)[]): string =>
   words.length < 2 ? words.join("") : `${words.slice(0, -1).join(", ")} and ${words.at(-1) ?? ""}`;
@@ -126,14 +156,42 @@ function columnNotes({ unit, label, count, state }: ColumnChoice): string[] {
   return notes;
 }
 
-function shown({ found, ...row }: ReadRow, flag: string): RowVerdict {
-  return { ...row, flag, ...(found === undefined ? {} : { unit: found.unit, orders: found.orders }) };
+function shown({ found, ...row }: ReadRow, told: Pick<RowVerdict, "day" | "by" | "flag">): RowVerdict {
+  return { ...row, ...told, ...(found === undefined ? {} : { unit: found.unit, orders: found.orders }) };
 }
 
 function verdictNumbers(rows: readonly ReadRow[]): Record<Verdict, number> {
   const numbers = { new: 0, same: 0, different: 0, "not-drawn": 0, empty: 0, question: 0, refused: 0 };
   for (const row of rows) numbers[row.verdict] += 1;
   return numbers;
+}
+
+const nameOf = (observer: ObserverSaid): string => (observer.kind === "nobody" ? "" : observer.name);
+
+function toWriteOf(row: ReadRow, observer: ObserverSaid, date: DatedRow | undefined): CountToWrite[] {
+  const { verdict, found, count } = row;
+  if (verdict !== "new" || found === undefined || count === undefined) return [];
+  const by = observer.kind === "name" ? `counted by ${observer.name.trim()}` : "";
+  const on = date === undefined || date.kept === "" ? "" : `on ${date.kept}`;
+  const note = [row.note, by, on].filter((part) => part !== "").join("; ");
+  return [
+    {
+      row: row.row,
+      unit: found.unit,
+      label: found.label,
+      count,
+      note: note.slice(0, LONGEST_NOTE),
+      observer,
+      madeAt: date?.madeAt ?? null,
+    },
+  ];
+}
+
+function mergedOf(rows: readonly ReadRow[], answers: readonly ObserverAnswer[]): ObserverAnswer[] {
+  const written = new Set(rows.filter((row) => row.verdict === "new").map((row) => row.observer));
+  return answers.filter(
+    (answer) => written.has(answer.written) && ("member" in answer || answer.name !== answer.written),
+  );
 }
 
 /**
@@ -146,26 +204,31 @@ export function matchTable(table: TableToMatch): TableVerdict {
   const index = indexCells(cells);
   const known = { units: new Set(index.byUnit.keys()), labels: new Set(index.byLabel.keys()) };
   const columns = table.columns ?? guessColumns(header, rows, known, table.targetWords);
-  const judged = judgeTogether(readRows(rows, columns, index, rules), existing);
-  const toWrite = judged.flatMap(({ row, verdict, found, count, note, observer, date }): CountToWrite[] =>
-    verdict === "new" && found !== undefined && count !== undefined
-      ? [{ row, unit: found.unit, label: found.label, count, note, observer, date }]
-      : [],
-  );
+  const dated = judgeDates(judgeTogether(readRows(rows, columns, index, rules), existing), table.dates);
+  const observed = judgeObservers(dated.rows, table.members, table.observers);
+  const judged = observed.rows;
   const named = new Set(judged.flatMap((row) => (row.found === undefined ? [] : [row.found.unit])));
-  const flag = flagOf(judged, existing);
+  const far = flagOf(judged, existing);
   const kinds = new Map<RowProblem, number>();
   for (const { kind } of judged) if (kind !== "") kinds.set(kind, (kinds.get(kind) ?? 0) + 1);
   return {
     columns,
-    rows: judged.map((row) => shown(row, row.row === flag.row ? flag.flag : "")),
-    toWrite,
+    rows: judged.map((row) => {
+      const flags = row.verdict === "new" ? [...(dated.flags.get(row.row) ?? [])] : [];
+      if (row.row === far.row) flags.unshift(far.flag);
+      const by = nameOf(observerOf(observed, row.row));
+      return shown(row, { day: dated.dates.get(row.row)?.day ?? "", by, flag: flags.join(" ") });
+    }),
+    toWrite: judged.flatMap((row) => toWriteOf(row, observerOf(observed, row.row), dated.dates.get(row.row))),
     notInTable: cells.filter(({ unit }) => {
       const state = existing.get(unit)?.state ?? "not-visited";
       return state === "not-visited" && !named.has(unit);
     }),
     numbers: verdictNumbers(judged),
     kinds: [...kinds].map(([kind, number]) => ({ kind, rows: number })),
-    notes: columnNotes(columns),
+    questions: [...(dated.question === null ? [] : [dated.question]), ...observed.questions],
+    dateOrder: dated.order,
+    merged: mergedOf(judged, table.observers),
+    notes: [...columnNotes(columns), ...dated.notes, ...observed.notes],
   };
 }

@@ -117,13 +117,28 @@ export const EVENT_PAYLOADS = {
   }),
   "count-entered": countPayload,
   "count-amended": countPayload,
-  "counts-imported": z.object({
-    version: v1,
-    importId: id,
-    fileName: z.string(),
-    fileSha256: sha256,
-    written: z.int(),
-  }),
+  "counts-imported": z.discriminatedUnion("version", [
+    z.object({
+      version: v1,
+      importId: id,
+      fileName: z.string(),
+      fileSha256: sha256,
+      written: z.int(),
+    }),
+    z.object({
+      version: z.literal(2),
+      importId: id,
+      fileName: z.string(),
+      fileSha256: sha256,
+      written: z.int(),
+      /** The order of day and month by which the file's dates were read; null where none needed it. */
+      dateOrder: z.nullable(z.enum(["day-first", "month-first"])),
+      /** Names in the file that a person said are a member's, or the same as another spelling. */
+      merged: z.array(
+        z.union([z.object({ written: z.string(), member: id }), z.object({ written: z.string(), name: z.string() })]),
+      ),
+    }),
+  ]),
   "estimate-kept": z.object({ version: v1, estimateId: id, targetId: id, seasonId: id, resultSha256: sha256 }),
 } as const;
 

@@ -1,48 +1,20 @@
 import { randomUUID } from "node:crypto";
-import { beforeEach, describe, expect, test } from "vitest";
+import { describe, expect, test } from "vitest";
 import { enterCounts, listEntries } from "#shared/api/counts.ts";
-import { assignVisits, listVisits, type Visit } from "#shared/api/field.ts";
+import { assignVisits, listVisits } from "#shared/api/field.ts";
 import { listMembers } from "#shared/api/surveys.ts";
 import { allEvents } from "#server/db/events.ts";
-import { anotherSurvey, declaring, drawCells } from "../fixtures/sealed-frame.ts";
-import { surveyEachTest } from "../fixtures/each-survey.ts";
+import { drawnSurveyEachTest, MADE } from "../fixtures/drawn-survey.ts";
+import { anotherSurvey } from "../fixtures/sealed-frame.ts";
 
-const survey = surveyEachTest();
+const survey = drawnSurveyEachTest();
 
-const MADE = "2031-05-02T07:00:00Z";
-let visits: Visit[];
-let targetId: string;
-
-/** Ten different cells drawn. */
-async function begin(): Promise<void> {
-  await drawCells(survey.team, declaring(survey.frame.frameId, { design: { kind: "srs-wor", n: 10 } }));
-  ({ visits, targetId } = await survey.visits());
-}
-beforeEach(() => begin(), 30_000);
-
-const visit = (place: number): Visit => {
-  const found = visits[place];
-  if (!found) throw new Error(`no visit ${place}`);
-  return found;
-};
-type Said = { state: "counted"; value: number } | { state: "refused" | "not-in-population" | "lost" };
-const entry = (place: number, said: Said, changes: Record<string, unknown> = {}) => ({
-  id: randomUUID() as string,
-  visitId: visit(place).id,
-  targetId,
-  said,
-  note: "",
-  madeAt: MADE,
-  ...changes,
-});
-const enter = (entries: ReturnType<typeof entry>[], client = survey.team.lead) =>
-  client.call(enterCounts, { params: survey.here(), body: { entries } });
 describe("entering counts", () => {
   test("zero is a count; a state has none; each entry is one event", async () => {
-    const { json } = await enter([
-      entry(0, { state: "counted", value: 0 }),
-      entry(1, { state: "counted", value: 12 }, { note: "by the ditch" }),
-      entry(2, { state: "not-in-population" }),
+    const { json } = await survey.enter([
+      survey.entry(0, { state: "counted", value: 0 }),
+      survey.entry(1, { state: "counted", value: 12 }, { note: "by the ditch" }),
+      survey.entry(2, { state: "not-in-population" }),
     ]);
     expect(json.visits.map((one) => one.count)).toMatchObject([
       { state: "counted", value: 0, by: "Lead", at: MADE, amended: false },
@@ -54,61 +26,67 @@ describe("entering counts", () => {
     const payload = JSON.parse(
       allEvents(survey.server.platform.db, survey.team.surveyId).at(-1)?.payload ?? "",
     ) as object;
-    expect(payload).toMatchObject({ unit: visit(2).unit, state: "not-in-population", value: null });
+    expect(payload).toMatchObject({ unit: survey.cell(2).unit, state: "not-in-population", value: null });
   });
 
   test("the same entry sent twice, and twice at once, is kept once and answered as if new", async () => {
-    const one = entry(0, { state: "counted", value: 3 });
+    const one = survey.entry(0, { state: "counted", value: 3 });
     const before = survey.kinds().length;
-    const replies = await Promise.all([enter([one]), enter([one]), enter([one])]);
+    const replies = await Promise.all([survey.enter([one]), survey.enter([one]), survey.enter([one])]);
     expect(replies.map((reply) => reply.status)).toEqual([200, 200, 200]);
     expect(new Set(replies.map((reply) => JSON.stringify(reply.json))).size).toBe(1);
     expect(survey.kinds()).toHaveLength(before + 1);
-    const { json } = await survey.team.lead.call(listEntries, { params: { ...survey.here(), visitId: visit(0).id } });
+    const { json } = await survey.team.lead.call(listEntries, {
+      params: { ...survey.here(), visitId: survey.cell(0).id },
+    });
     expect(json.entries).toHaveLength(1);
   });
 
   test("another content under the same id is refused", async () => {
-    const one = entry(0, { state: "counted", value: 3 });
-    await enter([one]);
-    expect((await enter([{ ...one, said: { state: "counted", value: 4 } }])).json.code).toBe("count-invalid");
-    expect((await enter([{ ...one, note: "or so" }])).json.code).toBe("count-invalid");
+    const one = survey.entry(0, { state: "counted", value: 3 });
+    await survey.enter([one]);
+    expect((await survey.enter([{ ...one, said: { state: "counted", value: 4 } }])).json.code).toBe("count-invalid");
+    expect((await survey.enter([{ ...one, note: "or so" }])).json.code).toBe("count-invalid");
   });
 
   test("a cell with a count is amended, not written over; and then none of the entries is kept", async () => {
-    await enter([entry(0, { state: "counted", value: 3 })]);
-    const refused = await enter([entry(1, { state: "counted", value: 1 }), entry(0, { state: "counted", value: 4 })]);
+    await survey.enter([survey.entry(0, { state: "counted", value: 3 })]);
+    const refused = await survey.enter([
+      survey.entry(1, { state: "counted", value: 1 }),
+      survey.entry(0, { state: "counted", value: 4 }),
+    ]);
     expect(refused.json.code).toBe("count-exists");
-    expect(refused.json.detail).toContain(`Cell ${visit(0).label} has one: 3`);
+    expect(refused.json.detail).toContain(`Cell ${survey.cell(0).label} has one: 3`);
     const { json } = await survey.team.lead.call(listVisits, { params: survey.here() });
-    expect(json.visits.find((one) => one.id === visit(1).id)?.count.state).toBe("not-visited");
+    expect(json.visits.find((one) => one.id === survey.cell(1).id)?.count.state).toBe("not-visited");
   });
 });
 
 describe("what can be entered, and by whom", () => {
   test("where objects are counted whole a fraction is refused by cell; where they are measured it is kept", async () => {
-    const refused = await enter([entry(0, { state: "counted", value: 2.5 })]);
+    const refused = await survey.enter([survey.entry(0, { state: "counted", value: 2.5 })]);
     expect(refused.json.code).toBe("count-invalid");
-    expect(refused.json.detail).toContain(`2.5 in cell ${visit(0).label}`);
-    await survey.begin({ wholeNumbers: false });
-    await begin();
-    expect((await enter([entry(0, { state: "counted", value: 2.5 })])).json.visits[0]?.count).toMatchObject({
+    expect(refused.json.detail).toContain(`2.5 in cell ${survey.cell(0).label}`);
+    await survey.drawAgain({ wholeNumbers: false });
+    expect(
+      (await survey.enter([survey.entry(0, { state: "counted", value: 2.5 })])).json.visits[0]?.count,
+    ).toMatchObject({
       value: 2.5,
     });
   });
 
   test("negative numbers, unknown targets and cells that are not to be visited are refused", async () => {
-    expect((await enter([entry(0, { state: "counted", value: -1 })])).json.code).toBe("input-invalid");
-    expect((await enter([entry(0, { state: "counted", value: 1 }, { targetId: "x" })])).json.code).toBe(
+    expect((await survey.enter([survey.entry(0, { state: "counted", value: -1 })])).json.code).toBe("input-invalid");
+    expect((await survey.enter([survey.entry(0, { state: "counted", value: 1 }, { targetId: "x" })])).json.code).toBe(
       "count-invalid",
     );
-    expect((await enter([entry(0, { state: "counted", value: 1 }, { visitId: "x" })])).json.code).toBe(
+    expect((await survey.enter([survey.entry(0, { state: "counted", value: 1 }, { visitId: "x" })])).json.code).toBe(
       "cell-not-drawn",
     );
     const other = await anotherSurvey(survey.team);
     const foreign = await other.lead.call(enterCounts, {
       params: { surveyId: other.surveyId },
-      body: { entries: [entry(0, { state: "counted", value: 1 })] },
+      body: { entries: [survey.entry(0, { state: "counted", value: 1 })] },
     });
     expect(foreign.json.code).toBe("cell-not-drawn");
   });
@@ -116,19 +94,19 @@ describe("what can be entered, and by whom", () => {
   test("a counter writes to their own cells only, and reads only theirs", async () => {
     const members = (await survey.team.planner.call(listMembers, { params: survey.here() })).json.members;
     const memberId = members.find((member) => member.roles.includes("counter"))?.id ?? "";
-    const refused = await enter([entry(0, { state: "counted", value: 1 })], survey.team.counter);
+    const refused = await survey.enter([survey.entry(0, { state: "counted", value: 1 })], "counter");
     expect(refused.json.code).toBe("not-allowed");
-    expect(refused.json.detail).toContain(visit(0).label);
-    const params = { ...survey.here(), visitId: visit(0).id };
+    expect(refused.json.detail).toContain(survey.cell(0).label);
+    const params = { ...survey.here(), visitId: survey.cell(0).id };
     expect((await survey.team.counter.call(listEntries, { params })).json.code).toBe("not-allowed");
     await survey.team.lead.call(assignVisits, {
       params: survey.here(),
-      body: { visitIds: [visit(0).id], memberId, day: "" },
+      body: { visitIds: [survey.cell(0).id], memberId, day: "" },
     });
-    const kept = await enter([entry(0, { state: "counted", value: 1 })], survey.team.counter);
+    const kept = await survey.enter([survey.entry(0, { state: "counted", value: 1 })], "counter");
     expect(kept.json.visits[0]?.count).toMatchObject({ value: 1, by: "Counter" });
     expect((await survey.team.counter.call(listEntries, { params })).json.entries).toHaveLength(1);
-    expect((await enter([entry(1, { state: "counted", value: 1 })], survey.team.auditor)).json.code).toBe(
+    expect((await survey.enter([survey.entry(1, { state: "counted", value: 1 })], "auditor")).json.code).toBe(
       "not-allowed",
     );
   });
@@ -139,17 +117,17 @@ describe("what can be entered, and by whom", () => {
     const give = (memberId: string) =>
       survey.team.lead.call(assignVisits, {
         params: survey.here(),
-        body: { visitIds: [visit(0).id], memberId, day: "" },
+        body: { visitIds: [survey.cell(0).id], memberId, day: "" },
       });
     await give(idOf("counter"));
-    const one = entry(0, { state: "counted", value: 1 });
-    await enter([one], survey.team.counter);
+    const one = survey.entry(0, { state: "counted", value: 1 });
+    await survey.enter([one], "counter");
     await give(idOf("lead"));
     const before = survey.kinds().length;
-    const again = await enter([one], survey.team.counter);
+    const again = await survey.enter([one], "counter");
     expect(again.status).toBe(200);
     expect(again.json.visits[0]?.count).toMatchObject({ value: 1, by: "Counter" });
     expect(survey.kinds()).toHaveLength(before);
-    expect((await enter([{ ...one, id: randomUUID() }], survey.team.counter)).json.code).toBe("not-allowed");
+    expect((await survey.enter([{ ...one, id: randomUUID() }], "counter")).json.code).toBe("not-allowed");
   });
 });

@@ -3,6 +3,9 @@ import { createHash, randomUUID } from "node:crypto";
 import { describe, expect, test } from "vitest";
 import { type DrawDetail } from "#shared/api/draw.ts";
 import { assignVisits, closePick, exportWaypoints } from "#shared/api/field.ts";
+import { exportWaypoints as makeFile } from "#server/services/export-waypoints.ts";
+import { actingAs } from "../fixtures/acting-as.ts";
+import { countCells } from "../fixtures/count-cells.ts";
 import { declaring, drawCells } from "../fixtures/sealed-frame.ts";
 import { surveyEachTest } from "../fixtures/each-survey.ts";
 
@@ -106,5 +109,40 @@ describe("which cells and names", () => {
 
   test("before a draw there is nothing to export", async () => {
     expect((await exporting()).json.code).toBe("draw-missing");
+  });
+});
+
+describe("what happens while the file is made", () => {
+  const wanted = { format: "csv", nameLength: 10, prefix: "", memberId: null } as const;
+  const never = new AbortController().signal;
+  const exportWhile = (meanwhile: () => unknown) => makeFile(actingAs(survey, "lead", meanwhile), wanted, never);
+  /** Sequence of the event that the file quotes, in its last column but one. */
+  const quoted = (text: string) => Number(text.trimEnd().split("\r\n").at(-1)?.split(",").at(-2));
+  const count = async () => {
+    const { visits } = await survey.visits();
+    const next = visits.find((visit) => visit.count.state === "not-visited");
+    await countCells(survey, () => 1, new Set([next?.unit ?? 0]));
+  };
+
+  // The draw is event n; a count comes as n + 1 while the first file is made; the second file quotes that, and is event n + 2.
+  test("the file quotes the newest event: where one came meanwhile it is made again", async () => {
+    await drawn();
+    const before = survey.kinds().length;
+    let times = 0;
+    const file = await exportWhile(async () => {
+      times += 1;
+      if (times === 1) await count();
+    });
+    expect(times).toBe(2);
+    expect(quoted(file.text)).toBe(before + 1);
+    expect(survey.kinds().slice(before)).toEqual(["count-entered", "waypoints-exported"]);
+    expect(survey.lastPayload()).toMatchObject({ fileSha256: createHash("sha256").update(file.text).digest("hex") });
+  });
+
+  test("after five files that were outrun it says so and nothing is on record", async () => {
+    await drawn();
+    const before = survey.kinds().length;
+    await expect(exportWhile(count)).rejects.toMatchObject({ code: "changed-meanwhile" });
+    expect(survey.kinds().slice(before)).toEqual(Array(5).fill("count-entered"));
   });
 });

@@ -49,7 +49,7 @@ export async function fillDemo(platform: Platform, accounts: readonly DemoAccoun
   const plane = await bringBoundary(story, surveyId);
   const frameId = await sealGrid(story, surveyId, plane);
   await drawCells(story, surveyId, frameId);
-  shareOut(story, surveyId);
+  await shareOut(story, surveyId);
   countHalf(story, surveyId);
 }
 
@@ -126,7 +126,7 @@ async function drawCells(story: Story, surveyId: string, frameId: string): Promi
 }
 
 /** The first half of the cells in draw order goes to the counter, the rest to the lead; then waypoints for both. */
-function shareOut(story: Story, surveyId: string): void {
+async function shareOut(story: Story, surveyId: string): Promise<void> {
   story.at(4, "09:00");
   const lead = story.context("lead", surveyId);
   const ids = listVisits(lead).visits.map(({ visit }) => visit.id);
@@ -136,7 +136,8 @@ function shareOut(story: Story, surveyId: string): void {
   story.later(2);
   assignVisits(lead, { visitIds: ids.slice(half), memberId: lead.memberId, day: "Second week" });
   story.later(20);
-  exportWaypoints(story.context("lead", surveyId), { format: "gpx", nameLength: 8, prefix: "", memberId: null });
+  const wanted = { format: "gpx", nameLength: 8, prefix: "", memberId: null } as const;
+  await exportWaypoints(story.context("lead", surveyId), wanted, never);
 }
 
 function countHalf(story: Story, surveyId: string): void {

@@ -1,3 +1,4 @@
+import { dayOrTime, isBefore, localText, zoneClock } from "#shared/counts/zone-time.ts";
 import type { CountPayload } from "#shared/record/events.ts";
 import type { RecordFile } from "#shared/record/record-file.ts";
 import {
@@ -36,9 +37,32 @@ export function checkCounts(run: ReplayRun): Check[] {
       "counts",
       TITLE,
       firstDifference([() => compareAll(run), () => missingCount(run), () => importsDifference(run)]),
-      `${counted(counts.length, "count")}, ${zeros} of them zero`,
+      [`${counted(counts.length, "count")}, ${zeros} of them zero`, ...countedTooSoon(run)].join("; "),
     ),
   ];
+}
+
+const MOST_NAMED = 5;
+
+/**
+ * Counts that are dated before their cell was drawn, or opened as a reserve: told, since nobody could have known then which
+ * cells to visit. A date without a time stands for its whole day in the survey's time zone.
+ */
+function countedTooSoon(run: ReplayRun): string[] {
+  const clock = zoneClock(run.record.survey.timeZone);
+  const places = placesOf(run);
+  const opened = new Map(run.record.visits.map(({ id, openedAt }) => [id, openedAt]));
+  const found = run.record.counts.flatMap(({ visitId, madeAt }) => {
+    const since = opened.get(visitId);
+    if (since === undefined || !isBefore(madeAt, since, clock)) return [];
+    const [day, from] = [dayOrTime(madeAt, clock), clock.localOf(since)].map(localText);
+    return [`${places.get(visitId) ?? `visit ${visitId}`} on ${day ?? ""}, to be visited from ${from ?? ""}`];
+  });
+  if (found.length === 0) return [];
+  const were = found.length === 1 ? "is dated before its cell was" : "are dated before their cells were";
+  const more = found.length > MOST_NAMED ? [`${found.length - MOST_NAMED} more`] : [];
+  const told = `${counted(found.length, "count")} ${were} drawn or opened (${run.record.survey.timeZone})`;
+  return [`${told}: ${[...found.slice(0, MOST_NAMED), ...more].join("; ")}`];
 }
 
 function countEvents(run: ReplayRun): CountEvent[] {
