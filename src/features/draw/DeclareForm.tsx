@@ -12,7 +12,7 @@ import { RadioCards } from "../../components/ui/RadioCards.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { Select } from "../../components/ui/Select.tsx";
 import { TextArea } from "../../components/ui/TextArea.tsx";
-import { type DeclareReading, type DeclareTexts, readDeclareForm, usualReserves } from "./declare-form.ts";
+import { type DeclareReading, type DeclareTexts, FIRST_TEXTS, readDeclareForm, usualReserves } from "./declare-form.ts";
 import {
   DESIGN_TEXTS,
   DESIGN_TITLES,
@@ -22,15 +22,15 @@ import {
   type RedrawReason,
   shareSentence,
 } from "./draw-words.ts";
-import type { useDeclare } from "./queries.ts";
+import { useDeclare } from "./queries.ts";
 
 interface DeclareFormProps {
+  readonly surveyId: string;
   readonly frameId: string;
   readonly units: number;
   /** What was typed; kept by the page. */
   readonly texts: DeclareTexts;
   readonly onTexts: (change: (before: DeclareTexts) => DeclareTexts) => void;
-  readonly declare: ReturnType<typeof useDeclare>;
   readonly reasonNeeded: RedrawReason | null;
   /** Draws that were made on this frame version before. */
   readonly drawsOnFrame: number;
@@ -38,8 +38,9 @@ interface DeclareFormProps {
 
 /** All that a draw is, said before its seed exists. What was typed stays when the server refuses. */
 export function DeclareForm(props: DeclareFormProps) {
-  const { frameId, units, texts, onTexts, declare, reasonNeeded, drawsOnFrame } = props;
+  const { surveyId, frameId, units, texts, onTexts, reasonNeeded, drawsOnFrame } = props;
   const [shown, setShown] = useState(false);
+  const declare = useDeclare(surveyId, () => onTexts(() => FIRST_TEXTS));
   const reading = readDeclareForm(texts, { frameId, units, reasonNeeded: reasonNeeded !== null });
   const set = (part: Partial<DeclareTexts>) => onTexts((before) => ({ ...before, ...part }));
   const errorOf = (field: keyof typeof reading.errors) =>

@@ -15,7 +15,7 @@ import { DrawSteps } from "./DrawSteps.tsx";
 import { LiveDraw } from "./LiveDraw.tsx";
 import { OpenDeclaration } from "./OpenDeclaration.tsx";
 import { type Draws, pastDeclarations } from "./past-declarations.ts";
-import { useDeclare, useDraw, useDraws, useOvertaken } from "./queries.ts";
+import { useDraw, useDraws, useOvertaken } from "./queries.ts";
 
 interface DrawStageProps {
   readonly surveyId: string;
@@ -51,7 +51,6 @@ interface LoadedProps extends DrawStageProps {
 function Loaded({ draws, frame, ...props }: LoadedProps) {
   const { surveyId, mayDraw } = props;
   const [texts, setTexts] = useState(FIRST_TEXTS);
-  const declare = useDeclare(surveyId, () => setTexts(FIRST_TEXTS));
   const overtaken = useOvertaken(surveyId);
   const past = pastDeclarations(draws);
   const history = <DrawHistory surveyId={surveyId} past={past} />;
@@ -75,11 +74,11 @@ function Loaded({ draws, frame, ...props }: LoadedProps) {
       {notice}
       {mayDraw ? (
         <DeclareForm
+          surveyId={surveyId}
           frameId={frame.id}
           units={frame.sealed.units}
           texts={texts}
           onTexts={setTexts}
-          declare={declare}
           reasonNeeded={draws.reasonNeeded}
           drawsOnFrame={draws.draws.filter(({ frameId }) => frameId === frame.id).length}
         />
