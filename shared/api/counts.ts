@@ -117,8 +117,9 @@ export const rowVerdict = z.object({
   flag: z.string(),
 });
 
-/** Asked once a file or once a name; no row that waits for an answer is written. */
+/** Asked once a file, once a word or once a name; no row that waits for an answer is written. */
 export const tableQuestion = z.discriminatedUnion("kind", [
+  z.object({ kind: z.literal("zero-word"), word: z.string(), rows: z.int() }),
   z.object({
     kind: z.literal("date-order"),
     why: z.string(),

@@ -43,8 +43,10 @@ export interface ReadRow {
   readonly message: string;
   /** The cell's label, or what the row calls it. */
   readonly cell: string;
-  /** What the row says, as written. */
+  /** What the row says, as written: its count and its state. */
   readonly said: string;
+  /** The count alone, as written. */
+  readonly countText: string;
   readonly found?: CellToCount;
   readonly count?: SaidCount;
   readonly note: string;
@@ -176,7 +178,7 @@ export function readRows(
     const extra = { note, observer, date: text(columns.date) };
     const words = [said, stateText].filter((part) => part !== "").join(", ");
     const cell = named ? found.label : label === "" ? unitText : label;
-    return { row: i + 1, ...judgement, cell, said: words, ...(named ? { found } : {}), ...extra };
+    return { row: i + 1, ...judgement, cell, said: words, countText: said, ...(named ? { found } : {}), ...extra };
   });
 }
 

@@ -12,6 +12,7 @@ import {
   type Verdict,
 } from "./judge-rows.ts";
 import type { CountRules } from "./read-count-text.ts";
+import { plainWords } from "./read-state-text.ts";
 import type { DateOrder } from "./read-date-text.ts";
 import { judgeDates, type DatedRow, type DateOrderQuestion, type DateRules } from "./table-dates.ts";
 import {
@@ -41,10 +42,17 @@ export interface TableToMatch {
   readonly observers: readonly ObserverAnswer[];
 }
 
-/** What is asked once a file or once a name. */
-export type TableQuestion = DateOrderQuestion | ObserverQuestion;
+/** Asked once a word: whether it means searched, none found. */
+interface ZeroWordQuestion {
+  readonly kind: "zero-word";
+  readonly word: string;
+  readonly rows: number;
+}
 
-export interface RowVerdict extends Omit<ReadRow, "found"> {
+/** What is asked once a file, once a word or once a name. */
+export type TableQuestion = ZeroWordQuestion | DateOrderQuestion | ObserverQuestion;
+
+export interface RowVerdict extends Omit<ReadRow, "found" | "countText"> {
   readonly unit?: number;
   readonly orders?: readonly number[];
   /** The day of the count as it was read, on the clocks of the place; empty where the row tells none. */
@@ -156,7 +164,7 @@ function columnNotes({ unit, label, count, state }: ColumnChoice): string[] {
   return notes;
 }
 
-function shown({ found, ...row }: ReadRow, told: Pick<RowVerdict, "day" | "by" | "flag">): RowVerdict {
+function shown({ found, countText: _, ...row }: ReadRow, told: Pick<RowVerdict, "day" | "by" | "flag">): RowVerdict {
   return { ...row, ...told, ...(found === undefined ? {} : { unit: found.unit, orders: found.orders }) };
 }
 
@@ -185,6 +193,15 @@ function toWriteOf(row: ReadRow, observer: ObserverSaid, date: DatedRow | undefi
       madeAt: date?.madeAt ?? null,
     },
   ];
+}
+
+function zeroWordQuestions(rows: readonly ReadRow[]): ZeroWordQuestion[] {
+  const words = new Map<string, number>();
+  for (const { kind, countText } of rows) {
+    const word = plainWords(countText);
+    if (kind === "zero-word") words.set(word, (words.get(word) ?? 0) + 1);
+  }
+  return [...words].map(([word, number]) => ({ kind: "zero-word", word, rows: number }));
 }
 
 function mergedOf(rows: readonly ReadRow[], answers: readonly ObserverAnswer[]): ObserverAnswer[] {
@@ -226,7 +243,11 @@ export function matchTable(table: TableToMatch): TableVerdict {
     }),
     numbers: verdictNumbers(judged),
     kinds: [...kinds].map(([kind, number]) => ({ kind, rows: number })),
-    questions: [...(dated.question === null ? [] : [dated.question]), ...observed.questions],
+    questions: [
+      ...zeroWordQuestions(judged),
+      ...(dated.question === null ? [] : [dated.question]),
+      ...observed.questions,
+    ],
     dateOrder: dated.order,
     merged: mergedOf(judged, table.observers),
     notes: [...columnNotes(columns), ...dated.notes, ...observed.notes],

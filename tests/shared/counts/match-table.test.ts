@@ -111,6 +111,22 @@ describe("each row is judged before anything is written", () => {
 
 describe("a cell that stands in two rows", () => {
   // J25 is pick 3 and pick 18: one count serves both.
+  test("each word that may be a zero is asked once, with its number of rows", () => {
+    const got = match([
+      ["434", "", "nil", "counted", ""],
+      ["65", "", "None  found", "", ""],
+      ["301", "", "NIL", "", ""],
+      ["632", "", "", "counted", ""],
+    ]);
+    expect(got.questions).toEqual([
+      { kind: "zero-word", word: "nil", rows: 2 },
+      { kind: "zero-word", word: "none found", rows: 1 },
+    ]);
+    const after = match([["434", "", "NIL", "", ""]], { rules: { zeroWords: ["nil"] } });
+    expect(after.toWrite[0]?.count).toEqual({ state: "counted", value: 0 });
+    expect(after.questions).toEqual([]);
+  });
+
   test("equal rows of a repeat count once, and the second is told which picks it serves", () => {
     const got = match([
       ["632", "", "2", "", ""],
