@@ -195,6 +195,7 @@ test("a typed seed that cannot be seen in full is refused with the character nam
 test("pressing Enter again while the seed is under way sends it once", async () => {
   const { api, state } = open(["planner"], drawList({ declarations: [declaration()] }));
   let answer: (() => void) | undefined;
+  let sent = 0;
   api
     .on(makeDraw, () => {
       state.list = liveList;
@@ -204,7 +205,10 @@ test("pressing Enter again while the seed is under way sends it once", async () 
     .install();
   const send = globalThis.fetch;
   vi.stubGlobal("fetch", async (path: string, init?: RequestInit) => {
-    if (path.endsWith("/draw")) await new Promise<void>((resolve) => (answer = resolve));
+    if (path.endsWith("/draw")) {
+      sent += 1;
+      await new Promise<void>((resolve) => (answer = resolve));
+    }
     return send(path, init);
   });
   renderApp(address);
@@ -212,6 +216,7 @@ test("pressing Enter again while the seed is under way sends it once", async () 
   await userEvent.type(seed, "0039 1522{Enter}");
   await screen.findByText("Drawing…");
   await userEvent.type(seed, "{Enter}");
+  expect(sent).toBe(1);
   answer?.();
   await screen.findByRole("heading", { name: "4 picks, 3 cells to visit" });
   expect(api.named("makeDraw").map(({ body }) => body)).toEqual([{ seed: "0039 1522" }]);
