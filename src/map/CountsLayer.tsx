@@ -2,6 +2,7 @@ import { useCallback, useMemo } from "react";
 import { AreaClip } from "./AreaClip.tsx";
 import { CellCallout } from "./CellCallout.tsx";
 import { CellKeys } from "./CellKeys.tsx";
+import { ChosenCell } from "./ChosenCell.tsx";
 import { isNear, pathOfCells, type SheetCell } from "./cell-path.ts";
 import { COUNT_CLASSES, countClass } from "./count-classes.ts";
 import { useSheet } from "./sheet-context.ts";
@@ -52,16 +53,11 @@ export function CountsLayer({ counts, spec, clip, chosen = null, onChoose }: Cou
   const choose = useCallback((count: SheetCount) => onChoose?.(count.key), [onChoose]);
   const hovered = useCellChoice(counts, spec, onChoose === undefined ? undefined : choose);
   const named = useMemo(
-    () =>
-      counts.map((count) => ({
-        key: count.key,
-        column: count.column,
-        row: count.row,
-        name: `Cell ${count.label}, ${saidOf(count)}`,
-      })),
+    () => counts.map((count) => ({ ...count, name: `Cell ${count.label}, ${saidOf(count)}` })),
     [counts],
   );
-  const told = counts.find((count) => count.key === chosen) ?? hovered;
+  const chosenCount = counts.find((count) => count.key === chosen);
+  const told = chosenCount ?? hovered;
   const clipPath = clip === undefined ? undefined : `url(#${id}-counts)`;
   return (
     <>
@@ -109,6 +105,7 @@ export function CountsLayer({ counts, spec, clip, chosen = null, onChoose }: Cou
             );
           })}
       </SheetLayer>
+      <ChosenCell cell={chosenCount} grid={spec} />
       {onChoose !== undefined && <CellKeys cells={named} grid={spec} chosen={chosen} onChoose={onChoose} />}
       {told !== null && (
         <CellCallout spec={spec} column={told.column} row={told.row} title={told.label} text={saidOf(told)} quiet />

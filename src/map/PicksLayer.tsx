@@ -2,6 +2,7 @@ import { useCallback, useMemo } from "react";
 import { AreaClip } from "./AreaClip.tsx";
 import { CellCallout } from "./CellCallout.tsx";
 import { CellKeys } from "./CellKeys.tsx";
+import { ChosenCell } from "./ChosenCell.tsx";
 import { badgePlace, BADGE, isNear, pathOfCells, pathOfDots, type SheetCell } from "./cell-path.ts";
 import { useSheet } from "./sheet-context.ts";
 import { cellBox, type CellGrid, type PlanePolygons } from "./sheet-geometry.ts";
@@ -86,7 +87,7 @@ export function PicksLayer({ picks, spec, clip, chosen = null, onChoose }: Picks
         {side >= FIGURES_FROM && <Orders picks={drawn} spec={spec} />}
         {side >= 6 && <Badges picks={picks} spec={spec} />}
       </SheetLayer>
-      {chosen !== null && <ChosenPick pick={picks.find((pick) => pick.key === chosen)} spec={spec} />}
+      <ChosenCell cell={picks.find((pick) => pick.key === chosen)} grid={spec} />
       {onChoose !== undefined && <CellKeys cells={named} grid={spec} chosen={chosen} onChoose={onChoose} />}
       {told !== null && (
         <CellCallout
@@ -153,25 +154,5 @@ function Badges({ picks, spec }: { readonly picks: readonly SheetPick[]; readonl
           );
         })}
     </>
-  );
-}
-
-/** 2 px of ink with 3.5 px of air around the cell chosen in the list. */
-function ChosenPick({ pick, spec }: { readonly pick: SheetPick | undefined; readonly spec: CellGrid }) {
-  const { view } = useSheet();
-  if (pick === undefined) return null;
-  const box = cellBox(spec, pick.column, pick.row, view);
-  return (
-    <SheetLayer slot="chosen">
-      <rect
-        x={box.x - 3.5}
-        y={box.y - 3.5}
-        width={box.width + 7}
-        height={box.height + 7}
-        fill="none"
-        stroke="var(--color-ink)"
-        strokeWidth="2"
-      />
-    </SheetLayer>
   );
 }
