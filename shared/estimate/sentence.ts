@@ -30,7 +30,7 @@ export function placeText(result: EstimateResult): string {
 }
 
 /** An upper limit as printed: up to the next whole number from 10 on, three figures below. */
-function upperLimitText(value: number): string {
+export function upperLimitText(value: number): string {
   return value >= 10 ? numberText(Math.ceil(value)) : figuresText(value, 3);
 }
 

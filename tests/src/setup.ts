@@ -21,7 +21,8 @@ class SilentObserver {
 
 /** As CSS.escape for the ids and names that React makes: every character but letters, digits, _ and - gets a backslash. */
 vi.stubGlobal("CSS", { escape: (text: string) => text.replaceAll(/[^\w-]/g, "\\$&") });
-vi.stubGlobal("ResizeObserver", SilentObserver);
+// Assigned, not stubbed: it outlives the tests that take their own stubs away.
+globalThis.ResizeObserver = SilentObserver;
 Element.prototype.scrollIntoView = () => undefined;
 Element.prototype.hasPointerCapture = () => false;
 HTMLElement.prototype.scrollTo = () => undefined;

@@ -42,7 +42,7 @@ function Plot({ distribution, plural, across }: CountPlotProps & { readonly acro
       aria-label={plotText(distribution, plural)}
     >
       {bins.map((bin) => (
-        <Bin key={bin.from} bin={bin} at={x(middleOf(bin))} unit={unit} width={width} asMarks={most <= MOST_MARKS} />
+        <Bin key={bin.to} bin={bin} at={x(middleOf(bin))} unit={unit} width={width} asMarks={most <= MOST_MARKS} />
       ))}
       <path d={`M6 ${PLOT}H${across - 6}`} stroke="var(--color-ink)" />
       <path d={`M${x(mean)} 24V${PLOT}`} stroke="var(--color-act)" strokeWidth="2" />

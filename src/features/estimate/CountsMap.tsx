@@ -1,8 +1,11 @@
 import { useMemo, useState } from "react";
 import { useVisits } from "../../api/visits.ts";
 import { markOf, ordersText } from "../../api/visit-words.ts";
+import { Button } from "../../components/ui/Button.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
 import { formatAsIs } from "../../components/ui/format.ts";
+import { Refusal } from "../../components/ui/Refusal.tsx";
+import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { Table } from "../../components/ui/Table.tsx";
 import { VISIT_STATE_WORDS } from "../../components/ui/visit-states.ts";
 import { COUNT_CLASSES } from "../../map/count-classes.ts";
@@ -27,6 +30,13 @@ export function CountsMap({
   const [chosen, setChosen] = useState<string | null>(null);
   const cells = useMemo(() => visits.data?.visits ?? [], [visits.data]);
   const counts = useMemo(() => cells.map(sheetCount), [cells]);
+  if (visits.data === undefined) {
+    return visits.isError ? (
+      <Refusal error={visits.error} next={<Button onClick={() => void visits.refetch()}>Try again</Button>} />
+    ) : (
+      <RuledLoading label="Loading the counts" lines={5} />
+    );
+  }
   return (
     <>
       <FrameSheetMap

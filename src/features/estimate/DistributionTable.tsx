@@ -1,4 +1,4 @@
-import type { Distribution } from "#shared/estimate/result.ts";
+import type { Distribution, DistributionBin } from "#shared/estimate/result.ts";
 import { formatAsIs, formatNumber, formatPercent } from "../../components/ui/format.ts";
 import { Table } from "../../components/ui/Table.tsx";
 
@@ -28,10 +28,8 @@ export function DistributionTable({
         {distribution.bins
           .filter((bin) => bin.picks > 0)
           .map((bin) => (
-            <tr key={bin.from}>
-              <th scope="row">
-                {bin.from === bin.to ? formatAsIs(bin.from) : `${formatAsIs(bin.from)} to ${formatAsIs(bin.to)}`}
-              </th>
+            <tr key={bin.to}>
+              <th scope="row">{binText(bin, distribution.kind)}</th>
               <td className="q-num">{formatNumber(bin.picks)}</td>
               <td className="q-num">{formatPercent(bin.picks / picks)}</td>
             </tr>
@@ -39,4 +37,12 @@ export function DistributionTable({
       </tbody>
     </Table>
   );
+}
+
+/** "6–10" for whole counts; what was measured lies above one edge and up to the next. */
+function binText({ from, to }: DistributionBin, kind: Distribution["kind"]): string {
+  if (from === to) return formatAsIs(from);
+  return kind === "whole"
+    ? `${formatAsIs(from)}–${formatAsIs(to)}`
+    : `above ${formatAsIs(from)}, at most ${formatAsIs(to)}`;
 }

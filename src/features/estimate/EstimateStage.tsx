@@ -1,19 +1,13 @@
+import type { ReactNode } from "react";
 import { estimateNotes } from "#shared/estimate/notes.ts";
-import { estimateSentence } from "#shared/estimate/sentence.ts";
-import { Problem } from "#shared/problem.ts";
+import { estimateSentence, levelText } from "#shared/estimate/sentence.ts";
+import { Problem, type ProblemCode } from "#shared/problem.ts";
 import { Banner } from "../../components/ui/Banner.tsx";
 import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
 import { EmptyState } from "../../components/ui/EmptyState.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
-import {
-  formatHash,
-  formatNumber,
-  formatPercent,
-  formatSeed,
-  formatSignificant,
-  formatTime,
-} from "../../components/ui/format.ts";
+import { formatCount, formatHash, formatNumber, formatSeed, formatSignificant } from "../../components/ui/format.ts";
 import { Ledger } from "../../components/ui/Ledger.tsx";
 import { PrintFoot } from "../../components/ui/PrintFoot.tsx";
 import { PrintHead } from "../../components/ui/PrintHead.tsx";
@@ -21,6 +15,7 @@ import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
 import { Section } from "../../components/ui/Section.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { CountPlot } from "./CountPlot.tsx";
 import { CountsMap } from "./CountsMap.tsx";
 import { DistributionTable } from "./DistributionTable.tsx";
@@ -42,41 +37,54 @@ interface EstimateStageProps {
 /** The answer in one sentence, then the figures, then how they came about. */
 export function EstimateStage(props: EstimateStageProps) {
   const estimate = useEstimate(props.surveyId);
-  if (estimate.data !== undefined) return <EstimatePage {...props} estimate={estimate.data} />;
-  if (estimate.error instanceof Problem && ["estimate-impossible", "draw-missing"].includes(estimate.error.code)) {
+  const { data, error } = estimate;
+  const again = <Button onClick={() => void estimate.refetch()}>Try again</Button>;
+  // Asked first: the figures of a draw that was withdrawn meanwhile stand for nothing any more.
+  if (error instanceof Problem && NOTHING_YET.includes(error.code)) {
     return (
       <ReadingPage title="Estimate">
-        <EmptyState title={estimate.error.title} action={<ButtonLink to={props.countsTo}>To the counts</ButtonLink>}>
-          {estimate.error.message}
+        <EmptyState title={error.title} action={<ButtonLink to={props.countsTo}>To the counts</ButtonLink>}>
+          {error.message}
         </EmptyState>
       </ReadingPage>
     );
   }
+  if (data !== undefined) {
+    const stale = error === null ? undefined : <Refusal error={error} next={again} />;
+    const asOf = new Date(estimate.dataUpdatedAt).toISOString();
+    return <EstimatePage {...props} estimate={data} asOf={asOf} stale={stale} />;
+  }
   return (
     <div className="p-8">
-      {estimate.error === null ? (
+      {error === null ? (
         <RuledLoading label="Loading the estimate" lines={6} />
       ) : (
-        <Refusal error={estimate.error} next={<Button onClick={() => void estimate.refetch()}>Try again</Button>} />
+        <Refusal error={error} next={again} />
       )}
     </div>
   );
 }
 
-function EstimatePage({
-  surveyId,
-  surveyName,
-  mayKeep,
-  estimate,
-}: EstimateStageProps & { readonly estimate: Estimate }) {
+const NOTHING_YET: readonly ProblemCode[] = ["estimate-impossible", "draw-missing"];
+
+interface EstimatePageProps extends EstimateStageProps {
+  readonly estimate: Estimate;
+  /** When these figures were asked for. */
+  readonly asOf: string;
+  /** Said above figures that could not be asked for again. */
+  readonly stale: ReactNode;
+}
+
+function EstimatePage({ surveyId, surveyName, mayKeep, estimate, asOf, stale }: EstimatePageProps) {
+  const times = useTimes();
   const { result, context } = estimate;
   const plural = context.target.plural;
   const notes = estimateNotes(result);
   return (
     <>
       <PrintHead
-        title={surveyName}
-        note={`Draw ${context.draw.number}, frame version ${context.frame.number}, season ${context.season.name}`}
+        title={`${surveyName}: ${plural}, season ${context.season.name}`}
+        note={`Draw ${context.draw.number}, frame version ${context.frame.number}, figures of ${times.time(asOf)}`}
       />
       <ReadingPage
         answer
@@ -89,13 +97,14 @@ function EstimatePage({
         }
         margin={<EstimateMargin surveyId={surveyId} estimate={estimate} />}
       >
+        {stale}
         {notes
           .filter(({ weight }) => weight === "look")
           .map((note) => (
             <NoteBanner key={note.key} text={note.text} />
           ))}
         <Section title="How sure" lead={howSure(estimate)}>
-          <LimitsAxis result={result} />
+          {!result.complete && <LimitsAxis result={result} />}
         </Section>
         <Section title="In figures">
           <FiguresTable result={result} plural={plural} />
@@ -125,7 +134,7 @@ function EstimatePage({
         )}
       </ReadingPage>
       <PrintFoot note={`event ${context.newest.sequence}, ${formatHash(context.newest.sha256)}`}>
-        {`Frame ${context.frame.sha256}, seed ${context.declaration.seed === null ? "none" : formatSeed(context.declaration.seed.text)}, drawn ${formatTime(context.draw.drawnAt)}`}
+        {`Frame ${context.frame.sha256}, seed ${context.declaration.seed === null ? "none" : formatSeed(context.declaration.seed.text)}, drawn ${times.time(context.draw.drawnAt)}`}
       </PrintFoot>
     </>
   );
@@ -156,14 +165,18 @@ function ledgerOf({ result }: Estimate) {
 }
 
 function howSure({ result, context }: Estimate): string {
+  if (result.complete)
+    return "Every cell of the frame was counted: nothing is estimated, and there are no limits to draw.";
+  if (result.allZero.kind === "all-zero") {
+    return "Every count is zero: there is only an upper limit, under a model in which objects lie independently (Poisson).";
+  }
   if (result.total.limits.t.kind === "none") return "There are no limits to draw; the sentence above says why.";
-  const level = formatPercent(result.level, Number.isInteger(Math.round(result.level * 1000) / 10) ? 0 : 1);
-  return `Total of ${context.target.plural}, ${level} limits from ${formatNumber(result.degreesOfFreedom)} degrees of freedom. With clumped counts the truth tends to lie above the t limits.`;
+  return `Total of ${context.target.plural}, ${levelText(result.level)} limits from ${formatNumber(result.degreesOfFreedom)} degrees of freedom. With clumped counts the truth tends to lie above the t limits.`;
 }
 
 function countsLead({ result }: Estimate): string {
   const { zeros } = result.distribution;
-  return `One mark for each counted pick: ${formatNumber(zeros)} of ${formatNumber(result.picksCounted)} found none.`;
+  return `${formatNumber(zeros)} of ${formatCount(result.picksCounted, "counted pick")} found none.`;
 }
 
 /** The first sentence is the fact; what it means follows in a quieter voice. */

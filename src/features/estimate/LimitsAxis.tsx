@@ -2,7 +2,7 @@ import { scaleLinear } from "d3-scale";
 import { useRef } from "react";
 import type { EstimateResult, Interval } from "#shared/estimate/result.ts";
 import { estimateText, printedLimitsOf } from "#shared/estimate/rounding.ts";
-import { formatNumber } from "../../components/ui/format.ts";
+import { formatAsIs, formatNumber } from "../../components/ui/format.ts";
 import { useElementSize } from "../../components/ui/use-element-size.ts";
 
 const WIDEST = 640;
@@ -56,9 +56,7 @@ function Axis({ result, width }: { readonly result: EstimateResult; readonly wid
       ))}
       <path d={`M${left} ${base}H${width - RIGHT}`} stroke="var(--color-ink)" />
       <path d={`M${middle} ${TOP - 12}V${base}`} stroke="var(--color-act)" strokeDasharray="2 3" />
-      {result.seen > 0 && (
-        <path d={`M${x(result.seen)} ${base - 9}V${base}`} stroke="var(--color-ochre)" strokeWidth="2.5" />
-      )}
+      {result.seen > 0 && <SeenMark seen={result.seen} at={x(result.seen)} base={base} width={width} />}
       {rows.map(({ kind, limits }, index) => (
         <LimitsLine
           key={kind}
@@ -74,6 +72,31 @@ function Axis({ result, width }: { readonly result: EstimateResult; readonly wid
         />
       ))}
     </svg>
+  );
+}
+
+interface SeenMarkProps {
+  readonly seen: number;
+  readonly at: number;
+  readonly base: number;
+  readonly width: number;
+}
+
+function SeenMark({ seen, at, base, width }: SeenMarkProps) {
+  const toTheRight = at < width / 2;
+  return (
+    <g>
+      <path d={`M${at} ${base - 9}V${base}`} stroke="var(--color-ochre)" strokeWidth="2.5" />
+      <text
+        x={toTheRight ? at + 6 : at - 6}
+        y={base - 4}
+        textAnchor={toTheRight ? "start" : "end"}
+        fontSize="12"
+        fill="var(--color-ochre)"
+      >
+        {`${formatAsIs(seen)} seen: the total cannot be lower`}
+      </text>
+    </g>
   );
 }
 
@@ -143,5 +166,5 @@ function axisText(result: EstimateResult): string {
     const printed = printedLimitsOf(result, "total", kind);
     return printed === "none" ? [] : [`${NAMES[kind]} limits ${printed.lower} to ${printed.upper}`];
   });
-  return `Total ${estimateText(result.total.estimate, result.total.standardError)}; ${said.join("; ")}; number seen ${formatNumber(result.seen)}`;
+  return `Total ${estimateText(result.total.estimate, result.total.standardError)}; ${said.join("; ")}; number seen ${formatAsIs(result.seen)}`;
 }

@@ -1,5 +1,6 @@
-import type { EstimateResult, Figure, Quantity } from "#shared/estimate/result.ts";
+import type { AllZeroLimits, EstimateResult, Figure, Quantity } from "#shared/estimate/result.ts";
 import { estimateText, printedLimitsOf } from "#shared/estimate/rounding.ts";
+import { upperLimitText } from "#shared/estimate/sentence.ts";
 import { formatPercent, formatSignificant } from "../../components/ui/format.ts";
 
 /** Why there is no figure, in the place of the figure. */
@@ -32,13 +33,26 @@ export function figuresRows(result: EstimateResult, plural: string): FiguresRow[
   const other = declaredLimits === "t" ? "log-normal" : "t";
   const limitsName = { t: "t limits", "log-normal": "log-normal limits" } as const;
   const rows: FiguresRow[] = [
-    row(result, "total", declaredLimits, `Total, ${limitsName[declaredLimits]}`, plural, true),
-    row(result, "total", other, `Total, ${limitsName[other]}`, plural, false),
+    ...(result.allZero.kind === "all-zero"
+      ? zeroRows(result.allZero, plural)
+      : [
+          row(result, "total", declaredLimits, `Total, ${limitsName[declaredLimits]}`, plural, true),
+          row(result, "total", other, `Total, ${limitsName[other]}`, plural, false),
+        ]),
     row(result, "mean", declaredLimits, "Mean per cell", `${plural} per cell`, false),
   ];
   return density.kind === "known"
     ? [...rows, row(result, "density", declaredLimits, "Density", `${plural} per ha`, false)]
     : rows;
+}
+
+/** Where every count is zero: a total of none, and how many there may be under the model all the same. */
+function zeroRows({ oneSided, twoSided }: AllZeroLimits, plural: string): FiguresRow[] {
+  const none = { unit: plural, estimate: "0", standardError: NONE_WORDS["all-zero"], lower: "0" };
+  return [
+    { ...none, name: "Total, Poisson limit, two-sided", strong: true, upper: upperLimitText(twoSided) },
+    { ...none, name: "Total, Poisson limit, one-sided", strong: false, upper: upperLimitText(oneSided) },
+  ];
 }
 
 function row(
