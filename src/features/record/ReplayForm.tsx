@@ -6,24 +6,24 @@ import { Fold } from "../../components/ui/Fold.tsx";
 import { formatBytes } from "../../components/ui/format.ts";
 import { TextArea } from "../../components/ui/TextArea.tsx";
 import { TextInput } from "../../components/ui/TextInput.tsx";
-import type { ReplayForm as Chosen } from "./use-replay.ts";
+import type { ReplayChoice } from "./use-replay.ts";
 
 interface ReplayFormProps {
-  readonly onReplay: (chosen: Chosen) => void;
+  readonly choice: ReplayChoice;
+  readonly onChange: (part: Partial<ReplayChoice>) => void;
+  readonly onReplay: () => void;
 }
 
 /** The record file, and what the auditor holds beside it. */
-export function ReplayForm({ onReplay }: ReplayFormProps) {
-  const [record, setRecord] = useState<File | null>(null);
-  const [source, setSource] = useState<File | null>(null);
-  const [hashes, setHashes] = useState("");
-  const [fingerprint, setFingerprint] = useState("");
+export function ReplayForm({ choice, onChange, onReplay }: ReplayFormProps) {
+  const { record, source, hashes, fingerprint } = choice;
+  const [holdsSomething] = useState(source !== null || hashes !== "" || fingerprint !== "");
   return (
     <form
       className="grid max-w-160 gap-6"
       onSubmit={(event) => {
         event.preventDefault();
-        if (record !== null) onReplay({ record, source, hashes, fingerprint });
+        onReplay();
       }}
     >
       <FileDrop
@@ -32,21 +32,21 @@ export function ReplayForm({ onReplay }: ReplayFormProps) {
         accept=".json,application/json"
         buttonLabel={record === null ? "Choose a record file" : "Choose another"}
         primary={record === null}
-        onFile={setRecord}
+        onFile={(file) => onChange({ record: file })}
       />
-      <Fold quiet title="What you hold makes it stronger" aside="may stay empty">
+      <Fold quiet title="What you hold makes it stronger" aside="may stay empty" open={holdsSomething}>
         <div className="grid gap-4 py-3">
           <Field label="Hashes that you were given" help="From mails, sheets and exports, one a line.">
-            <TextArea value={hashes} onChange={(event) => setHashes(event.target.value)} />
+            <TextArea value={hashes} onChange={(event) => onChange({ hashes: event.target.value })} />
           </Field>
           <Field label="Fingerprint of the signing key" help="As it came with your invitation.">
-            <TextInput mono value={fingerprint} onChange={(event) => setFingerprint(event.target.value)} />
+            <TextInput mono value={fingerprint} onChange={(event) => onChange({ fingerprint: event.target.value })} />
           </Field>
           <FileDrop
             label="Drop the boundary file here"
             help={source === null ? "The rings of the frame are held against it." : chosenText(source)}
             buttonLabel={source === null ? "Choose a boundary file" : "Choose another"}
-            onFile={setSource}
+            onFile={(file) => onChange({ source: file })}
           />
         </div>
       </Fold>

@@ -1,15 +1,25 @@
+import { useEffect, useState } from "react";
 import { Problem } from "#shared/problem.ts";
+import { focusMain } from "../../components/ui/focus-main.ts";
 import { MarginNote } from "../../components/ui/MarginNote.tsx";
 import { Progress } from "../../components/ui/Progress.tsx";
 import { ReadingPage } from "../../components/ui/ReadingPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { ReplayForm } from "./ReplayForm.tsx";
 import { ReplayResult } from "./ReplayResult.tsx";
-import { useReplay } from "./use-replay.ts";
+import { type ReplayChoice, useReplay } from "./use-replay.ts";
+
+const NOTHING: ReplayChoice = { record: null, source: null, hashes: "", fingerprint: "" };
 
 /** The public page on which anybody checks a record in their own browser; nothing is sent anywhere. */
 export function ReplayStage() {
   const replay = useReplay();
+  const [choice, setChoice] = useState(NOTHING);
+  const { record } = choice;
+  // The button that was pressed goes away with the form: whoever works by key or by ear goes on from what came instead.
+  useEffect(() => {
+    if (replay.status !== "idle") focusMain();
+  }, [replay.status]);
   if (replay.isSuccess) return <ReplayResult done={replay.data} onAnother={replay.reset} />;
   return (
     <ReadingPage
@@ -26,9 +36,15 @@ export function ReplayStage() {
       }
     >
       {replay.isError && !isCancelled(replay.error) && <Refusal error={replay.error} />}
-      {/* Hidden rather than taken away while it runs, so that what was chosen and typed is still there afterwards. */}
+      {/* Hidden rather than taken away while it runs, so that it comes back as it was. */}
       <div hidden={replay.isPending}>
-        <ReplayForm onReplay={replay.mutate} />
+        <ReplayForm
+          choice={choice}
+          onChange={(part) => setChoice((before) => ({ ...before, ...part }))}
+          onReplay={() => {
+            if (record !== null && !replay.isPending) replay.mutate({ ...choice, record });
+          }}
+        />
       </div>
       {replay.isPending && (
         <Progress

@@ -1,4 +1,5 @@
 import type { RecordEvent } from "#shared/api/record.ts";
+import { STATE_WORDS } from "#shared/counts/count.ts";
 import { EVENT_PAYLOADS, type EventKind, type EventPayload, isEventKind } from "#shared/record/events.ts";
 import { formatAsIs, formatCount, formatHash, formatArea, formatList, formatSeed } from "../../components/ui/format.ts";
 import type { TimelineMark } from "../../components/ui/TimelineEntry.tsx";
@@ -14,16 +15,6 @@ type Tellers = { readonly [K in EventKind]: (payload: EventPayload<K>, by: strin
 
 const story = (title: string, text: string, mark: TimelineMark = "plain"): EventStory => ({ title, text, mark });
 
-/** States that no number belongs to, as they are said of a cell. */
-const STATE_SAID = {
-  counted: "counted",
-  "not-in-population": "not in the population",
-  refused: "refused",
-  unsafe: "unsafe",
-  "not-reached": "not reached",
-  lost: "lost",
-} as const;
-
 const ROLE_SAID: Readonly<Record<string, string>> = {
   planner: "a planner",
   lead: "a field lead",
@@ -32,7 +23,7 @@ const ROLE_SAID: Readonly<Record<string, string>> = {
 };
 
 function said(payload: EventPayload<"count-entered">): string {
-  return payload.value === null ? STATE_SAID[payload.state] : formatAsIs(payload.value);
+  return payload.value === null ? STATE_WORDS[payload.state] : formatAsIs(payload.value);
 }
 
 function quoted(text: string): string {
@@ -49,7 +40,7 @@ const TELLERS: Tellers = {
       `The survey was started: ${p.name}`,
       `${by} counts ${p.target.plural}, season ${p.season.name}. ${sentences(quoted(p.target.countingRule))}`.trim(),
     ),
-  "member-added": (p) => story(`${p.name} joined as ${ROLE_SAID[p.role] ?? p.role}`, ""),
+  "member-added": (p, by) => story(`${p.name} joined as ${ROLE_SAID[p.role] ?? p.role}`, `Added by ${by}.`),
   "area-imported": (p, by) =>
     story(
       `The study area was kept: ${formatArea(p.geodesicAreaM2)}`,
@@ -72,10 +63,10 @@ const TELLERS: Tellers = {
         ? formatSeed(p.seed)
         : `${formatSeed(p.seed)} The seed was chosen by ${by}; nothing shows that only one was tried.`,
     ),
-  "draw-made": (p) =>
+  "draw-made": (p, by) =>
     story(
       `Draw ${p.number}: ${formatCount(p.picks, "pick")}`,
-      p.reserves === 0 ? "No reserves." : `With ${formatCount(p.reserves, "reserve")} behind them.`,
+      `${p.reserves === 0 ? "No reserves." : `With ${formatCount(p.reserves, "reserve")} behind them.`} By ${by}.`,
       "drawn",
     ),
   "list-lengthened": (p) =>
@@ -86,12 +77,12 @@ const TELLERS: Tellers = {
     ),
   "draw-withdrawn": (p, by) =>
     story("A draw was withdrawn", sentences(quoted(p.reason), `${by}. Its picks stay on record.`), "withdrawn"),
-  "cells-assigned": (p) =>
+  "cells-assigned": (p, by) =>
     story(
       p.member === null
         ? `${formatCount(p.units.length, "cell")} taken back`
         : `${formatCount(p.units.length, "cell")} shared out`,
-      p.day === "" ? "" : `For ${p.day}.`,
+      sentences(p.day === "" ? "" : `For ${p.day}.`, `By ${by}.`),
     ),
   "waypoints-exported": (p, by) =>
     story(
@@ -100,7 +91,7 @@ const TELLERS: Tellers = {
     ),
   "pick-closed": (p, by) =>
     story(
-      `Unit ${p.unit} was closed: ${STATE_SAID[p.state]}`,
+      `Unit ${p.unit} was closed: ${STATE_WORDS[p.state]}`,
       sentences(
         quoted(p.reason),
         `${by}.`,
@@ -135,11 +126,12 @@ export function eventStory(event: Pick<RecordEvent, "kind" | "payload" | "by">):
   return tell(parsed.data, by);
 }
 
-/** Several counts of one day by one person are told in one line; everything else has a line of its own. */
+/** What is told in one line. */
 export interface StoryLine {
   readonly events: readonly RecordEvent[];
 }
 
+/** The lines of one day: counts by one person, one after another, are told in one; everything else has a line of its own. */
 export function storyLines(events: readonly RecordEvent[]): StoryLine[] {
   const lines: RecordEvent[][] = [];
   for (const event of events) {
@@ -149,8 +141,7 @@ export function storyLines(events: readonly RecordEvent[]): StoryLine[] {
       before !== undefined &&
       event.kind === "count-entered" &&
       before.kind === "count-entered" &&
-      event.by === before.by &&
-      event.at.slice(0, 10) === before.at.slice(0, 10);
+      event.memberId === before.memberId;
     if (last !== undefined && joins) last.push(event);
     else lines.push([event]);
   }
