@@ -27,11 +27,15 @@ interface AreaStageProps {
 /** The Area stage: boundary in, what was found in it, and the sheet. */
 export function AreaStage(props: AreaStageProps) {
   const areas = useAreas(props.surveyId);
-  if (areas.isPending) return <div className="p-8">{<RuledLoading label="Loading the study area" lines={5} />}</div>;
-  if (areas.isError) {
+  // Asked again now and then: when only that fails, the page stays, with the file that is chosen on it.
+  if (areas.data === undefined) {
     return (
       <div className="max-w-160 p-8">
-        <Refusal error={areas.error} next={<Button onClick={() => void areas.refetch()}>Try again</Button>} />
+        {areas.isError ? (
+          <Refusal error={areas.error} next={<Button onClick={() => void areas.refetch()}>Try again</Button>} />
+        ) : (
+          <RuledLoading label="Loading the study area" lines={5} />
+        )}
       </div>
     );
   }
@@ -57,7 +61,7 @@ function LoadedArea(props: AreaStageProps & { readonly areas: readonly AreaVersi
   const importing = mayChange && (newest === undefined || replacing || boundary.file !== null);
   const asked = boundary.question?.kind === "place" ? boundary.question.at : null;
   const leave = () => {
-    boundary.cancel();
+    boundary.leave();
     setReplacing(false);
   };
   return (

@@ -18,16 +18,18 @@ interface BoundaryImportProps {
 export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
   const { file, reading, refusal, question } = boundary;
   const canAnswer = question?.kind === "crs" || question?.kind === "layer";
+  // The question itself tells what is refused with it.
+  const apart = refusal !== null && refusal.question === undefined;
   return (
     <div className="grid gap-3">
       {file !== null && (
         <FileRow name={file.name}>
           {formatBytes(file.size)}
-          {!reading && refusal !== null && (canAnswer ? ", an answer is open" : ", refused")}
+          {!reading && (canAnswer ? ", an answer is open" : refusal !== null && ", refused")}
         </FileRow>
       )}
       {reading && <Progress label="Reading the file" value={null} onCancel={boundary.cancel} />}
-      {!reading && refusal !== null && question === null && (
+      {!reading && apart && (
         <Refusal
           error={refusal}
           next={
@@ -37,8 +39,17 @@ export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
           }
         />
       )}
-      {!reading && refusal !== null && question !== null && (
-        <AreaQuestionForm question={question} detail={refusal.message} busy={reading} onAnswer={boundary.answer} />
+      {question !== null && (
+        // Hidden while it is read, not taken away: an answer that is refused is still there to be mended.
+        <div hidden={reading}>
+          <AreaQuestionForm
+            key={question.kind}
+            question={question}
+            detail={refusal?.message ?? ""}
+            busy={reading}
+            onAnswer={boundary.answer}
+          />
+        </div>
       )}
       {!reading && (
         <FileDrop

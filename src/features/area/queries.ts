@@ -24,6 +24,7 @@ export function useImportArea(surveyId: string) {
     meta: { keeps: true },
     mutationFn: ({ file, answers, signal }: AreaUpload) =>
       call(importArea, { params: { surveyId }, body: { ...answers }, file, signal }),
-    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
+    // Also when it was cancelled or the answer was lost: the server may have kept the boundary all the same.
+    onSettled: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }

@@ -1,25 +1,38 @@
 import { useRef, useState } from "react";
 import type { AreaVersion } from "#shared/api/area.ts";
 import type { AreaAnswers, AreaQuestion } from "#shared/area/questions.ts";
-import type { Problem } from "#shared/problem.ts";
+import type { Problem, ProblemCode } from "#shared/problem.ts";
 import { problemOf } from "../../api/problem-of.ts";
 import { useImportArea } from "./queries.ts";
 
 /** A file on its way in: it stays chosen with its answers until it is imported or another is taken. */
 export interface BoundaryFile {
   readonly file: File | null;
-  readonly answers: AreaAnswers;
   readonly reading: boolean;
-  /** What was refused, unless it is a question that can be answered here. */
+  /** Why the file, or the answer that went out with it, was refused. */
   readonly refusal: Problem | null;
+  /** What the file leaves open; it stays until an answer is taken, so that a refused one can be mended. */
   readonly question: AreaQuestion | null;
   readonly take: (file: File) => void;
   readonly answer: (answers: AreaAnswers) => void;
   readonly again: () => void;
+  /** Ends the reading of an answer, back to its question; of a file, back to choosing. */
   readonly cancel: () => void;
+  readonly leave: () => void;
 }
 
 const QUESTION_KINDS: readonly string[] = ["crs", "layer", "axes", "place"] satisfies readonly AreaQuestion["kind"][];
+
+/** Refusals that another answer, or the same once more, may help. */
+const OF_THE_ANSWER: readonly ProblemCode[] = [
+  "input-invalid",
+  "crs-unknown",
+  "crs-unsupported",
+  "area-size",
+  "unreachable",
+  "internal",
+  "cancelled",
+];
 
 /** The question that rides on a refusal, where it is one of this word. */
 function questionOf(problem: Problem): AreaQuestion | null {
@@ -33,8 +46,19 @@ function questionOf(problem: Problem): AreaQuestion | null {
 export function useBoundaryFile(surveyId: string, onImported: (area: AreaVersion) => void): BoundaryFile {
   const [file, setFile] = useState<File | null>(null);
   const [answers, setAnswers] = useState<AreaAnswers>({});
+  const [question, setQuestion] = useState<AreaQuestion | null>(null);
   const importing = useImportArea(surveyId);
   const controller = useRef<AbortController | null>(null);
+  const clear = () => {
+    setFile(null);
+    setAnswers({});
+    setQuestion(null);
+  };
+  const leave = () => {
+    controller.current?.abort();
+    importing.reset();
+    clear();
+  };
   const send = (chosen: File, given: AreaAnswers) => {
     controller.current?.abort();
     const own = new AbortController();
@@ -45,22 +69,26 @@ export function useBoundaryFile(surveyId: string, onImported: (area: AreaVersion
       { file: chosen, answers: given, signal: own.signal },
       {
         onSuccess: (area) => {
-          setFile(null);
-          setAnswers({});
+          clear();
           onImported(area);
+        },
+        onError: (error) => {
+          const refused = problemOf(error);
+          setQuestion((before) => questionOf(refused) ?? (OF_THE_ANSWER.includes(refused.code) ? before : null));
         },
       },
     );
   };
   const problem = importing.isError ? problemOf(importing.error) : null;
-  const refused = problem?.code === "cancelled" ? null : problem;
   return {
     file,
-    answers,
     reading: importing.isPending,
-    refusal: refused,
-    question: refused === null ? null : questionOf(refused),
-    take: (chosen) => send(chosen, {}),
+    refusal: problem?.code === "cancelled" ? null : problem,
+    question,
+    take: (chosen) => {
+      setQuestion(null);
+      send(chosen, {});
+    },
     answer: (given) => {
       if (file !== null) send(file, { ...answers, ...given });
     },
@@ -68,10 +96,9 @@ export function useBoundaryFile(surveyId: string, onImported: (area: AreaVersion
       if (file !== null) send(file, answers);
     },
     cancel: () => {
-      controller.current?.abort();
-      importing.reset();
-      setFile(null);
-      setAnswers({});
+      if (question === null) leave();
+      else controller.current?.abort();
     },
+    leave,
   };
 }
