@@ -16,7 +16,10 @@ interface FindCellProps {
 export function FindCell({ cells, chosen, onChoose }: FindCellProps) {
   const [typed, setTyped] = useState("");
   const words = chosen === null ? null : cellWords(cells, chosen);
-  const missing = typed.trim() !== "" && findCell(cells, typed) === null;
+  const [left, setLeft] = useState(false);
+  // A label is typed letters first: nothing is wrong with them until the field is left.
+  const unfinished = !left && /^[a-z]*$/i.test(typed.trim());
+  const missing = typed.trim() !== "" && !unfinished && findCell(cells, typed) === null;
   return (
     <div className="mt-3">
       <Field
@@ -29,7 +32,9 @@ export function FindCell({ cells, chosen, onChoose }: FindCellProps) {
           autoCapitalize="characters"
           placeholder="label or unit"
           value={typed}
+          onBlur={() => setLeft(true)}
           onChange={(event) => {
+            setLeft(false);
             setTyped(event.target.value);
             const found = findCell(cells, event.target.value);
             if (found !== null) onChoose(found);

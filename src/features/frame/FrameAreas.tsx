@@ -21,15 +21,19 @@ export function FrameAreas({ preset, summary }: FrameAreasProps) {
     <Table caption="What the cells cover" dense>
       <thead>
         <tr>
-          <th>With {PRESET_TITLES[preset].toLowerCase()}</th>
-          <th className="q-num">ha</th>
-          <th className="q-num">% of area</th>
+          <th scope="col">With {PRESET_TITLES[preset].toLowerCase()}</th>
+          <th scope="col" className="q-num">
+            ha
+          </th>
+          <th scope="col" className="q-num">
+            % of area
+          </th>
         </tr>
       </thead>
       <tbody>
         {rows.map((row) => (
           <tr key={row.name}>
-            <td>{row.name}</td>
+            <th scope="row">{row.name}</th>
             <td className="q-num">{formatHectares(row.area)}</td>
             <td className="q-num">{areaM2 > 0 ? formatNumber((100 * row.area) / areaM2, 1) : "no area"}</td>
           </tr>

@@ -126,7 +126,10 @@ export function FrameEditor(props: FrameEditorProps) {
           These settings were made on an earlier one; the cells are laid over the newest.
         </Banner>
       )}
-      <FrameSettingsPanel editor={editor} area={area} plural={plural} chosen={chosen} onChoose={setChosen} />
+      {/* What is being sealed is what stands here: it does not change meanwhile. */}
+      <div inert={sealing.pending}>
+        <FrameSettingsPanel editor={editor} area={area} plural={plural} chosen={chosen} onChoose={setChosen} />
+      </div>
       {editor.saving.error !== null && (
         <Refusal
           error={editor.saving.error}

@@ -32,17 +32,15 @@ export function FrameStage(props: FrameStageProps) {
   const frames = useFrames(props.surveyId);
   const [area] = props.areas;
   if (area === undefined) return <NoArea mayChange={props.mayChange} areaTo={props.areaTo} />;
-  if (frames.isPending) {
-    return (
-      <div className="p-8">
-        <RuledLoading label="Loading the frame" lines={5} />
-      </div>
-    );
-  }
-  if (frames.isError) {
+  // Asked again now and then: when only that fails, the page stays, with what is set on it.
+  if (frames.data === undefined) {
     return (
       <div className="max-w-160 p-8">
-        <Refusal error={frames.error} next={<Button onClick={() => void frames.refetch()}>Try again</Button>} />
+        {frames.isError ? (
+          <Refusal error={frames.error} next={<Button onClick={() => void frames.refetch()}>Try again</Button>} />
+        ) : (
+          <RuledLoading label="Loading the frame" lines={5} />
+        )}
       </div>
     );
   }

@@ -3,7 +3,6 @@ import { useMap } from "react-leaflet";
 import type { CellAddress, CellSpec } from "#shared/frame/cell-spec.ts";
 import type { FrameCells } from "#shared/frame/cells.ts";
 import { CellCallout } from "../../map/CellCallout.tsx";
-
 import { cellAt } from "../../map/sheet-geometry.ts";
 import { cellWords } from "./cell-words.ts";
 

@@ -4,12 +4,13 @@ import type { CellAddress } from "#shared/frame/cell-spec.ts";
 import { addressOf } from "../../api/call.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { ButtonLink } from "../../components/ui/ButtonLink.tsx";
-import { formatCount, formatMillimetres, formatNumber, formatTime } from "../../components/ui/format.ts";
+import { formatCount, formatMillimetres, formatNumber, type Times } from "../../components/ui/format.ts";
 import { Hash } from "../../components/ui/Hash.tsx";
 import { KeyValues, type KeyValue } from "../../components/ui/KeyValues.tsx";
 import { MapPage } from "../../components/ui/MapPage.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { RuledLoading } from "../../components/ui/RuledLoading.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { usePlane, useSealedCells } from "../../map/frame-ground.ts";
 import type { PlaneReference } from "../../workers/frame-preview-work.ts";
 import { FindCell } from "./FindCell.tsx";
@@ -34,7 +35,7 @@ interface SealedFrameProps {
   readonly drawTo: string | undefined;
 }
 
-function factsOf(frame: FrameVersion, seal: Seal): KeyValue[] {
+function factsOf(frame: FrameVersion, seal: Seal, times: Times): KeyValue[] {
   const { cells } = frame.spec;
   const preset = presetOf(frame.spec);
   const epsg = frame.crs.epsg;
@@ -44,7 +45,7 @@ function factsOf(frame: FrameVersion, seal: Seal): KeyValue[] {
     { key: "Edge rule", value: PRESET_TITLES[preset].toLowerCase() },
     { key: "CRS", value: epsg === null ? frame.crs.name : `${frame.crs.name}, EPSG:${epsg}` },
     { key: "Origin", value: `${formatMillimetres(cells.originEastMm)} E, ${formatMillimetres(cells.originNorthMm)} N` },
-    { key: "Sealed", value: formatTime(seal.at) },
+    { key: "Sealed", value: times.time(seal.at) },
     { key: "By", value: seal.by },
     { key: "Frame hash", value: <Hash value={seal.frameSha256} label="frame hash" /> },
     { key: "List hash", value: <Hash value={seal.listSha256} label="list hash" /> },
@@ -62,11 +63,15 @@ function SealedSheet({ surveyId, surveyName, frame, chosen, onChoose }: SealedFr
   const { spec } = frame;
   const plane = usePlane(planeOf(surveyId, frame));
   const cells = useSealedCells(surveyId, frame.id);
-  const error = plane.error ?? cells.error;
+  const again = <Button onClick={() => void (plane.isError ? plane : cells).refetch()}>Try again</Button>;
   if (plane.data === undefined || plane.isPlaceholderData) {
     return (
       <div className="p-8">
-        {error === null ? <RuledLoading label="Loading the sheet" lines={5} /> : <Refusal error={error} />}
+        {plane.isError ? (
+          <Refusal error={plane.error} next={again} />
+        ) : (
+          <RuledLoading label="Loading the sheet" lines={5} />
+        )}
       </div>
     );
   }
@@ -83,7 +88,7 @@ function SealedSheet({ surveyId, surveyName, frame, chosen, onChoose }: SealedFr
       />
       {cells.isError && (
         <div className="absolute inset-x-8 top-16">
-          <Refusal error={cells.error} />
+          <Refusal error={cells.error} next={again} />
         </div>
       )}
     </>
@@ -112,6 +117,7 @@ function Files({ surveyId, frame }: { readonly surveyId: string; readonly frame:
 /** A frame that never changes again: its facts, hashes, files and sheet. */
 export function SealedFrame(props: SealedFrameProps) {
   const { surveyId, plural, frame, seal, mayReadFiles, onNewVersion, drawTo } = props;
+  const times = useTimes();
   const [chosen, setChosen] = useState<CellAddress | null>(null);
   const cells = useSealedCells(surveyId, frame.id);
   const plane = usePlane(planeOf(surveyId, frame));
@@ -133,7 +139,7 @@ export function SealedFrame(props: SealedFrameProps) {
       {props.versions}
       <p className="q-speak">{speaksFor(preset, seal.summary, plural, plane.data?.holes ?? 0)}</p>
       <div className="my-3">
-        <KeyValues items={factsOf(frame, seal)} />
+        <KeyValues items={factsOf(frame, seal, times)} />
       </div>
       <p className="q-help">{PRESET_TEXTS[preset]}</p>
       <div className="mt-3">

@@ -30,9 +30,13 @@ export function useFramePreview(reference: PlaneReference | null, spec: CellSpec
   });
 }
 
+/** Drafts and sealing reach the server one after another: an earlier draft never arrives last. */
+const inTurn = (surveyId: string) => ({ id: `frame of ${surveyId}` });
+
 export function useSaveDraft(surveyId: string) {
   const queries = useQueryClient();
   return useMutation({
+    scope: inTurn(surveyId),
     meta: { keeps: true },
     mutationFn: (spec: FrameSpec) => call(saveDraftFrame, { params: { surveyId }, body: spec }),
     onSuccess: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
@@ -50,6 +54,7 @@ export interface SealRequest {
 export function useSealFrame(surveyId: string) {
   const queries = useQueryClient();
   return useMutation({
+    scope: inTurn(surveyId),
     meta: { keeps: true },
     mutationFn: async ({ spec, cells, signal }: SealRequest) => {
       const kept = await call(saveDraftFrame, { params: { surveyId }, body: spec, signal });
