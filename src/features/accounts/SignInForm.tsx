@@ -1,6 +1,8 @@
 import { useState, type SubmitEvent } from "react";
+import { flushSync } from "react-dom";
 import { Button } from "../../components/ui/Button.tsx";
 import { Field } from "../../components/ui/Field.tsx";
+import { focusFirstInvalid } from "../../components/ui/focus-first-invalid.ts";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { TextInput } from "../../components/ui/TextInput.tsx";
 import { useSignIn } from "./queries.ts";
@@ -12,11 +14,12 @@ export function SignInForm() {
   const [shown, setShown] = useState(false);
   const [missing, setMissing] = useState({ email: false, password: false });
   const signIn = useSignIn();
-  const submit = (event: SubmitEvent) => {
+  const submit = (event: SubmitEvent<HTMLFormElement>) => {
     event.preventDefault();
     const lacks = { email: email.trim() === "", password: password === "" };
-    setMissing(lacks);
-    if (!lacks.email && !lacks.password && !signIn.isPending) signIn.mutate({ email, password });
+    flushSync(() => setMissing(lacks));
+    if (lacks.email || lacks.password) focusFirstInvalid(event.currentTarget);
+    else if (!signIn.isPending) signIn.mutate({ email, password });
   };
   return (
     <form className="q-sign-in-form" onSubmit={submit} noValidate>

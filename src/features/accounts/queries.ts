@@ -13,10 +13,12 @@ export function useSession() {
   return useQuery(sessionQuery);
 }
 
-/** Another person's answers must not stay: everything that was asked before is dropped. */
+/** Another person's answers must not stay, nor when they last kept something: all that was asked or done before is dropped. */
 function useNewSession() {
   const queries = useQueryClient();
   return (session: Session) => {
+    const acts = queries.getMutationCache();
+    for (const act of acts.findAll({ predicate: ({ meta }) => meta?.keeps === true })) acts.remove(act);
     queries.removeQueries({ predicate: ({ queryKey }) => queryKey[0] !== sessionKey[0] });
     queries.setQueryData(sessionKey, session);
   };

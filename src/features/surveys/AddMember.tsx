@@ -1,8 +1,10 @@
-import { useState, type SubmitEvent } from "react";
+import { useRef, useState, type SubmitEvent } from "react";
+import { flushSync } from "react-dom";
 import type { Role } from "#shared/access/table.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { Checkbox } from "../../components/ui/Checkbox.tsx";
 import { Field } from "../../components/ui/Field.tsx";
+import { focusFirstInvalid } from "../../components/ui/focus-first-invalid.ts";
 import { RadioCards } from "../../components/ui/RadioCards.tsx";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { showToast } from "../../components/ui/show-toast.tsx";
@@ -18,8 +20,12 @@ const ROLE_CARDS: readonly { value: Role; title: string; text: string }[] = [
 ];
 
 const START = { email: "", role: "counter" as Role, isNew: false, name: "", password: "" };
+type Typed = typeof START;
 
-function lacksOf(typed: typeof START): { email?: string; name?: string; password?: string } {
+/** What a field lacks, by its name. */
+type Lacks = Partial<Record<"email" | "name" | "password", string>>;
+
+function lacksOf(typed: Typed): Lacks {
   return {
     ...(!/^\S+@\S+\.\S+$/.test(typed.email.trim()) && { email: "Write the e-mail address of the person." }),
     ...(typed.isNew && typed.name.trim() === "" && { name: "Write the name that others will see." }),
@@ -30,30 +36,74 @@ function lacksOf(typed: typeof START): { email?: string; name?: string; password
   };
 }
 
+interface NewAccountFieldsProps {
+  readonly typed: Typed;
+  readonly lacks: Lacks;
+  readonly onChange: (part: Partial<Typed>) => void;
+}
+
+function NewAccountFields({ typed, lacks, onChange }: NewAccountFieldsProps) {
+  return (
+    <div className="grid gap-5 md:grid-cols-2">
+      <Field label="Name" error={lacks.name}>
+        <TextInput
+          name="name"
+          autoComplete="off"
+          value={typed.name}
+          onChange={(event) => onChange({ name: event.target.value })}
+        />
+      </Field>
+      <Field label="First password" help="At least twelve characters." error={lacks.password}>
+        <TextInput
+          name="password"
+          autoComplete="off"
+          autoCapitalize="none"
+          mono
+          value={typed.password}
+          onChange={(event) => onChange({ password: event.target.value })}
+        />
+      </Field>
+    </div>
+  );
+}
+
 /** Gives somebody a role; makes an account with a first password where they have none. */
 export function AddMember({ surveyId }: { readonly surveyId: string }) {
   const [typed, setTyped] = useState(START);
   const [tried, setTried] = useState(false);
+  const form = useRef<HTMLFormElement>(null);
   const add = useAddMember(surveyId);
   const lacks = tried ? lacksOf(typed) : {};
-  const change = (part: Partial<typeof START>) => setTyped((before) => ({ ...before, ...part }));
-  const submit = (event: SubmitEvent) => {
+  const change = (part: Partial<Typed>) => setTyped((before) => ({ ...before, ...part }));
+  const submit = (event: SubmitEvent<HTMLFormElement>) => {
     event.preventDefault();
-    setTried(true);
-    if (Object.keys(lacksOf(typed)).length > 0 || add.isPending) return;
+    if (add.isPending) return;
+    flushSync(() => setTried(true));
+    if (Object.keys(lacksOf(typed)).length > 0) {
+      focusFirstInvalid(event.currentTarget);
+      return;
+    }
     const { email, role, isNew, name, password } = typed;
     const body = { email, role, ...(isNew && { newAccount: { name, password } }) };
     add.mutate(body, {
       onSuccess: () => {
         showToast(`${isNew ? name : email} is ${role} of this survey now.`);
-        setTyped({ ...START, role });
+        // Unless somebody went on typing meanwhile.
+        setTyped((now) => (now === typed ? { ...START, role } : now));
         setTried(false);
       },
     });
   };
+  const makeAccount = () => {
+    flushSync(() => {
+      change({ isNew: true });
+      add.reset();
+    });
+    form.current?.querySelector<HTMLInputElement>('[name="name"]')?.focus();
+  };
   const hasNoAccount = add.isError && problemOf(add.error).code === "account-not-found" && !typed.isNew;
   return (
-    <form className="grid max-w-140 gap-5" onSubmit={submit} noValidate>
+    <form ref={form} className="grid max-w-140 gap-5" onSubmit={submit} noValidate>
       <Field label="E-mail" error={lacks.email}>
         <TextInput
           name="email"
@@ -71,34 +121,11 @@ export function AddMember({ surveyId }: { readonly surveyId: string }) {
         checked={typed.isNew}
         onChange={(event) => change({ isNew: event.target.checked })}
       />
-      {typed.isNew && (
-        <div className="grid gap-5 md:grid-cols-2">
-          <Field label="Name" error={lacks.name}>
-            <TextInput
-              name="name"
-              autoComplete="off"
-              value={typed.name}
-              onChange={(event) => change({ name: event.target.value })}
-            />
-          </Field>
-          <Field label="First password" help="At least twelve characters." error={lacks.password}>
-            <TextInput
-              name="password"
-              autoComplete="off"
-              autoCapitalize="none"
-              mono
-              value={typed.password}
-              onChange={(event) => change({ password: event.target.value })}
-            />
-          </Field>
-        </div>
-      )}
+      {typed.isNew && <NewAccountFields typed={typed} lacks={lacks} onChange={change} />}
       {add.isError && (
         <Refusal
           error={add.error}
-          next={
-            hasNoAccount ? <Button onClick={() => change({ isNew: true })}>Make an account for them</Button> : undefined
-          }
+          next={hasNoAccount ? <Button onClick={makeAccount}>Make an account for them</Button> : undefined}
         />
       )}
       <div>

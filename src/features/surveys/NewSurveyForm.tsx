@@ -26,9 +26,10 @@ export function NewSurveyForm({ now, onStarted }: NewSurveyFormProps) {
     defaultValues: newSurveyDefaults(now, zone),
   });
   const { errors } = form.formState;
-  const submit = form.handleSubmit(({ wholeNumbers, ...rest }) =>
-    create.mutate({ ...rest, wholeNumbers: wholeNumbers === "whole" }, { onSuccess: (survey) => onStarted(survey.id) }),
-  );
+  const submit = form.handleSubmit(({ wholeNumbers, ...rest }) => {
+    if (create.isPending) return;
+    create.mutate({ ...rest, wholeNumbers: wholeNumbers === "whole" }, { onSuccess: (survey) => onStarted(survey.id) });
+  });
   return (
     <form className="grid max-w-140 gap-5" onSubmit={(event) => void submit(event)} noValidate>
       <Field label="Name of the survey" help="The place is usually best: “Pellimere Fen”." error={errors.name?.message}>

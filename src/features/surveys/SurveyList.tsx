@@ -1,9 +1,10 @@
 import { Link } from "react-router-dom";
 import type { SurveySummary } from "#shared/api/surveys.ts";
-import { formatDay, formatList } from "../../components/ui/format.ts";
+import { formatList } from "../../components/ui/format.ts";
 import type { Stage } from "../../components/ui/stage-state.ts";
 import { StageLine } from "../../components/ui/StageLine.tsx";
 import { Table } from "../../components/ui/Table.tsx";
+import { useTimes } from "../../components/ui/use-times.ts";
 import { SmallOutline } from "../../map/SmallOutline.tsx";
 
 /** A survey with what the app knows of it: where it leads, its stations and the one that matters. */
@@ -18,17 +19,18 @@ export interface SurveyRow {
 
 /** All surveys of this person, each with its outline, roles and the line of its stages. */
 export function SurveyList({ rows }: { readonly rows: readonly SurveyRow[] }) {
+  const times = useTimes();
   return (
     <div className="q-survey-list">
       <Table caption="Your surveys">
         <thead>
           <tr>
-            <th aria-label="Outline" />
-            <th>Survey</th>
-            <th>You are</th>
-            <th>Area to Record</th>
-            <th>Record</th>
-            <th>Started</th>
+            <th scope="col" aria-label="Outline" />
+            <th scope="col">Survey</th>
+            <th scope="col">You are</th>
+            <th scope="col">Area to Record</th>
+            <th scope="col">Record</th>
+            <th scope="col">Started</th>
           </tr>
         </thead>
         <tbody>
@@ -46,7 +48,7 @@ export function SurveyList({ rows }: { readonly rows: readonly SurveyRow[] }) {
                 <StageLine stages={stations} note={note} attention={attention} />
               </td>
               <td className="q-survey-record">{survey.stages.find((one) => one.stage === "record")?.note ?? ""}</td>
-              <td className="q-survey-started">{formatDay(survey.createdAt)}</td>
+              <td className="q-survey-started">{times.day(survey.createdAt)}</td>
             </tr>
           ))}
         </tbody>

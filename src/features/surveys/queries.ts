@@ -46,7 +46,8 @@ export function useCreateSurvey() {
     mutationFn: (body: NewSurvey) => call(createSurvey, { body }),
     onSuccess: (survey) => {
       queries.setQueryData(surveyKey(survey.id), survey);
-      return queries.invalidateQueries({ queryKey: surveysKey });
+      // Not waited for: the new survey opens now.
+      void queries.invalidateQueries({ queryKey: surveysKey });
     },
   });
 }
