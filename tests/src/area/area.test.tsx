@@ -74,6 +74,31 @@ test("an archive with several layers asks for one of them, and keeps an answer g
   expect(api.named("importArea").at(-1)?.body).toEqual({ layer: "roads", crs: "EPSG:4326" });
 });
 
+test("an answer that cannot be used is refused, and stays where it was typed", async () => {
+  const api = open(["planner"], [])
+    .on(importArea, ({ body }) => {
+      if (body.crs === undefined) throw askCrs("These look like metres, not degrees.", "metres");
+      throw new Problem("crs-unknown", "“+proj=utn” is no projection. Check the text.");
+    })
+    .install();
+  renderApp("/surveys/s1/area");
+  await choose(file);
+  const text = await screen.findByLabelText("PROJ text or WKT");
+  await userEvent.type(text, "+proj=utn");
+  await userEvent.click(screen.getByText("Read the file in this system"));
+  await screen.findByText("“+proj=utn” is no projection. Check the text.");
+  screen.getByDisplayValue("+proj=utn");
+  await userEvent.type(screen.getByLabelText("PROJ text or WKT"), " +zone=31");
+  await userEvent.click(screen.getByText("Read the file in this system"));
+  await waitFor(() => {
+    expect(api.named("importArea").map(({ body }) => body)).toEqual([
+      {},
+      { crs: "+proj=utn" },
+      { crs: "+proj=utn +zone=31" },
+    ]);
+  });
+});
+
 test("a refused file is refused by name with the next step, and stays chosen", async () => {
   open(["planner"], [])
     .on(importArea, () => {
