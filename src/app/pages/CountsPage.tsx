@@ -14,7 +14,7 @@ export function CountsPage() {
       mayEnter={reach(survey.roles, "counts.enter") !== "none"}
       mayAmend={reach(survey.roles, "counts.amend") !== "none"}
       mayImport={reach(survey.roles, "counts.import") !== "none"}
-      drawTo={paths.stage(survey.id, "draw")}
+      drawTo={reach(survey.roles, "draw.make") === "none" ? null : paths.stage(survey.id, "draw")}
     />
   );
 }

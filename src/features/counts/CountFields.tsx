@@ -1,4 +1,4 @@
-import { STATE_WORDS } from "#shared/counts/count.ts";
+import { STATE_MEANINGS, STATE_WORDS } from "#shared/counts/count.ts";
 import { Field } from "../../components/ui/Field.tsx";
 import { NumberInput } from "../../components/ui/NumberInput.tsx";
 import { Select } from "../../components/ui/Select.tsx";
@@ -10,10 +10,12 @@ interface CountFieldsProps {
   readonly texts: CountTexts;
   readonly onTexts: (texts: CountTexts) => void;
   readonly error: string | undefined;
+  /** The number takes the focus: the form was opened to be filled in. */
+  readonly focused?: boolean;
 }
 
 /** A number, or one of the reasons why there is none; and a note. */
-export function CountFields({ plural, texts, onTexts, error }: CountFieldsProps) {
+export function CountFields({ plural, texts, onTexts, error, focused = false }: CountFieldsProps) {
   return (
     <div className="grid gap-3 md:grid-cols-2">
       <Field
@@ -25,10 +27,11 @@ export function CountFields({ plural, texts, onTexts, error }: CountFieldsProps)
           unit={plural}
           value={texts.number}
           disabled={texts.reason !== null}
+          autoFocus={focused}
           onChange={(event) => onTexts({ ...texts, number: event.target.value })}
         />
       </Field>
-      <Field label="Or no count, because" help="A lead closes the pick afterwards, and the next reserve opens.">
+      <Field label="Or no count, because" help={reasonHelp(texts.reason)}>
         <Select
           value={texts.reason ?? ""}
           onChange={(event) =>
@@ -47,4 +50,10 @@ export function CountFields({ plural, texts, onTexts, error }: CountFieldsProps)
       </div>
     </div>
   );
+}
+
+function reasonHelp(reason: Reason | null): string {
+  if (reason === null) return "Only where no number can be given.";
+  if (reason === "not-in-population") return STATE_MEANINGS[reason];
+  return "A lead closes the pick afterwards, and the next reserve opens.";
 }

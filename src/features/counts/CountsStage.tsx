@@ -17,8 +17,11 @@ import { VisitStateLabel } from "../../components/ui/VisitStateLabel.tsx";
 import { useTimes } from "../../components/ui/use-times.ts";
 import { VISIT_COLUMNS } from "../../components/visits/visit-columns.tsx";
 import { CellCount } from "./CellCount.tsx";
+import { useDrafts } from "./drafts.ts";
 import { ImportCounts } from "./ImportCounts.tsx";
+import { madeText } from "./said-text.ts";
 import type { CountTarget } from "./target.ts";
+import { useTableImport } from "./use-table-import.ts";
 
 interface CountsStageProps {
   readonly surveyId: string;
@@ -26,7 +29,8 @@ interface CountsStageProps {
   readonly mayEnter: boolean;
   readonly mayAmend: boolean;
   readonly mayImport: boolean;
-  readonly drawTo: string;
+  /** Where cells are drawn, for those who may; null for the others. */
+  readonly drawTo: string | null;
 }
 
 type Visits = NonNullable<ReturnType<typeof useVisits>["data"]>;
@@ -41,28 +45,38 @@ export function CountsStage(props: CountsStageProps) {
       </div>
     );
   }
-  if (visits.data.visits.length === 0) {
-    return (
-      <ReadingPage title="Counts">
-        <EmptyState title="No cells to count yet" action={<ButtonLink to={props.drawTo}>To the draw</ButtonLink>}>
-          Counts belong to drawn cells. Once a draw is live and cells are shared out, they are written down here.
-        </EmptyState>
-      </ReadingPage>
-    );
-  }
+  if (visits.data.visits.length === 0) return <NothingToCount {...props} drawn={visits.data.drawId !== null} />;
   return <Counts {...props} data={visits.data} />;
+}
+
+/** Nothing is drawn yet; or cells are, and none of them is this person's. */
+function NothingToCount({ drawn, drawTo }: CountsStageProps & { readonly drawn: boolean }) {
+  const action = drawn || drawTo === null ? undefined : <ButtonLink to={drawTo}>To the draw</ButtonLink>;
+  return (
+    <ReadingPage title="Counts">
+      <EmptyState title={drawn ? "No cell is given to you yet" : "No cells to count yet"} action={action}>
+        {drawn
+          ? "The field lead shares the drawn cells out. Yours are written down here once you have some."
+          : "Counts belong to drawn cells. Once a planner has drawn them, they are written down here."}
+      </EmptyState>
+    </ReadingPage>
+  );
 }
 
 function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }) {
   const times = useTimes();
-  const [open, setOpen] = useState<string | null>(null);
+  const drafts = useDrafts();
+  const table = useTableImport(props.surveyId, props.target.id);
+  const [open, setOpen] = useState<{ readonly id: string; readonly afterAnother: boolean } | null>(null);
   const { visits } = data;
   const settled = visits.filter(isVisited).length;
   const openNext = (after: string) => {
     const place = visits.findIndex(({ id }) => id === after);
     const next = [...visits.slice(place + 1), ...visits.slice(0, place)].find((visit) => !isVisited(visit));
-    setOpen(next?.id ?? null);
+    setOpen(next === undefined ? null : { id: next.id, afterAnother: true });
   };
+  // One filled button a screen: a table that is ready to be written has it.
+  const tableIsReady = table.verdict !== null && !table.verdict.written && table.verdict.toWrite > 0;
   return (
     <ReadingPage
       title={`${formatNumber(settled)} of ${formatCount(visits.length, "cell")} written down`}
@@ -74,16 +88,24 @@ function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }
         columns={columnsFor(props.target.plural, times)}
         rows={visits}
         rowId={(visit) => visit.id}
-        chosen={open}
-        onChoose={(id) => setOpen((before) => (before === id ? null : id))}
+        chosen={open?.id ?? null}
+        onChoose={(id) => setOpen((before) => (before?.id === id ? null : { id, afterAnother: false }))}
         detail={(visit) =>
-          visit.id === open ? (
-            <CellCount {...props} key={visit.id} visit={visit} onSaved={() => openNext(visit.id)} />
+          visit.id === open?.id ? (
+            <CellCount
+              {...props}
+              key={visit.id}
+              visit={visit}
+              drafts={drafts}
+              focused={open.afterAnother}
+              primary={!tableIsReady}
+              onSaved={() => openNext(visit.id)}
+            />
           ) : undefined
         }
         initialSort={{ column: "order", direction: "ascending" }}
       />
-      {props.mayImport && <ImportCounts surveyId={props.surveyId} targetId={props.target.id} />}
+      {props.mayImport && <ImportCounts table={table} />}
       {!props.mayEnter && <Section title="Reading only">Your role here reads the counts and changes none.</Section>}
     </ReadingPage>
   );
@@ -112,7 +134,7 @@ function columnsFor(plural: string, times: Times): DataColumn<Visit>[] {
         count.state === "not-visited" ? (
           ""
         ) : (
-          <span className="whitespace-nowrap">{`${count.by}, ${times.time(count.at)}${count.amended ? ", amended" : ""}`}</span>
+          <span className="whitespace-nowrap">{`${count.by}, ${madeText(times, count.at)}${count.amended ? ", amended" : ""}`}</span>
         ),
     },
   ];

@@ -1,9 +1,10 @@
 import type { ImportVerdict } from "#shared/api/counts.ts";
 import type { DataColumn } from "../../components/ui/data-column.ts";
 import { DataTable } from "../../components/ui/DataTable.tsx";
-import { formatNumber } from "../../components/ui/format.ts";
+import { formatCount, formatNumber } from "../../components/ui/format.ts";
 
 type Row = ImportVerdict["rows"][number];
+type Verdict = Row["verdict"];
 
 const VERDICT_WORDS = {
   new: "will be written",
@@ -13,44 +14,63 @@ const VERDICT_WORDS = {
   empty: "no count in this row",
   question: "asks you",
   refused: "not taken",
-} as const satisfies Record<Row["verdict"], string>;
+} as const satisfies Record<Verdict, string>;
 
-const COLUMNS: readonly DataColumn<Row>[] = [
-  { id: "row", head: "Row", numeric: true, sortBy: (row) => row.row, cell: (row) => formatNumber(row.row) },
-  { id: "cell", head: "Cell", sortBy: (row) => row.cell, cell: (row) => <b>{row.cell}</b> },
-  { id: "said", head: "Says", cell: (row) => row.said },
-  {
-    id: "verdict",
-    head: "Verdict",
-    sortBy: (row) => row.verdict,
-    cell: (row) => (
-      <span>
-        <b>{VERDICT_WORDS[row.verdict]}</b>
-        {row.message !== "" && <span className="q-help block">{row.message}</span>}
-        {row.flag !== "" && <span className="q-help block">{row.flag}</span>}
-      </span>
-    ),
-  },
-];
+const VERDICTS = Object.keys(VERDICT_WORDS) as Verdict[];
+
+const wordOf = (verdict: Verdict, written: boolean): string =>
+  verdict === "new" && written ? "written" : VERDICT_WORDS[verdict];
+
+/** Day and observer come as columns of their own only where the table tells them. */
+function columnsFor({ rows, written }: ImportVerdict): DataColumn<Row>[] {
+  const day: DataColumn<Row> = { id: "day", head: "Counted on", sortBy: (row) => row.day, cell: (row) => row.day };
+  const by: DataColumn<Row> = { id: "by", head: "By", sortBy: (row) => row.by, cell: (row) => row.by };
+  return [
+    { id: "row", head: "Row", numeric: true, sortBy: (row) => row.row, cell: (row) => formatNumber(row.row) },
+    { id: "cell", head: "Cell", sortBy: (row) => row.cell, cell: (row) => <b>{row.cell}</b> },
+    { id: "said", head: "Says", cell: (row) => row.said },
+    ...(rows.some((row) => row.day !== "") ? [day] : []),
+    ...(rows.some((row) => row.by !== "") ? [by] : []),
+    {
+      id: "verdict",
+      head: "Verdict",
+      sortBy: (row) => row.verdict,
+      cell: (row) => (
+        <span>
+          <b>{wordOf(row.verdict, written)}</b>
+          {row.message !== "" && !(written && row.verdict === "new") && (
+            <span className="q-help block">{row.message}</span>
+          )}
+          {row.flag !== "" && <span className="q-help block">{row.flag}</span>}
+        </span>
+      ),
+    },
+  ];
+}
 
 /** How each row of the table is read, and how many of each kind there are. */
 export function VerdictTable({ verdict }: { readonly verdict: ImportVerdict }) {
-  const counts = new Map<Row["verdict"], number>();
-  for (const row of verdict.rows) counts.set(row.verdict, (counts.get(row.verdict) ?? 0) + 1);
+  const { rows, numbers, written } = verdict;
+  const all = VERDICTS.reduce((sum, kind) => sum + numbers[kind], 0);
   return (
     <div className="grid gap-2">
       <ul className="flex flex-wrap gap-x-6 gap-y-1" aria-label="Rows by verdict">
-        {[...counts].map(([kind, number]) => (
+        {VERDICTS.filter((kind) => numbers[kind] > 0).map((kind) => (
           <li key={kind}>
-            <b>{formatNumber(number)}</b> {VERDICT_WORDS[kind]}
+            <b>{formatNumber(numbers[kind])}</b> {wordOf(kind, written)}
           </li>
         ))}
       </ul>
+      {rows.length < all && (
+        <p className="q-help">
+          {`${formatCount(rows.length, "row")} of ${formatNumber(all)} are listed: first those that ask, are refused, differ or are written.`}
+        </p>
+      )}
       <DataTable
         dense
         caption="Rows of the table and how they are read"
-        columns={COLUMNS}
-        rows={verdict.rows}
+        columns={columnsFor(verdict)}
+        rows={rows}
         rowId={(row) => String(row.row)}
         tone={toneOf}
         maxHeight={420}

@@ -13,13 +13,17 @@ export interface CountTexts {
 
 export const EMPTY_TEXTS: CountTexts = { number: "", reason: null, note: "" };
 
-/** What would be saved, or why nothing can be. An empty field is not a zero. */
+/** What would be saved, what is asked first, or why nothing can be. An empty field is not a zero. */
 export type CountFormReading =
   | { readonly kind: "ready"; readonly said: Said }
   | { readonly kind: "empty" }
+  | { readonly kind: "asked"; readonly why: string; readonly ifYes: Said }
   | { readonly kind: "wrong"; readonly why: string };
 
-export function readCountForm({ number, reason }: CountTexts, wholeNumbers: boolean): CountFormReading {
+export function readCountForm(
+  { number, reason }: CountTexts,
+  { wholeNumbers, plural }: { readonly wholeNumbers: boolean; readonly plural: string },
+): CountFormReading {
   if (reason !== null) return { kind: "ready", said: { state: reason } };
   if (number.trim() === "") return { kind: "empty" };
   const reading = readCountText(number, { wholeNumbers });
@@ -31,6 +35,10 @@ export function readCountForm({ number, reason }: CountTexts, wholeNumbers: bool
     case "empty":
       return { kind: "empty" };
     case "question":
+      if (reading.ask === "fraction") {
+        return { kind: "wrong", why: `${reading.ifYes} is no whole number, and ${plural} are counted whole.` };
+      }
+      return { kind: "asked", why: reading.message, ifYes: { state: "counted", value: reading.ifYes } };
     case "refused":
       return { kind: "wrong", why: reading.message };
   }

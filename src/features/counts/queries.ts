@@ -21,8 +21,9 @@ export function useEnterCount(surveyId: string) {
   return useMutation({
     meta: { keeps: true },
     mutationFn: (entry: NewEntry) => call(enterCounts, { params: { surveyId }, body: { entries: [entry] } }),
-    // Not waited for: the page goes on to the next cell now, before the list says that this one is settled.
-    onSuccess: () => void queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
+    // Not waited for: the page goes on to the next cell now, before the list says that this one is settled. After a refusal
+    // too: it may be that somebody else gave the cell a count meanwhile.
+    onSettled: () => void queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }
 
@@ -36,8 +37,8 @@ export function useAmendCount(surveyId: string) {
   return useMutation({
     meta: { keeps: true },
     mutationFn: ({ visitId, ...body }: Amendment) => call(amendCount, { params: { surveyId, visitId }, body }),
-    // Not waited for: the page goes on to the next cell now, before the list says that this one is settled.
-    onSuccess: () => void queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
+    // After a refusal too: it may be that somebody else amended the count meanwhile.
+    onSettled: () => void queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }
 
@@ -51,16 +52,24 @@ export function useEntries(surveyId: string, visitId: string) {
 
 export interface TableToImport {
   readonly file: File;
-  readonly body: z.input<typeof importCounts.body>;
+  readonly body: Omit<z.input<typeof importCounts.body>, "write">;
 }
 
-/** Judges a table, or writes it when the body says so; only writing changes anything. */
-export function useImportCounts(surveyId: string) {
+/** Says how each row of a table is read, and keeps nothing. */
+export function useJudgeTable(surveyId: string) {
+  return useMutation({
+    mutationFn: ({ file, body }: TableToImport) =>
+      call(importCounts, { params: { surveyId }, body: { ...body, write: null }, file }),
+  });
+}
+
+/** Writes what was judged, all or nothing. */
+export function useWriteTable(surveyId: string) {
   const queries = useQueryClient();
   return useMutation({
     meta: { keeps: true },
-    mutationFn: ({ file, body }: TableToImport) => call(importCounts, { params: { surveyId }, body, file }),
-    onSuccess: (verdict) =>
-      verdict.written ? queries.invalidateQueries({ queryKey: surveyKey(surveyId) }) : undefined,
+    mutationFn: ({ file, body, judged }: TableToImport & { readonly judged: string }) =>
+      call(importCounts, { params: { surveyId }, body: { ...body, write: judged }, file }),
+    onSettled: () => queries.invalidateQueries({ queryKey: surveyKey(surveyId) }),
   });
 }
