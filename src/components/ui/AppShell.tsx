@@ -126,7 +126,13 @@ export function AppShell({
           <StagesOnAPhone stages={stages} current={current} foot={railFoot} here={here ?? "Stages"} />
         )}
       </header>
-      {notice === undefined ? <div /> : <div className="q-notice">{notice}</div>}
+      {notice === undefined ? (
+        <div />
+      ) : (
+        <aside className="q-notice" aria-label="About this installation">
+          {notice}
+        </aside>
+      )}
       <div className={stages === undefined ? "q-shell-columns q-shell-columns-plain" : "q-shell-columns"}>
         {stages !== undefined && <StageRail stages={stages} current={currentStage ?? null} foot={railFoot} />}
         <main id="main" tabIndex={-1} className="min-w-0 outline-none">

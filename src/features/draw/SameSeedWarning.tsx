@@ -19,7 +19,7 @@ export function SameSeedWarning({ same, kind }: SameSeedWarningProps) {
     draw === null ? `the declaration of ${times.time(declaration.declaredAt)}` : `draw ${draw.number}`;
   const otherKind = same.some(({ declaration }) => declaration.design.kind !== kind);
   return (
-    <div role="status">
+    <div role="status" className="contents">
       {same.length > 0 && (
         <Banner
           tone="ochre"

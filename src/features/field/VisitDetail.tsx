@@ -1,7 +1,7 @@
 import type { Visit } from "#shared/api/field.ts";
 import { Button } from "../../components/ui/Button.tsx";
 import { CopyText } from "../../components/ui/CopyText.tsx";
-import { formatNumber, formatPercent } from "../../components/ui/format.ts";
+import { formatMetres, formatPercent } from "../../components/ui/format.ts";
 
 interface VisitDetailProps {
   readonly visit: Visit;
@@ -14,13 +14,13 @@ export function VisitDetail({ visit, onClosing }: VisitDetailProps) {
   const degrees = `${centre.lat.toFixed(6)}, ${centre.lng.toFixed(6)}`;
   const hindrance = hindranceOf(visit);
   return (
-    <div className="flex flex-wrap items-center gap-x-6 gap-y-2 py-2">
+    <div className="flex max-w-[min(100%,calc(100vw-3rem))] flex-wrap items-center gap-x-6 gap-y-2 py-2">
       <p>
         {"Centre "}
         <CopyText text={degrees} label={`centre of ${label}`}>
           <span className="q-mono">{degrees}</span>
         </CopyText>
-        {` (latitude, longitude), ${formatNumber(centre.eastM, 1)} E ${formatNumber(centre.northM, 1)} N. `}
+        {` (latitude, longitude); ${formatMetres(centre.eastM)} E, ${formatMetres(centre.northM)} N. `}
         {`${formatPercent(visit.shareBillionths / 1e9)} of it lies in the study area.`}
       </p>
       {onClosing !== undefined &&

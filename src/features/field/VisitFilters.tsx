@@ -27,7 +27,7 @@ interface VisitFiltersProps {
 
 export function VisitFilters({ visits, filter, onFilter }: VisitFiltersProps) {
   return (
-    <span className="flex flex-wrap gap-2">
+    <span className="grid min-w-80 grid-cols-2 gap-2">
       <Select
         aria-label="Whose cells"
         value={filter.who}

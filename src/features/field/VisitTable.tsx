@@ -44,7 +44,11 @@ export function VisitTable({ visits, selected, onSelect, chosen, onChoose, onClo
     <DataTable
       dense
       caption="Cells to visit"
-      columns={selected === null ? COLUMNS : [selectColumn(selected, onSelect), ...COLUMNS]}
+      columns={
+        selected === null
+          ? COLUMNS
+          : COLUMNS.map((column) => (column.id === "cell" ? tickedColumn(column, selected, onSelect) : column))
+      }
       rows={visits}
       rowId={(visit) => visit.id}
       chosen={chosen}
@@ -57,21 +61,27 @@ export function VisitTable({ visits, selected, onSelect, chosen, onChoose, onClo
   );
 }
 
-/** The whole cell of the table ticks, so that a thumb need not hit the box. */
-function selectColumn(selected: ReadonlySet<string>, onSelect: VisitTableProps["onSelect"]): DataColumn<Visit> {
+/** The cell's column with a box to tick, so that both stay in sight when the others scroll; around the box it ticks as well. */
+function tickedColumn(
+  column: DataColumn<Visit>,
+  selected: ReadonlySet<string>,
+  onSelect: VisitTableProps["onSelect"],
+): DataColumn<Visit> {
   return {
-    id: "select",
-    head: <span className="sr-only">Selected</span>,
+    ...column,
     cell: (visit) => (
-      <label className="q-check-cell" onClick={(event) => event.stopPropagation()}>
-        <input
-          type="checkbox"
-          className="q-check"
-          aria-label={`Select ${visit.label}`}
-          checked={selected.has(visit.id)}
-          onChange={(event) => onSelect(visit.id, event.target.checked)}
-        />
-      </label>
+      <span className="whitespace-nowrap">
+        <label className="q-check-cell" onClick={(event) => event.stopPropagation()}>
+          <input
+            type="checkbox"
+            className="q-check"
+            aria-label={`Select ${visit.label}`}
+            checked={selected.has(visit.id)}
+            onChange={(event) => onSelect(visit.id, event.target.checked)}
+          />
+        </label>{" "}
+        {column.cell(visit)}
+      </span>
     ),
   };
 }

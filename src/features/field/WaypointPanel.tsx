@@ -123,7 +123,7 @@ function NamesPreview({ named }: { readonly named: WaypointNames }) {
         <span className="q-mono">{names.slice(0, 4).join(" ")}</span>
         {names.length > 4 && " …"}
       </p>
-      <div role="status">
+      <div role="status" className="contents">
         {clashes.length > 0 && (
           <Banner tone="ochre" title={`${formatCount(clashes.length, "name")} would stand for several cells.`}>
             {`${clashes
