@@ -39,12 +39,13 @@ test("a refused sign-in says so and keeps what was typed", async () => {
   expect(screen.getByDisplayValue("not the one")).toBe(screen.getByLabelText("Password"));
 });
 
-test("empty fields are named and nothing is sent", async () => {
+test("empty fields are named, the first takes the focus, and nothing is sent", async () => {
   const api = signedOut().install();
   renderApp("/sign-in");
   await userEvent.click(await screen.findByRole("button", { name: "Sign in" }));
   screen.getByText("Write the address of your account.");
   screen.getByText("Write the password of your account.");
+  expect(document.activeElement).toBe(screen.getByLabelText("E-mail"));
   expect(api.named("signIn")).toEqual([]);
 });
 

@@ -150,6 +150,7 @@ test("an address without an account is refused, and the refusal offers to make o
   await user.type(await screen.findByLabelText("E-mail"), "tom@example.org");
   await user.click(screen.getByRole("button", { name: "Add to the survey" }));
   await user.click(await screen.findByRole("button", { name: "Make an account for them" }));
+  expect(document.activeElement).toBe(screen.getByLabelText("Name"));
   screen.getByDisplayValue("tom@example.org");
   await user.type(screen.getByLabelText("Name"), "Tom Ashby");
   await user.type(screen.getByLabelText("First password"), "short");
