@@ -165,6 +165,8 @@ export function judgeDates(rows: readonly ReadRow[], rules: DateRules): DatedRow
   let serials = 0;
   const judged = rows.map((row, i): ReadRow => {
     const reading = readings[i];
+    // A word that may be a zero is asked about: the order of its row's date with it, not in a second round.
+    if (row.kind === "zero-word" && reading?.kind === "ordered" && order === "asked") open.add(row.row);
     if (row.verdict !== "new" || reading === undefined) return row;
     const read = readRow(row, reading, order);
     if (typeof read === "object" && "verdict" in read) {

@@ -109,7 +109,8 @@ export function judgeObservers(
   members: readonly Observer[],
   answers: readonly ObserverAnswer[],
 ): ObservedRows {
-  const open = rows.filter((row) => row.verdict === "new" || row.kind === "date-order");
+  // Rows that wait for another answer are asked about at once, not in a second round.
+  const open = rows.filter(({ verdict, kind }) => verdict === "new" || kind === "date-order" || kind === "zero-word");
   const all = spellings(open);
   const saidOf = new Map(answers.map((answer) => [answer.written, answer]));
   const resolved = new Map(

@@ -92,15 +92,18 @@ function Counts({ data, ...props }: CountsStageProps & { readonly data: Visits }
         onChoose={(id) => setOpen((before) => (before?.id === id ? null : { id, afterAnother: false }))}
         detail={(visit) =>
           visit.id === open?.id ? (
-            <CellCount
-              {...props}
-              key={visit.id}
-              visit={visit}
-              drafts={drafts}
-              focused={open.afterAnother}
-              primary={!tableIsReady}
-              onSaved={() => openNext(visit.id)}
-            />
+            // A table wider than the page is passed under what is open.
+            <div className="sticky left-2 max-w-[min(100%,calc(100vw-3rem))]">
+              <CellCount
+                {...props}
+                key={visit.id}
+                visit={visit}
+                drafts={drafts}
+                focused={open.afterAnother}
+                primary={!tableIsReady}
+                onSaved={() => openNext(visit.id)}
+              />
+            </div>
           ) : undefined
         }
         initialSort={{ column: "order", direction: "ascending" }}

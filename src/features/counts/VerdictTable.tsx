@@ -12,14 +12,23 @@ const VERDICT_WORDS = {
   different: "differs from what is there",
   "not-drawn": "not drawn, not used",
   empty: "no count in this row",
-  question: "asks you",
+  question: "waits for your answer",
   refused: "not taken",
 } as const satisfies Record<Verdict, string>;
 
+/** The same under a number of rows. */
+const VERDICT_PLURALS: Readonly<Record<Verdict, string>> = {
+  ...VERDICT_WORDS,
+  different: "differ from what is there",
+  question: "wait for your answer",
+};
+
 const VERDICTS = Object.keys(VERDICT_WORDS) as Verdict[];
 
-const wordOf = (verdict: Verdict, written: boolean): string =>
-  verdict === "new" && written ? "written" : VERDICT_WORDS[verdict];
+function wordOf(verdict: Verdict, written: boolean, rows = 1): string {
+  if (verdict === "new" && written) return "written";
+  return (rows === 1 ? VERDICT_WORDS : VERDICT_PLURALS)[verdict];
+}
 
 /** Day and observer come as columns of their own only where the table tells them. */
 function columnsFor({ rows, written }: ImportVerdict): DataColumn<Row>[] {
@@ -57,7 +66,7 @@ export function VerdictTable({ verdict }: { readonly verdict: ImportVerdict }) {
       <ul className="flex flex-wrap gap-x-6 gap-y-1" aria-label="Rows by verdict">
         {VERDICTS.filter((kind) => numbers[kind] > 0).map((kind) => (
           <li key={kind}>
-            <b>{formatNumber(numbers[kind])}</b> {wordOf(kind, written)}
+            <b>{formatNumber(numbers[kind])}</b> {wordOf(kind, written, numbers[kind])}
           </li>
         ))}
       </ul>

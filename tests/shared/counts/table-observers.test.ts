@@ -13,10 +13,10 @@ const cells = [1, 2, 3, 4, 5, 6].map((unit) => ({ unit, label: `A${unit}`, order
 const columns: ColumnChoice = { ...NO_COLUMNS, unit: 0, count: 1, observer: 2, date: 3 };
 
 /** One row a name, for the cells 1, 2, 3 … */
-function match(names: readonly string[], observers: readonly ObserverAnswer[] = [], date = "") {
+function match(names: readonly string[], observers: readonly ObserverAnswer[] = [], date = "", count = "4") {
   return matchTable({
     header: ["unit", "count", "who", "date"],
-    rows: names.map((name, i) => [String(i + 1), "4", name, date]),
+    rows: names.map((name, i) => [String(i + 1), count, name, date]),
     columns,
     cells,
     existing: new Map(),
@@ -109,9 +109,11 @@ describe("who counted", () => {
     expect(after.merged).toEqual([{ written: "r. holt", name: "R. Holt" }]);
   });
 
-  test("the order of the dates and the names are asked together", () => {
+  test("a word that may be a zero, the order of the dates and the names are asked together", () => {
     const got = match(["ada reeve"], [], "03/04/2031");
     expect(got.questions.map(({ kind }) => kind)).toEqual(["date-order", "observer"]);
+    const nil = match(["ada reeve"], [], "03/04/2031", "nil");
+    expect(nil.questions.map(({ kind }) => kind)).toEqual(["zero-word", "date-order", "observer"]);
   });
 
   test("an answer that names no member is a mistake of the program", () => {
