@@ -114,9 +114,9 @@ test("a single count gives a mean, and the page says that one cell tells nothing
   await waitFor(async () => {
     expect(await heading()).toContain("from a single cell: one cell tells nothing of precision");
   });
-  const ledger = [...document.querySelectorAll(".q-ledger > div")].map((one) => one.textContent);
-  expect(ledger).toContain("Mean per cell4.00");
-  expect(ledger).toContain("Standard error of the totalone pick only");
+  const valueOf = (term: string) => screen.getByText(term, { selector: "dt" }).nextElementSibling?.textContent;
+  expect(valueOf("Mean per cell")).toBe("4.00");
+  expect(valueOf("Standard error of the total")).toBe("one pick only");
   screen.getByText("There are no limits to draw; the sentence above says why.");
   expect(screen.queryByRole("img", { name: /^Total/ })).toBeNull();
 });
