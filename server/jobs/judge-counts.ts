@@ -25,7 +25,7 @@ export interface JudgedCounts extends Omit<TableVerdict, "kinds" | "notInTable">
 }
 
 /** More rows than that are counted, not listed: those that matter least are left out. */
-export const MOST_ROWS_LISTED = 5000;
+const MOST_ROWS_LISTED = 5000;
 const FIRST_ROWS = 3;
 const BY_WEIGHT: readonly Verdict[] = ["question", "refused", "different", "new", "same", "empty", "not-drawn"];
 
