@@ -45,7 +45,7 @@ export function RecordStage({ surveyId, replayTo }: RecordStageProps) {
   return (
     <ReadingPage
       title={`${formatCount(head.newest.sequence, "event")} in one unbroken chain.`}
-      lead={`Each event holds the hash of the one before and is signed. What was withdrawn, closed or amended stays readable. Times on the clock of ${times.zone}; the record file holds them in UTC.`}
+      lead={`Each event holds the hash of the one before and is signed. What was withdrawn, closed or amended stays readable. Times in ${times.zone}.`}
       margin={<RecordMargin surveyId={surveyId} replayTo={replayTo} head={head} />}
     >
       <Timeline label="Events, newest first">
