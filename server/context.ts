@@ -2,6 +2,7 @@ import type { Logger } from "pino";
 import type { Role } from "#shared/access/table.ts";
 import type { Db } from "./db/open.ts";
 import type { Jobs } from "./jobs/jobs.ts";
+import type { MailServer } from "./mail/mail-server.ts";
 
 /** What every service may reach that is not the request: tests build one by hand; nothing reads a global. */
 export interface Platform {
@@ -12,6 +13,10 @@ export interface Platform {
   /** Ed25519 key of the installation, hexadecimal. */
   readonly signingKey: string;
   readonly jobs: Jobs;
+  /** Null where no SMTP server is configured: mails are then kept to be read and forwarded. */
+  readonly mail: MailServer | null;
+  /** The address that this process answers at, for links where the owner has set none. */
+  readonly ownAddress: () => string;
   readonly log: Logger;
   readonly demo: boolean;
   readonly version: string;

@@ -62,6 +62,8 @@ async function makeDemo(env: Env, installation: Installation, file: string): Pro
         random: (bytes) => randomBytes(bytes),
         log: pino({ level: "silent" }),
         demo: true,
+        mail: null,
+        ownAddress: () => `http://${env.host}:${env.port}`,
       },
       accounts,
     );

@@ -13,8 +13,12 @@ export function readSecrets(env: Env): Secrets {
   mkdirSync(env.dataFolder, { recursive: true, mode: 0o700 }); // counts, passwords' hashes and keys: nobody else's
   return {
     sessionSecret: env.sessionSecret ?? kept(join(env.dataFolder, "session-secret")),
-    signingKey: env.signingKey ?? kept(join(env.dataFolder, "signing-key")),
+    signingKey: env.signingKey ?? kept(signingKeyFile(env)),
   };
+}
+
+export function signingKeyFile(env: Pick<Env, "dataFolder">): string {
+  return join(env.dataFolder, "signing-key");
 }
 
 function kept(file: string): string {

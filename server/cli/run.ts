@@ -10,10 +10,11 @@ const COMMANDS: Readonly<Record<string, () => Promise<Command>>> = {
   estimate: async () => (await import("./estimate.ts")).estimate,
   replay: async () => (await import("./replay.ts")).replayRecord,
   "create-owner": async () => (await import("./create-owner.ts")).createOwner,
+  backup: async () => (await import("./backup.ts")).backup,
+  restore: async () => (await import("./restore.ts")).restore,
+  check: async () => (await import("./check.ts")).check,
   demo: async () => (await import("./demo.ts")).demo,
 };
-
-const NOT_YET = ["backup", "restore", "check"];
 
 const HELP = `Quillet without the browser. Results are JSON on stdout, refusals one line on stderr.
 
@@ -23,6 +24,9 @@ const HELP = `Quillet without the browser. Results are JSON on stdout, refusals 
   estimate --counts FILE.csv --design srs-wr|srs-wor --units N [--area M2] [--level 0.95] [--estimator expansion]
   replay RECORD.json [--hash HASH ...] [--fingerprint HASH] [--area FILE]
   create-owner --email ADDRESS --name NAME [--password PASSWORD]
+  backup FILE            the whole installation in one file, also while it is served
+  restore FILE           puts a backup in the place of the database, once it is found whole
+  check                  walks database, chains and signatures, and replays every survey
   demo
 
 Exit status: 0, 1 for a refusal or a check that fails, 2 for wrong usage.
@@ -37,7 +41,6 @@ export async function run(args: readonly string[]): Promise<number> {
   }
   try {
     if (name === undefined) throw new UsageError("No command. Try: quillet --help");
-    if (NOT_YET.includes(name)) throw new UsageError(`${name}: not in this version.`);
     const load = Object.hasOwn(COMMANDS, name) ? COMMANDS[name] : undefined;
     if (load === undefined) throw new UsageError(`There is no command "${name}". Try: quillet --help`);
     const command = await load();

@@ -10,10 +10,23 @@ import * as counts from "./schema/counts.ts";
 import * as draw from "./schema/draw.ts";
 import * as field from "./schema/field.ts";
 import * as frame from "./schema/frame.ts";
+import * as installation from "./schema/installation.ts";
+import * as mail from "./schema/mail.ts";
 import * as record from "./schema/record.ts";
 import * as surveys from "./schema/surveys.ts";
 
-const schema = { ...accounts, ...surveys, ...area, ...frame, ...draw, ...field, ...counts, ...record };
+const schema = {
+  ...accounts,
+  ...surveys,
+  ...area,
+  ...frame,
+  ...draw,
+  ...field,
+  ...counts,
+  ...record,
+  ...mail,
+  ...installation,
+};
 
 export type Db = ReturnType<typeof openDb>;
 export type Tx = Parameters<Parameters<Db["transaction"]>[0]>[0];

@@ -17,6 +17,10 @@ export function findSurvey(reader: Reader, id: string): SurveyRow | undefined {
   return reader.select().from(surveys).where(eq(surveys.id, id)).get();
 }
 
+export function isArchived(reader: Reader, id: string): boolean {
+  return (findSurvey(reader, id)?.archivedAt ?? null) !== null;
+}
+
 export function surveysOf(reader: Reader, accountId: string): SurveyRow[] {
   return reader
     .selectDistinct({ survey: surveys })
@@ -27,6 +31,11 @@ export function surveysOf(reader: Reader, accountId: string): SurveyRow[] {
     .orderBy(desc(surveys.createdAt))
     .all()
     .map((row) => row.survey);
+}
+
+/** Every survey, archived ones too, oldest first. */
+export function allSurveys(reader: Reader): SurveyRow[] {
+  return reader.select().from(surveys).orderBy(asc(surveys.createdAt), asc(surveys.id)).all();
 }
 
 /** The surveys in which this account holds no role, newest first. */

@@ -8,9 +8,11 @@ import { Problem } from "#shared/problem.ts";
 import type { Context, Platform, Visitor } from "../context.ts";
 import { isOwnedParam, surveyOf } from "../db/belongs.ts";
 import { standingOf } from "../db/members.ts";
+import { isArchived } from "../db/surveys.ts";
 import { parse } from "./parse.ts";
 import { type FileAnswer, send } from "./send.ts";
 import type { Sessions } from "./session.ts";
+import { seenVersion, versionOf } from "./version.ts";
 
 type Schema = z.core.$ZodType;
 
@@ -29,6 +31,8 @@ interface Input<P extends Schema, Q extends Schema, B extends Schema> {
   readonly session: { start(accountId: string): Promise<void>; end(): Promise<void> };
   /** Aborts when the caller has gone. */
   readonly signal: AbortSignal;
+  /** For versioned contracts: refuses unless this is the version that the caller saw. To be called inside the transaction. */
+  readonly expectSeen: (current: unknown) => void;
 }
 
 type Returned<A extends Answer> = A extends { kind: "json"; schema: infer R extends Schema } ? z.input<R> : FileAnswer;
@@ -81,8 +85,10 @@ export function mountOn(router: Router, platform: Platform, sessions: Sessions):
         start: (accountId: string) => sessions.start(req, res, accountId),
         end: () => sessions.end(req, res),
       };
-      const input = { params, query, body, file, session, signal: gone.signal };
+      const expectSeen = seenVersion(contract, req);
+      const input = { params, query, body, file, session, signal: gone.signal, expectSeen };
       const result = await (handler as (ctx: unknown, input: unknown) => unknown)(ctx, input);
+      if (contract.versioned === true) res.setHeader("ETag", versionOf(contract.answer, result));
       await send(res, contract.answer, result);
     });
   };
@@ -129,12 +135,22 @@ async function memberFor(contract: Contract, platform: Platform, sessions: Sessi
   if (reached === "none") {
     throw new Problem("not-allowed", `As ${roles.join(" and ")} of this survey you can't do this: ask a planner.`);
   }
+  expectOpen(contract, platform, surveyId);
   for (const [name, value] of Object.entries(req.params)) {
     if (isOwnedParam(name) && surveyOf(platform.db, name, String(value)) !== surveyId) {
       throw new Problem("not-found", "It may belong to another survey: go back to the survey and choose again.");
     }
   }
   return { ...visitor, surveyId, memberId, roles, reach: reached } satisfies Context;
+}
+
+/** What is archived can be read, and taken out of the archive. */
+function expectOpen(contract: Contract, platform: Platform, surveyId: string): void {
+  if (contract.method === "GET" || contract.whenArchived === true || !isArchived(platform.db, surveyId)) return;
+  throw new Problem(
+    "survey-archived",
+    "It can be read and takes nothing new. A planner can take it out of the archive.",
+  );
 }
 
 function fileReader(upload: { field: string; maxBytes: number }): RequestHandler {

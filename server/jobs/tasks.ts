@@ -1,6 +1,7 @@
 import type { CrsChoice } from "#shared/api/area.ts";
 import type { FrameSpec, FrameSummary } from "#shared/api/frame.ts";
 import type { ImportReport } from "#shared/area/report.ts";
+import type { BackupTask } from "../services/back-up.ts";
 import type { CountsTask, JudgedCounts } from "./judge-counts.ts";
 import type { EntriesTask, PlacedEntry } from "./place-entries.ts";
 import type { WaypointsTask, WrittenWaypoints } from "./write-waypoints.ts";
@@ -23,6 +24,7 @@ export interface JobTasks {
     readonly salt: string;
   };
   "place-entries": EntriesTask;
+  "back-up": BackupTask;
   "write-waypoints": WaypointsTask;
   "judge-counts": CountsTask;
 }
@@ -55,6 +57,7 @@ export interface JobResults {
     readonly summary: FrameSummary;
   };
   "place-entries": PlacedEntry[];
+  "back-up": number;
   "write-waypoints": WrittenWaypoints;
   "judge-counts": JudgedCounts;
 }

@@ -1,4 +1,5 @@
 import { Problem } from "#shared/problem.ts";
+import { backUp } from "../services/back-up.ts";
 import type { JobAnswer } from "./jobs.ts";
 import { searchEpsg } from "./epsg.ts";
 import { judgeCountsTask } from "./judge-counts.ts";
@@ -17,6 +18,7 @@ const work: Work = {
   "search-crs": ({ text, projectedOnly }) => searchEpsg(text, 20, { projectedOnly }),
   "seal-frame": sealFrameTask,
   "place-entries": placeEntries,
+  "back-up": backUp,
   "write-waypoints": writeWaypoints,
   "judge-counts": judgeCountsTask,
 };

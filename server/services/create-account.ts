@@ -25,7 +25,15 @@ export async function createAccount(
     }
     const id = newId(platform);
     const createdAt = platform.now().toISOString();
-    insertAccount(tx, { id, email, name: wanted.name.trim(), passwordHash, isOwner: wanted.isOwner, createdAt });
+    insertAccount(tx, {
+      id,
+      email,
+      name: wanted.name.trim(),
+      passwordHash,
+      isOwner: wanted.isOwner,
+      createdAt,
+      closedAt: null,
+    });
     return id;
   });
 }

@@ -31,6 +31,13 @@ export interface Contract<
   readonly body: B;
   readonly answer: A;
   readonly upload?: Upload;
+  /**
+   * Two people may edit it: a GET answers with an ETag, any other method needs If-Match with the version that was seen, and is
+   * refused with the current one where that is another.
+   */
+  readonly versioned?: true;
+  /** May also be done to a survey that is archived; reading always may. */
+  readonly whenArchived?: true;
 }
 
 export function json<R extends z.core.$ZodType>(schema: R): { readonly kind: "json"; readonly schema: R } {

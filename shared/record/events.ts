@@ -28,6 +28,26 @@ export const countPayload = z.object({
 });
 export type CountPayload = z.infer<typeof countPayload>;
 
+/** The settings of a survey whole, as they were before and after a change. */
+export const settingsPayload = z.object({
+  name: z.string(),
+  timeZone: z.string(),
+  level: z.string(),
+  sensitivity: z.string(),
+  safetyNotes: z.string(),
+  targets: z.array(
+    z.object({
+      id,
+      singular: z.string(),
+      plural: z.string(),
+      countingRule: z.string(),
+      wholeNumbers: z.boolean(),
+    }),
+  ),
+  season: z.object({ id, name: z.string(), startsOn: z.nullable(z.string()), endsOn: z.nullable(z.string()) }),
+});
+export type SettingsPayload = z.infer<typeof settingsPayload>;
+
 export const EVENT_PAYLOADS = {
   "survey-created": z.object({
     version: v1,
@@ -44,6 +64,14 @@ export const EVENT_PAYLOADS = {
     level: z.string(),
   }),
   "member-added": z.object({ version: v1, member: id, name: z.string(), role: z.string() }),
+  /** Somebody no longer holds a role; after the last of them they are no longer in the survey. */
+  "role-ended": z.object({ version: v1, member: id, name: z.string(), role: z.string() }),
+  "member-renamed": z.object({ version: v1, member: id, before: z.string(), after: z.string() }),
+  "settings-changed": z.object({ version: v1, before: settingsPayload, after: settingsPayload }),
+  "survey-archived": z.object({ version: v1 }),
+  "survey-unarchived": z.object({ version: v1 }),
+  /** This survey was begun as a copy of another's settings and boundary, whose record then ended with that hash. */
+  "survey-copied": z.object({ version: v1, from: id, newestSha256: sha256 }),
   "area-imported": z.object({
     version: v1,
     areaId: id,

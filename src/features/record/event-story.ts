@@ -1,6 +1,12 @@
 import type { RecordEvent } from "#shared/api/record.ts";
 import { STATE_WORDS } from "#shared/counts/count.ts";
-import { EVENT_PAYLOADS, type EventKind, type EventPayload, isEventKind } from "#shared/record/events.ts";
+import {
+  EVENT_PAYLOADS,
+  type EventKind,
+  type EventPayload,
+  isEventKind,
+  type SettingsPayload,
+} from "#shared/record/events.ts";
 import { formatAsIs, formatCount, formatHash, formatArea, formatList, formatSeed } from "../../components/ui/format.ts";
 import type { TimelineMark } from "../../components/ui/TimelineEntry.tsx";
 
@@ -34,6 +40,33 @@ function sentences(...parts: readonly string[]): string {
   return parts.filter((part) => part !== "").join(" ");
 }
 
+const SETTING_WORDS = {
+  name: "name",
+  timeZone: "time zone",
+  level: "confidence level",
+  sensitivity: "sensitivity",
+  safetyNotes: "safety notes",
+  targets: "what is counted",
+  season: "season",
+} as const;
+
+type Setting = keyof typeof SETTING_WORDS;
+
+function settingsChanged(before: SettingsPayload, after: SettingsPayload): string[] {
+  const names = Object.keys(SETTING_WORDS) as Setting[];
+  return names
+    .filter((name) => JSON.stringify(before[name]) !== JSON.stringify(after[name]))
+    .map((name) => SETTING_WORDS[name]);
+}
+
+/** Old and new of what can be said in a line. */
+function wordsChanged(before: SettingsPayload, after: SettingsPayload): string[] {
+  const short = ["name", "timeZone", "level", "sensitivity"] as const;
+  return short
+    .filter((name) => before[name] !== after[name])
+    .map((name) => `${quoted(before[name])} became ${quoted(after[name])}.`);
+}
+
 const TELLERS: Tellers = {
   "survey-created": (p, by) =>
     story(
@@ -41,6 +74,21 @@ const TELLERS: Tellers = {
       `${by} counts ${p.target.plural}, season ${p.season.name}. ${sentences(quoted(p.target.countingRule))}`.trim(),
     ),
   "member-added": (p, by) => story(`${p.name} joined as ${ROLE_SAID[p.role] ?? p.role}`, `Added by ${by}.`),
+  "role-ended": (p, by) => story(`${p.name} is no longer ${ROLE_SAID[p.role] ?? p.role}`, `By ${by}.`, "withdrawn"),
+  "member-renamed": (p) => story(`${p.before} is now called ${p.after}`, ""),
+  "settings-changed": (p, by) =>
+    story(
+      `The settings were changed: ${formatList(settingsChanged(p.before, p.after))}`,
+      sentences(...wordsChanged(p.before, p.after), `By ${by}.`),
+      "amended",
+    ),
+  "survey-archived": (_, by) => story("The survey was archived", `By ${by}. It takes nothing new.`),
+  "survey-unarchived": (_, by) => story("The survey was taken out of the archive", `By ${by}.`),
+  "survey-copied": (p, by) =>
+    story(
+      "It was begun as a copy of another survey",
+      `By ${by}, from one whose record ended with ${formatHash(p.newestSha256)}.`,
+    ),
   "area-imported": (p, by) =>
     story(
       `The study area was kept: ${formatArea(p.geodesicAreaM2)}`,

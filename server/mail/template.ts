@@ -1,0 +1,36 @@
+/** What a template makes: a mail in both its forms. */
+export interface Written {
+  readonly subject: string;
+  readonly text: string;
+  readonly html: string;
+}
+
+/** A paragraph of text, or a link on a line of its own, or a line to be copied such as a hash. */
+export type Block = string | { readonly link: string } | { readonly copy: string };
+
+/** Writes a mail in plain text and in plain HTML from the same blocks: no pictures, no styles that could be lost. */
+export function write(subject: string, blocks: readonly Block[]): Written {
+  const one = subject.replace(/\s+/g, " ").trim();
+  return {
+    subject: one,
+    text: `${blocks.map(asText).join("\n\n")}\n`,
+    html: `<!doctype html><html><head><meta charset="utf-8"><title>${escaped(one)}</title></head><body>${blocks.map(asHtml).join("")}</body></html>`,
+  };
+}
+
+function asText(block: Block): string {
+  if (typeof block === "string") return block;
+  return "link" in block ? block.link : block.copy;
+}
+
+function asHtml(block: Block): string {
+  if (typeof block === "string") return `<p>${escaped(block).replaceAll("\n", "<br>")}</p>`;
+  if ("copy" in block) return `<p><code>${escaped(block.copy)}</code></p>`;
+  return `<p><a href="${escaped(block.link)}">${escaped(block.link)}</a></p>`;
+}
+
+const ENTITIES: Readonly<Record<string, string>> = { "&": "&amp;", "<": "&lt;", ">": "&gt;", '"': "&quot;" };
+
+function escaped(text: string): string {
+  return text.replace(/[&<>"]/g, (character) => ENTITIES[character] ?? character);
+}
