@@ -54,13 +54,13 @@ describe("a backup", () => {
   });
 
   test("taken under write load it holds one moment, whole, whose chain the live one goes on from", async () => {
-    let writing = true;
-    const load = (async () => {
-      for (let n = 0; writing; n += 1) {
+    const load = { goesOn: true };
+    const written = (async () => {
+      for (let n = 0; load.goesOn; n += 1) {
         await team.planner.call(createSurvey, { body: { ...NEW_SURVEY, name: `written meanwhile ${n}` } });
       }
     })();
-    const { databaseFile } = { databaseFile: server.platform.db.$client.name };
+    const databaseFile = server.platform.db.$client.name;
     const files = [];
     for (const name of ["load-1.backup", "load-2.backup", "load-3.backup"]) {
       const file = join(folder, name);
@@ -68,8 +68,8 @@ describe("a backup", () => {
       await server.platform.jobs.run("back-up", { databaseFile, file, signingKey, madeAt: MADE_AT });
       files.push(file);
     }
-    writing = false;
-    await load;
+    load.goesOn = false;
+    await written;
     const live = new Map(checkInstallation(server.platform).surveys.map((survey) => [survey.id, survey]));
     for (const [n, file] of files.entries()) {
       const { check } = restoreBackup(file, place(`load-${n}`));

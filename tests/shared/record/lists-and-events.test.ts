@@ -164,3 +164,65 @@ test("a cell that is given twice is named", () => {
     difference: { where: "cells given to somebody", found: "2", expected: "1" },
   });
 });
+
+/** An act after all others. */
+function act({ acts }: Draft, kind: Act["kind"], payload: Record<string, unknown>): void {
+  acts.push({ at: "2031-05-28T08:00:00.000Z", member: PLANNER, kind, payload: { version: 1, ...payload } });
+}
+
+/** The settings as the good record began with them, and as they are after a change that every list follows. */
+function changeSettings(draft: Draft): { before: object; after: object } {
+  const { survey } = draft.record;
+  const [season] = survey.seasons;
+  const of = (name: string, level: string, startsOn: string | null) => ({
+    ...{ name, timeZone: survey.timeZone, level, sensitivity: "open", safetyNotes: "", targets: survey.targets },
+    season: { ...found(season), startsOn },
+  });
+  const before = of("Tolve Field", "0.95", null);
+  const after = of("Tolve Meadow", "0.9", "2031-04-01");
+  Object.assign(survey, { name: "Tolve Meadow", level: "0.9" });
+  found(season).startsOn = "2031-04-01";
+  return { before, after };
+}
+
+test("settings that were changed by an event pass, and how often is told", () => {
+  const report = replay(goodRecord((draft) => act(draft, "settings-changed", changeSettings(draft))));
+  expect(report.checks.filter(({ outcome }) => outcome === "failed")).toEqual([]);
+  const told = report.checks.find(({ id }) => id === "survey")?.detail;
+  expect(told).toBe("Tolve Meadow; burrows; 3 people; settings changed 1 time");
+});
+
+test("a change of the settings that begins with others than those in force is named", () => {
+  const check = only((draft) => {
+    const { before, after } = changeSettings(draft);
+    act(draft, "settings-changed", { before: { ...before, level: "0.8" }, after });
+  });
+  expect(check).toMatchObject({ id: "survey", difference: { found: '"0.8"', expected: '"0.95"' } });
+  expect(check.difference?.where).toMatch(/^settings before event \d+, level$/);
+});
+
+test("somebody whose role was ended has it no more, and is still named", () => {
+  const ended = { member: PLANNER, name: "Paula Planner", role: "planner" };
+  const kept = only((draft) => act(draft, "role-ended", ended));
+  expect(kept).toMatchObject({ id: "survey", difference: { where: "Paula Planner, roles", found: '"planner"' } });
+  const report = replay(
+    goodRecord((draft) => {
+      act(draft, "role-ended", ended);
+      found(draft.record.people.find(({ member }) => member === PLANNER)).roles = [];
+    }),
+  );
+  expect(report.summary.failed).toBe(0);
+});
+
+test("a name that was changed by an event is the one that holds", () => {
+  const renamed = { member: PLANNER, before: "Paula Planner", after: "Paula Pym" };
+  const check = only((draft) => act(draft, "member-renamed", renamed));
+  expect(check.difference).toMatchObject({ found: '"Paula Planner"', expected: '"Paula Pym"' });
+  const report = replay(
+    goodRecord((draft) => {
+      act(draft, "member-renamed", renamed);
+      found(draft.record.people.find(({ member }) => member === PLANNER)).name = "Paula Pym";
+    }),
+  );
+  expect(report.summary.failed).toBe(0);
+});
