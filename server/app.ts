@@ -5,6 +5,7 @@ import helmet from "helmet";
 import { pinoHttp } from "pino-http";
 import { Problem } from "#shared/problem.ts";
 import type { Platform } from "./context.ts";
+import { baseMapSources } from "./http/base-map-sources.ts";
 import { mountOn } from "./http/mount.ts";
 import { sameOriginOnly } from "./http/origin.ts";
 import { problems } from "./http/problems.ts";
@@ -34,7 +35,7 @@ export function createApp(platform: Platform, options: AppOptions): Express {
       contentSecurityPolicy: {
         directives: {
           "default-src": ["'self'"],
-          "img-src": ["'self'", "data:", "blob:"],
+          "img-src": ["'self'", "data:", "blob:", () => baseMapSources(platform.db)],
           "style-src": ["'self'", "'unsafe-inline'"],
           "worker-src": ["'self'", "blob:"],
           "upgrade-insecure-requests": null,

@@ -4,6 +4,13 @@ import type { Db } from "./db/open.ts";
 import type { Jobs } from "./jobs/jobs.ts";
 import type { MailServer } from "./mail/mail-server.ts";
 
+/** The daily copies of an installation. */
+export interface DailyCopies {
+  readonly folder: string;
+  /** Why the last attempt failed; null after one that did not. */
+  lastError: string | null;
+}
+
 /** What every service may reach that is not the request: tests build one by hand; nothing reads a global. */
 export interface Platform {
   readonly db: Db;
@@ -17,6 +24,8 @@ export interface Platform {
   readonly mail: MailServer | null;
   /** The address that this process answers at, for links where the owner has set none. */
   readonly ownAddress: () => string;
+  /** Null where no daily copies are made, as in the demo. */
+  readonly dailyCopies: DailyCopies | null;
   readonly log: Logger;
   readonly demo: boolean;
   readonly version: string;

@@ -63,6 +63,7 @@ async function makeDemo(env: Env, installation: Installation, file: string): Pro
         log: pino({ level: "silent" }),
         demo: true,
         mail: null,
+        dailyCopies: null,
         ownAddress: () => `http://${env.host}:${env.port}`,
       },
       accounts,

@@ -17,7 +17,9 @@ import { projectRoot, version } from "./project.ts";
 import { type Round, startRounds } from "./rounds.ts";
 import { readSecrets } from "./secrets.ts";
 import { createAccount } from "./services/create-account.ts";
-import { dailyBackup } from "./services/daily-backup.ts";
+import { sendQueue } from "./mail/send-queue.ts";
+import { dailyBackupRound } from "./services/daily-backup.ts";
+import { tellCountDays } from "./services/tell-count-days.ts";
 
 /** Environment, database, server, and an orderly stop: open, listen, print where, close. */
 async function main(): Promise<void> {
@@ -34,6 +36,7 @@ async function main(): Promise<void> {
     jobs,
     mail: env.smtp && openSmtp(env.smtp.url, env.smtp.from),
     ownAddress: () => ownAddress,
+    dailyCopies: env.demo ? null : { folder: join(env.dataFolder, "backups"), lastError: null },
     now: () => new Date(),
     random: (bytes) => randomBytes(bytes),
     signingKey: secrets.signingKey,
@@ -84,12 +87,17 @@ async function main(): Promise<void> {
 const MINUTE_MS = 60_000;
 
 /** What this process does beside answering; the demo makes no daily copies. */
-function roundsOf(platform: Platform, { demo, databaseFile, dataFolder }: Env): Round[] {
-  if (demo) return [];
-  const folder = join(dataFolder, "backups");
-  return [
-    { name: "daily backup", everyMs: 10 * MINUTE_MS, work: () => dailyBackup(platform, { databaseFile, folder }) },
+function roundsOf(platform: Platform, { databaseFile }: Env): Round[] {
+  const rounds: Round[] = [
+    { name: "mail", everyMs: MINUTE_MS / 4, work: () => sendQueue(platform) },
+    { name: "days with counts", everyMs: 5 * MINUTE_MS, work: () => tellCountDays(platform) },
   ];
+  const copies = platform.dailyCopies;
+  if (copies) {
+    const work = () => dailyBackupRound(platform, copies, databaseFile);
+    rounds.push({ name: "daily backup", everyMs: 10 * MINUTE_MS, work });
+  }
+  return rounds;
 }
 
 function say(line: string): void {

@@ -27,6 +27,7 @@ export const PROBLEMS = {
   "password-common": { status: 422, title: "This password is one of the first that are tried" },
   "password-wrong": { status: 422, title: "This is not the present password" },
   "link-ended": { status: 410, title: "This link no longer works" },
+  "mail-not-sendable": { status: 409, title: "This mail cannot be sent again" },
   "last-owner": { status: 409, title: "An installation needs an owner" },
   // surveys
   "survey-not-found": { status: 404, title: "There is no such survey here" },

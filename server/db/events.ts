@@ -1,4 +1,4 @@
-import { and, desc, eq, inArray, lt } from "drizzle-orm";
+import { and, desc, eq, gte, inArray, lt } from "drizzle-orm";
 import { BEFORE_THE_FIRST, canonicalText, type Envelope, envelopeSha256, payloadSha256 } from "#shared/record/chain.ts";
 import { EVENT_PAYLOADS, type EventKind, type EventPayload } from "#shared/record/events.ts";
 import { signHash } from "#shared/record/sign.ts";
@@ -7,7 +7,8 @@ import { events } from "./schema/record.ts";
 
 export type EventRow = typeof events.$inferSelect;
 
-interface Act<K extends EventKind> {
+/** What somebody did, before it is hashed. */
+export interface Act<K extends EventKind> {
   readonly surveyId: string;
   readonly at: string;
   readonly memberId: string;
@@ -78,6 +79,19 @@ export function eventsBefore(reader: Reader, surveyId: string, before: number | 
 
 export function allEvents(reader: Reader, surveyId: string): EventRow[] {
   return reader.select().from(events).where(eq(events.surveyId, surveyId)).orderBy(events.sequence).all();
+}
+
+/** An event without what it tells. */
+export type EventStep = Pick<EventRow, "sequence" | "at" | "kind" | "sha256">;
+
+/** From a time on, in order. */
+export function eventStepsSince(reader: Reader, surveyId: string, since: string): EventStep[] {
+  return reader
+    .select({ sequence: events.sequence, at: events.at, kind: events.kind, sha256: events.sha256 })
+    .from(events)
+    .where(and(eq(events.surveyId, surveyId), gte(events.at, since)))
+    .orderBy(events.sequence)
+    .all();
 }
 
 export function hasEvent(reader: Reader, surveyId: string, kinds: readonly EventKind[]): boolean {

@@ -6,7 +6,16 @@ export interface Written {
 }
 
 /** A paragraph of text, or a link on a line of its own, or a line to be copied such as a hash. */
-export type Block = string | { readonly link: string } | { readonly copy: string };
+export type Block = string | Link | { readonly copy: string };
+
+interface Link {
+  readonly link: string;
+}
+
+/** An address on a line of its own. */
+export function linkLine(address: string): Link {
+  return { link: address };
+}
 
 /** Writes a mail in plain text and in plain HTML from the same blocks: no pictures, no styles that could be lost. */
 export function write(subject: string, blocks: readonly Block[]): Written {
@@ -16,6 +25,14 @@ export function write(subject: string, blocks: readonly Block[]): Written {
     text: `${blocks.map(asText).join("\n\n")}\n`,
     html: `<!doctype html><html><head><meta charset="utf-8"><title>${escaped(one)}</title></head><body>${blocks.map(asHtml).join("")}</body></html>`,
   };
+}
+
+/** What somebody typed, as words in a line: without line breaks, and without marks that turn the text around them. */
+export function asWords(typed: string): string {
+  return typed
+    .replace(/[\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069]/g, "")
+    .replace(/[\p{Cc}\s]+/gu, " ")
+    .trim();
 }
 
 function asText(block: Block): string {

@@ -1,6 +1,9 @@
 import type { Account, Session } from "#shared/api/accounts.ts";
 import type { Platform } from "../context.ts";
+import { installationRow } from "../db/installation.ts";
+import { presentBaseMap } from "./installation.ts";
 
 export function presentSession(platform: Platform, account: Account | null): Session {
-  return { account, demo: platform.demo, version: platform.version };
+  const baseMap = account && presentBaseMap(installationRow(platform.db));
+  return { account, demo: platform.demo, version: platform.version, baseMap };
 }

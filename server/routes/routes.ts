@@ -6,12 +6,14 @@ import { countRoutes } from "./counts.ts";
 import { drawRoutes } from "./draw.ts";
 import { estimateRoutes } from "./estimate.ts";
 import { fieldRoutes } from "./field.ts";
+import { installationRoutes } from "./installation.ts";
 import { recordRoutes } from "./record.ts";
 import { surveyRoutes } from "./surveys.ts";
 
 /** Every route there is, in the order of the layer words. */
 export function routes(mount: Mount): void {
   accountRoutes(mount);
+  installationRoutes(mount);
   surveyRoutes(mount);
   areaRoutes(mount);
   frameRoutes(mount);

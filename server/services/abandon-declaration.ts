@@ -1,10 +1,10 @@
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { insertAbandoned } from "../db/draws.ts";
-import { appendEvent } from "../db/events.ts";
 import { writeTx } from "../db/open.ts";
 import { actingMember } from "./acting-member.ts";
 import { neededDeclaration } from "./read-draws.ts";
+import { recordEvent } from "./record-event.ts";
 
 /** Ends a declaration without a draw, with a reason; it stays on record, and its seed where there is one. */
 export function abandonDeclaration(ctx: Context, declarationId: string, reason: string): void {
@@ -19,7 +19,7 @@ export function abandonDeclaration(ctx: Context, declarationId: string, reason: 
     }
     const at = ctx.now().toISOString();
     insertAbandoned(tx, { declarationId, reason, abandonedBy: memberId, abandonedAt: at });
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

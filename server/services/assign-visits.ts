@@ -1,12 +1,12 @@
 import { Problem } from "#shared/problem.ts";
 import type { Role } from "#shared/access/table.ts";
 import type { Context } from "../context.ts";
-import { appendEvent } from "../db/events.ts";
 import { membersOf } from "../db/members.ts";
 import { type Reader, writeTx } from "../db/open.ts";
 import { assign, unassign, type VisitRow } from "../db/visits.ts";
 import { actingMember } from "./acting-member.ts";
 import { visitHere } from "./keep-entry.ts";
+import { recordEvent } from "./record-event.ts";
 
 interface Wanted {
   readonly visitIds: readonly string[];
@@ -35,7 +35,7 @@ export function assignVisits(ctx: Context, wanted: Wanted): number {
       for (const visit of visits) assign(tx, { visitId: visit.id, memberId, day, assignedAt: at });
     }
     for (const [frameId, units] of unitsByFrame(visits)) {
-      appendEvent(tx, ctx, {
+      recordEvent(tx, ctx, {
         surveyId: ctx.surveyId,
         at,
         memberId: acting,

@@ -4,7 +4,6 @@ import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { type CountRow, entriesInForce, entryInForce } from "../db/counts.ts";
 import type { EntryRow } from "../db/draws.ts";
-import { appendEvent } from "../db/events.ts";
 import { type Reader, type Tx, writeTx } from "../db/open.ts";
 import { insertPickAct, pickActsOf, type VisitRow, visitsOn } from "../db/visits.ts";
 import { actingMember } from "./acting-member.ts";
@@ -13,6 +12,7 @@ import { lengthenList } from "./lengthen-list.ts";
 import { bringsValue, cellName, inWords, keepEntry, keptBefore, visitHere } from "./keep-entry.ts";
 import { openVisitsFor } from "./open-visits-for.ts";
 import { seasonInUse } from "./read-visits.ts";
+import { recordEvent } from "./record-event.ts";
 
 interface Wanted {
   /** Made by the client: the id of the count entry that says why. */
@@ -70,7 +70,7 @@ export function closePick(ctx: Context, visitId: string, wanted: Wanted): Closin
     const closing = closingOf(tx, ctx, visit, pickInUse(tx, ctx, visit).list);
     const opened = closing.opened.map(({ entry }) => entry);
     openVisitsFor(tx, ctx, { seasonId: visit.seasonId, frameId: visit.frameVersionId, at }, opened);
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

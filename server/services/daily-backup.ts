@@ -1,6 +1,6 @@
 import { existsSync, mkdirSync, readdirSync, rmSync, statSync } from "node:fs";
 import { join } from "node:path";
-import type { Platform } from "../context.ts";
+import type { DailyCopies, Platform } from "../context.ts";
 
 /** Days of which each has its copy, and months of which the first copy is kept. */
 export const DAYS_KEPT = 14;
@@ -25,6 +25,21 @@ export function copiesIn(folder: string): Copy[] {
       const { size, mtime } = statSync(join(folder, name));
       return { name, bytes: size, at: mtime.toISOString() };
     });
+}
+
+/** One round of the daily copies: what goes wrong is kept for the owner to see. */
+export async function dailyBackupRound(
+  platform: Pick<Platform, "now" | "jobs" | "signingKey">,
+  copies: DailyCopies,
+  databaseFile: string,
+): Promise<void> {
+  try {
+    await dailyBackup(platform, { databaseFile, folder: copies.folder });
+    copies.lastError = null;
+  } catch (error) {
+    copies.lastError = `${platform.now().toISOString()}: ${error instanceof Error ? error.message : String(error)}`;
+    throw error;
+  }
 }
 
 /** Makes the copy of a day (UTC) where there is none yet, then deletes those that are no longer kept. */

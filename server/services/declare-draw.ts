@@ -6,12 +6,12 @@ import { Problem } from "#shared/problem.ts";
 import { canonicalText } from "#shared/record/chain.ts";
 import type { Context } from "../context.ts";
 import { insertDeclaration, liveDraw, openDeclaration } from "../db/draws.ts";
-import { appendEvent } from "../db/events.ts";
 import { findFrameHead } from "../db/frames.ts";
 import { type Reader, writeTx } from "../db/open.ts";
 import { currentSeason } from "../db/surveys.ts";
 import { actingMember } from "./acting-member.ts";
 import { newId } from "./new-id.ts";
+import { recordEvent } from "./record-event.ts";
 import { redrawReason } from "./redraw-reason.ts";
 
 interface Wanted {
@@ -64,7 +64,7 @@ export function declareDraw(ctx: Context, wanted: Wanted): string {
       declaredBy: memberId,
       declaredAt: at,
     });
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

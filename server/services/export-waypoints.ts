@@ -2,7 +2,7 @@ import { type NameScheme, waypointNames } from "#shared/field/waypoint-names.ts"
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { findPlane } from "../db/areas.ts";
-import { appendEvent, newestEvent } from "../db/events.ts";
+import { newestEvent } from "../db/events.ts";
 import { findFrameHead, specOf } from "../db/frames.ts";
 import { writeTx } from "../db/open.ts";
 import { currentSeason, findSurvey } from "../db/surveys.ts";
@@ -10,6 +10,7 @@ import { type WaypointCell, type WaypointsTask, type WrittenWaypoints } from "..
 import { actingMember } from "./acting-member.ts";
 import { fileNamePart } from "./file-name-part.ts";
 import { listVisits, type VisitView } from "./read-visits.ts";
+import { recordEvent } from "./record-event.ts";
 
 interface Wanted {
   readonly format: "gpx" | "csv";
@@ -82,7 +83,7 @@ function putOnRecord(
 ): boolean {
   return writeTx(ctx.db, (tx) => {
     if (newestEvent(tx, ctx.surveyId)?.sha256 !== newest?.sha256) return false;
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId: actingMember(ctx),

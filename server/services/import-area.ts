@@ -1,9 +1,9 @@
 import type { Context } from "../context.ts";
 import { type AreaHead, areasOf, findAreaHead, insertArea } from "../db/areas.ts";
-import { appendEvent } from "../db/events.ts";
 import { writeTx } from "../db/open.ts";
 import { actingMember } from "./acting-member.ts";
 import { newId } from "./new-id.ts";
+import { recordEvent } from "./record-event.ts";
 
 interface AreaFile {
   readonly name: string;
@@ -46,7 +46,7 @@ export async function importArea(
       importedBy: memberId,
       createdAt: at,
     });
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

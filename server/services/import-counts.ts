@@ -6,7 +6,6 @@ import type { Observer, ObserverAnswer } from "#shared/counts/table-observers.ts
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { importsOf, insertImport } from "../db/counts.ts";
-import { appendEvent } from "../db/events.ts";
 import { memberNames } from "../db/members.ts";
 import { type Tx, writeTx } from "../db/open.ts";
 import { currentSeason, findSurvey, type SeasonRow, type TargetRow, targetsOf } from "../db/surveys.ts";
@@ -17,6 +16,7 @@ import { inWords, type Said } from "./keep-entry.ts";
 import { newId } from "./new-id.ts";
 import { newUuid } from "./new-uuid.ts";
 import { listVisits, seasonInUse, type VisitView } from "./read-visits.ts";
+import { recordEvent } from "./record-event.ts";
 
 interface Wanted {
   readonly targetId: string;
@@ -176,7 +176,7 @@ function writeRows(
     const count = { id: newUuid(ctx), visitId, targetId: target.id, said: said(row), note: row.note, ...made };
     keepFirstCount(tx, ctx, count, importId);
   }
-  appendEvent(tx, ctx, {
+  recordEvent(tx, ctx, {
     surveyId: ctx.surveyId,
     at,
     memberId,

@@ -2,11 +2,11 @@ import { isClosing, type VisitState } from "#shared/field/states.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { type CountRow, findEntry, insertEntry } from "../db/counts.ts";
-import { appendEvent } from "../db/events.ts";
 import type { Reader, Tx } from "../db/open.ts";
 import { type TargetRow, targetsOf } from "../db/surveys.ts";
 import { findVisit, type VisitRow } from "../db/visits.ts";
 import { framePlaces } from "./frame-places.ts";
+import { recordEvent } from "./record-event.ts";
 
 /** What somebody says of a cell: a number when it was counted, a state when it was not. */
 export type Said =
@@ -72,7 +72,7 @@ export function keptBefore(reader: Reader, row: CountRow): CountRow | undefined 
 /** Writes an entry and its event. */
 export function keepEntry(tx: Tx, ctx: Context, visit: VisitRow, row: CountRow): void {
   insertEntry(tx, row);
-  appendEvent(tx, ctx, {
+  recordEvent(tx, ctx, {
     surveyId: ctx.surveyId,
     at: row.enteredAt,
     memberId: row.enteredBy,

@@ -2,12 +2,12 @@ import { Problem } from "#shared/problem.ts";
 import { canonicalSha256 } from "#shared/record/chain.ts";
 import type { Context } from "../context.ts";
 import { insertKeptEstimate, type KeptEstimateRow, keptEstimatesOf } from "../db/estimates.ts";
-import { appendEvent } from "../db/events.ts";
 import { memberNames } from "../db/members.ts";
 import { writeTx } from "../db/open.ts";
 import { actingMember } from "./acting-member.ts";
 import { newId } from "./new-id.ts";
 import { readEstimate } from "./read-estimate.ts";
+import { recordEvent } from "./record-event.ts";
 
 export interface KeptEstimateView {
   readonly row: KeptEstimateRow;
@@ -44,7 +44,7 @@ export function keepEstimate(ctx: Context, seenSha256: string): KeptEstimateView
       keptAt: at,
     };
     insertKeptEstimate(tx, row);
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

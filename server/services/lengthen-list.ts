@@ -3,13 +3,13 @@ import { entriesSha256 } from "#shared/draw/entries-hash.ts";
 import { entriesInUse } from "#shared/field/in-use.ts";
 import type { Context } from "../context.ts";
 import { insertEntries } from "../db/draws.ts";
-import { appendEvent } from "../db/events.ts";
 import { findFrame } from "../db/frames.ts";
 import type { Tx } from "../db/open.ts";
 import { type PlacedEntry, placeEntries } from "../jobs/place-entries.ts";
 import { actingMember } from "./acting-member.ts";
 import type { StratumInUse } from "./draw-in-use.ts";
 import { declaredText, neededDeclaration, neededDraw } from "./read-draws.ts";
+import { recordEvent } from "./record-event.ts";
 
 /**
  * Where an act asks for more entries than a list has, lengthens the list by the same stream (rule R6), by as many as are
@@ -25,7 +25,7 @@ export function lengthenList(tx: Tx, ctx: Context, drawId: string, list: Stratum
     tx,
     entries.slice(before).map((entry) => ({ ...entry, drawId })),
   );
-  appendEvent(tx, ctx, {
+  recordEvent(tx, ctx, {
     surveyId: ctx.surveyId,
     at,
     memberId: actingMember(ctx),

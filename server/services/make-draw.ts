@@ -10,7 +10,6 @@ import {
   nextDrawNumber,
   type SeedRow,
 } from "../db/draws.ts";
-import { appendEvent } from "../db/events.ts";
 import { findFrame } from "../db/frames.ts";
 import { type Tx, writeTx } from "../db/open.ts";
 import { type PlacedEntry, placeEntries } from "../jobs/place-entries.ts";
@@ -19,6 +18,7 @@ import { newId } from "./new-id.ts";
 import { openVisitsFor } from "./open-visits-for.ts";
 import { randomBelow } from "./random-below.ts";
 import { declaredText, neededDeclaration } from "./read-draws.ts";
+import { recordEvent } from "./record-event.ts";
 
 /** Longer lists are drawn in a worker thread. */
 const ENTRIES_DRAWN_HERE = 2000;
@@ -62,7 +62,7 @@ function giveSeed(tx: Tx, ctx: Context, declarationId: string, typed: string | u
     givenAt: ctx.now().toISOString(),
   };
   insertSeed(tx, seed);
-  appendEvent(tx, ctx, {
+  recordEvent(tx, ctx, {
     surveyId: ctx.surveyId,
     at: seed.givenAt,
     memberId: seed.givenBy,
@@ -127,7 +127,7 @@ function keepDraw(tx: Tx, ctx: Context, declarationId: string, entries: readonly
   insertSeasonDraw(tx, { id: newId(ctx), seasonId, drawId, takenAt: at, endedAt: null });
   const picks = entries.filter((entry) => !entry.reserve);
   openVisitsFor(tx, ctx, { seasonId, frameId, at }, picks);
-  appendEvent(tx, ctx, {
+  recordEvent(tx, ctx, {
     surveyId: ctx.surveyId,
     at,
     memberId,

@@ -3,10 +3,10 @@ import { CELLS_FORMAT } from "#shared/frame/pack.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { findAreaHead, findPlane } from "../db/areas.ts";
-import { appendEvent } from "../db/events.ts";
 import { type FrameHead, findFrameHead, markSealed, specOf } from "../db/frames.ts";
 import { writeTx } from "../db/open.ts";
 import { actingMember } from "./acting-member.ts";
+import { recordEvent } from "./record-event.ts";
 
 /** What the planner saw when they pressed: anything else is not sealed. */
 interface Seen {
@@ -55,7 +55,7 @@ export async function sealFrame(ctx: Context, frameId: string, seen: Seen, signa
       sealedBy: memberId,
     });
     if (!sealed) throw new Error(`frame ${frameId} was sealed inside our own write lock`);
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

@@ -1,10 +1,10 @@
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { endSeasonDraws, insertWithdrawn } from "../db/draws.ts";
-import { appendEvent } from "../db/events.ts";
 import { writeTx } from "../db/open.ts";
 import { actingMember } from "./acting-member.ts";
 import { neededDraw } from "./read-draws.ts";
+import { recordEvent } from "./record-event.ts";
 
 /** Takes a draw out of use, with a reason. Its picks stay on record, and what was counted in its cells. */
 export function withdrawDraw(ctx: Context, drawId: string, reason: string): void {
@@ -17,7 +17,7 @@ export function withdrawDraw(ctx: Context, drawId: string, reason: string): void
     const at = ctx.now().toISOString();
     insertWithdrawn(tx, { drawId, reason, withdrawnBy: memberId, withdrawnAt: at });
     endSeasonDraws(tx, drawId, at);
-    appendEvent(tx, ctx, {
+    recordEvent(tx, ctx, {
       surveyId: ctx.surveyId,
       at,
       memberId,

@@ -6,7 +6,13 @@ export const account = z.object({ id, name: z.string(), email: z.string(), isOwn
 export type Account = z.infer<typeof account>;
 
 /** Who is signed in, and on what kind of installation: the demo says so on every page. */
-export const session = z.object({ account: z.nullable(account), demo: z.boolean(), version: z.string() });
+export const session = z.object({
+  account: z.nullable(account),
+  demo: z.boolean(),
+  version: z.string(),
+  /** An XYZ template and whom it names, for those who are signed in; null for none. */
+  baseMap: z.nullable(z.object({ url: z.string(), attribution: z.string() })),
+});
 export type Session = z.infer<typeof session>;
 
 export const readSession = contract({

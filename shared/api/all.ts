@@ -6,6 +6,7 @@ import * as draw from "#shared/api/draw.ts";
 import * as estimate from "#shared/api/estimate.ts";
 import * as field from "#shared/api/field.ts";
 import * as frame from "#shared/api/frame.ts";
+import * as installation from "#shared/api/installation.ts";
 import * as record from "#shared/api/record.ts";
 import * as surveys from "#shared/api/surveys.ts";
 
@@ -17,6 +18,7 @@ function isContract(thing: unknown): thing is Contract {
 /** Every endpoint there is, in the order of the layer words. */
 export const ALL_CONTRACTS: readonly Contract[] = [
   accounts,
+  installation,
   surveys,
   area,
   frame,

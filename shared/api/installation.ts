@@ -1,4 +1,5 @@
 import * as z from "zod/mini";
+import { baseMapOrigins } from "#shared/api/base-map.ts";
 import { email, id, none, utc } from "#shared/api/common.ts";
 import { contract, json } from "#shared/api/contract.ts";
 
@@ -9,9 +10,11 @@ export const installationSettings = z.object({
   baseMap: z.nullable(
     z.object({
       /** XYZ template. */
-      url: z
-        .string()
-        .check(z.maxLength(500), z.regex(/^https?:\/\/[^\s]*\{z\}[^\s]*$/, "is no address with {z}, {x} and {y}")),
+      url: z.string().check(
+        z.trim(),
+        z.maxLength(500),
+        z.refine((url) => baseMapOrigins(url) !== null, "is no address with {z}, {x} and {y}"),
+      ),
       attribution: z.string().check(z.trim(), z.minLength(1, "is empty"), z.maxLength(500)),
     }),
   ),

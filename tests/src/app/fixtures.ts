@@ -9,6 +9,7 @@ export function session(part: Partial<Session> = {}): Session {
     account: { id: "a1", name: "Ines Marrow", email: "ines@example.org", isOwner: false },
     demo: false,
     version: "0.1.0",
+    baseMap: null,
     ...part,
   };
 }
