@@ -27,10 +27,12 @@ export function seenVersion(contract: Contract, req: Request): (current: unknown
     throw new Problem("version-missing", "Read it first, then send the ETag of what you saw as If-Match.");
   }
   return (current) => {
-    if (versionOf(contract.answer, current) === seen) return;
+    const version = versionOf(contract.answer, current);
+    if (version === seen) return;
     throw new Problem("changed-meanwhile", "Look at both versions, then say what is to stand.", {
       kind: "versions",
       current,
+      version,
     });
   };
 }

@@ -22,14 +22,23 @@ export type CallInput<P extends Schema, Q extends Schema, B extends Schema> = Pa
   Part<"body", B> & {
     /** For contracts with an upload. */
     readonly file?: File;
+    /** For versioned writes: the version that was seen. */
+    readonly version?: string;
     readonly signal?: AbortSignal | undefined;
   };
+
+/** An answer of a versioned contract, with what names this version of it (its ETag). */
+export interface Versioned<T> {
+  readonly value: T;
+  readonly version: string;
+}
 
 interface LooseInput {
   readonly params?: unknown;
   readonly query?: unknown;
   readonly body?: unknown;
   readonly file?: File;
+  readonly version?: string;
   readonly signal?: AbortSignal | undefined;
 }
 
@@ -63,13 +72,53 @@ export async function call<P extends Schema, Q extends Schema, B extends Schema,
     ? [input?: CallInput<P, Q, B>]
     : [input: CallInput<P, Q, B>]
 ): Promise<AnswerOf<A>> {
-  const loose = (input ?? {}) as LooseInput;
-  const address = addressOf(contract, loose as { params?: z.input<P>; query?: z.input<Q> });
-  const response = await send(address, contract, loose);
-  if (!response.ok) throw await problemOf(response, contract.name);
+  return answerOf(contract, input ?? {}, await respond(contract, input ?? {}));
+}
+
+/**
+ * Calls an endpoint that two people may edit: its answer with the version of it, which the next write sends as `version`.
+ * Throws RangeError where the answer names no version.
+ * @throws Problem as call does; `changed-meanwhile` where `version` is not what stands now (see versionNow)
+ */
+export async function callVersioned<P extends Schema, Q extends Schema, B extends Schema, A extends Answer>(
+  contract: Contract<P, Q, B, A>,
+  input: CallInput<P, Q, B>,
+): Promise<Versioned<AnswerOf<A>>> {
+  const response = await respond(contract, input);
+  const version = response.headers.get("etag");
+  if (version === null) throw new RangeError(`the answer of ${contract.name} names no version`);
+  return { value: await answerOf(contract, input, response), version };
+}
+
+/** What stands now, where a versioned write was refused because somebody changed it meanwhile; null for any other failure. */
+export function versionNow<A extends Answer>(
+  contract: Contract<Schema, Schema, Schema, A>,
+  error: unknown,
+): Versioned<AnswerOf<A>> | null {
+  if (!(error instanceof Problem) || error.code !== "changed-meanwhile") return null;
   const { answer } = contract as { answer: Answer };
-  if (answer.kind === "stream") return (await body(() => response.blob(), loose.signal)) as AnswerOf<A>;
-  const json: unknown = await body(() => response.json(), loose.signal);
+  const version = error.question?.["version"];
+  if (typeof version !== "string" || answer.kind !== "json") return null;
+  return { value: z.parse(answer.schema, error.question?.["current"]) as AnswerOf<A>, version };
+}
+
+type Called<A extends Answer> = Contract<Schema, Schema, Schema, A>;
+
+async function respond(contract: Called<Answer>, input: LooseInput): Promise<Response> {
+  const address = addressOf(contract, input);
+  const response = await send(address, contract, input);
+  if (!response.ok) throw await problemOf(response, contract.name);
+  return response;
+}
+
+async function answerOf<A extends Answer>(
+  contract: Called<A>,
+  { signal }: LooseInput,
+  response: Response,
+): Promise<AnswerOf<A>> {
+  const { answer } = contract as { answer: Answer };
+  if (answer.kind === "stream") return (await body(() => response.blob(), signal)) as AnswerOf<A>;
+  const json: unknown = await body(() => response.json(), signal);
   return z.parse(answer.schema, json) as AnswerOf<A>;
 }
 
@@ -87,7 +136,10 @@ async function send(
     form.set(contract.upload.field, input.file, input.file.name);
     init.body = form;
   } else if (contract.method !== "GET") {
-    init.headers = { "content-type": "application/json" };
+    init.headers = {
+      "content-type": "application/json",
+      ...(input.version !== undefined && { "if-match": input.version }),
+    };
     init.body = JSON.stringify(input.body ?? {});
   }
   return body(() => fetch(address, init), input.signal);

@@ -2,7 +2,7 @@ import { afterEach, expect, test, vi } from "vitest";
 import * as z from "zod/mini";
 import { contract, json, stream } from "#shared/api/contract.ts";
 import { Problem } from "#shared/problem.ts";
-import { addressOf, call } from "../../../src/api/call.ts";
+import { addressOf, call, callVersioned, versionNow } from "../../../src/api/call.ts";
 
 const none = z.object({});
 const thing = contract({
@@ -109,4 +109,53 @@ test("an answer that does not fit its contract is not taken", async () => {
 
 test("an address without one of its parameters is a bug, and names it", () => {
   expect(() => addressOf(thing, { params: { surveyId: "s1" } as typeof params })).toThrow(/thingId/);
+});
+
+const settings = z.object({ name: z.string() });
+const read = contract({
+  name: "readThing",
+  method: "GET",
+  path: "/api/thing",
+  guard: "signed-in",
+  summary: "",
+  params: none,
+  query: none,
+  body: none,
+  versioned: true,
+  answer: json(settings),
+});
+const change = contract({ ...read, name: "changeThing", method: "PUT", body: settings });
+
+test("what two may edit comes with its ETag as its version, and a write sends the version that was seen", async () => {
+  const fetch = fakeFetch((_, { method }) =>
+    Promise.resolve(
+      Response.json(
+        { name: method === "PUT" ? "new" : "old" },
+        { headers: { ETag: method === "PUT" ? '"b"' : '"a"' } },
+      ),
+    ),
+  );
+  const seen = await callVersioned(read, {});
+  expect(seen).toEqual({ value: { name: "old" }, version: '"a"' });
+  const kept = await callVersioned(change, { body: { name: "new" }, version: seen.version });
+  expect(kept).toEqual({ value: { name: "new" }, version: '"b"' });
+  expect(new Headers(fetch.mock.calls[0]?.[1].headers).get("if-match")).toBeNull();
+  expect(new Headers(fetch.mock.calls[1]?.[1].headers).get("if-match")).toBe('"a"');
+});
+
+test("an answer without an ETag is no version", async () => {
+  fakeFetch(() => Promise.resolve(Response.json({ name: "old" })));
+  await expect(callVersioned(read, {})).rejects.toThrow(RangeError);
+});
+
+test("the refusal of a write on an old version tells what stands now; any other refusal tells nothing of it", async () => {
+  const question = { kind: "versions", current: { name: "theirs", more: 1 }, version: '"c"' };
+  const refuse = (code: string) => Response.json({ code, detail: "", question }, { status: 412 });
+  fakeFetch(() => Promise.resolve(refuse("changed-meanwhile")));
+  const stale = await callVersioned(change, { body: { name: "x" }, version: '"a"' }).catch((error: unknown) => error);
+  expect(versionNow(change, stale)).toEqual({ value: { name: "theirs" }, version: '"c"' });
+  fakeFetch(() => Promise.resolve(refuse("not-allowed")));
+  const other = await callVersioned(change, { body: { name: "x" }, version: '"a"' }).catch((error: unknown) => error);
+  expect(versionNow(change, other)).toBeNull();
+  expect(versionNow(change, new Error("x"))).toBeNull();
 });
