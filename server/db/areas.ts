@@ -1,5 +1,4 @@
 import { and, desc, eq } from "drizzle-orm";
-import type { SurveySummary } from "#shared/api/surveys.ts";
 import type { Reader, Tx } from "./open.ts";
 import { areaVersions, planes } from "./schema/area.ts";
 
@@ -53,9 +52,14 @@ export function areaFile(reader: Reader, id: string): { name: string; bytes: Buf
     .get();
 }
 
-/** The outline of the newest area version in degrees, or null while there is none. */
-export function newestOutline(reader: Reader, surveyId: string): SurveySummary["outline"] {
-  return (areasOf(reader, surveyId)[0]?.outline as SurveySummary["outline"] | undefined) ?? null;
+export function newestArea(reader: Reader, surveyId: string): AreaHead | undefined {
+  return reader
+    .select(withoutBytes)
+    .from(areaVersions)
+    .where(eq(areaVersions.surveyId, surveyId))
+    .orderBy(desc(areaVersions.number))
+    .limit(1)
+    .get();
 }
 
 export function findPlane(reader: Reader, areaId: string, epsg: number): PlaneRow | undefined {

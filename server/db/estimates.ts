@@ -1,4 +1,4 @@
-import { asc, eq, sql } from "drizzle-orm";
+import { asc, desc, eq, sql } from "drizzle-orm";
 import type { Reader, Tx } from "./open.ts";
 import { keptEstimates } from "./schema/record.ts";
 
@@ -16,4 +16,16 @@ export function keptEstimatesOf(reader: Reader, surveyId: string): KeptEstimateR
     .where(eq(keptEstimates.surveyId, surveyId))
     .orderBy(asc(sql`${keptEstimates}.rowid`))
     .all();
+}
+
+/** When the newest estimate of a survey was kept, or null. */
+export function newestKeptAt(reader: Reader, surveyId: string): string | null {
+  const row = reader
+    .select({ at: keptEstimates.keptAt })
+    .from(keptEstimates)
+    .where(eq(keptEstimates.surveyId, surveyId))
+    .orderBy(desc(sql`${keptEstimates}.rowid`))
+    .limit(1)
+    .get();
+  return row?.at ?? null;
 }

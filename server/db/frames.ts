@@ -22,6 +22,17 @@ export function framesOf(reader: Reader, surveyId: string): FrameHead[] {
     .all();
 }
 
+/** How the newest version stands. */
+export function newestFrame(reader: Reader, surveyId: string): Pick<FrameRow, "number" | "sealedAt"> | undefined {
+  return reader
+    .select({ number: frameVersions.number, sealedAt: frameVersions.sealedAt })
+    .from(frameVersions)
+    .where(eq(frameVersions.surveyId, surveyId))
+    .orderBy(desc(frameVersions.number))
+    .limit(1)
+    .get();
+}
+
 export function findFrameHead(reader: Reader, id: string): FrameHead | undefined {
   return reader.select(headColumns).from(frameVersions).where(eq(frameVersions.id, id)).get();
 }

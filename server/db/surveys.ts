@@ -21,13 +21,14 @@ export function isArchived(reader: Reader, id: string): boolean {
   return (findSurvey(reader, id)?.archivedAt ?? null) !== null;
 }
 
+/** The surveys in which an account holds a role, archived ones too, newest first. */
 export function surveysOf(reader: Reader, accountId: string): SurveyRow[] {
   return reader
     .selectDistinct({ survey: surveys })
     .from(surveys)
     .innerJoin(members, eq(members.surveyId, surveys.id))
     .innerJoin(memberships, eq(memberships.memberId, members.id))
-    .where(and(eq(members.accountId, accountId), isNull(memberships.removedAt), isNull(surveys.archivedAt)))
+    .where(and(eq(members.accountId, accountId), isNull(memberships.removedAt)))
     .orderBy(desc(surveys.createdAt))
     .all()
     .map((row) => row.survey);

@@ -1,5 +1,7 @@
 import type { Role } from "#shared/access/table.ts";
-import type { Member, OtherSurvey, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
+import type { ListedSurvey, Member, OtherSurvey, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
+import type { WaitingThing } from "#shared/api/waiting.ts";
+import type { EventRow } from "../db/events.ts";
 import type { MemberRow } from "../db/members.ts";
 import type { SeasonRow, SurveyRow, TargetRow } from "../db/surveys.ts";
 
@@ -13,7 +15,12 @@ interface SurveyParts {
   readonly memberId: string | null;
 }
 
-export function presentSurveySummary({ survey, seasons, targets, roles, stages, outline }: SurveyParts): SurveySummary {
+interface ListedSurveyParts extends SurveyParts {
+  readonly newestEvent: EventRow | undefined;
+  readonly waiting: readonly WaitingThing[];
+}
+
+function presentSurveySummary({ survey, seasons, targets, roles, stages, outline }: SurveyParts): SurveySummary {
   return {
     id: survey.id,
     name: survey.name,
@@ -23,6 +30,16 @@ export function presentSurveySummary({ survey, seasons, targets, roles, stages, 
     stages: [...stages],
     outline,
     createdAt: survey.createdAt,
+    archivedAt: survey.archivedAt,
+  };
+}
+
+export function presentListedSurvey(parts: ListedSurveyParts): ListedSurvey {
+  const { newestEvent, waiting } = parts;
+  return {
+    ...presentSurveySummary(parts),
+    newestEvent: newestEvent ? { sequence: newestEvent.sequence, at: newestEvent.at } : null,
+    waiting: [...waiting],
   };
 }
 

@@ -1,15 +1,16 @@
 import * as api from "#shared/api/surveys.ts";
 import type { Mount } from "../http/mount.ts";
-import { presentMembers, presentOtherSurvey, presentSurvey, presentSurveySummary } from "../presenters/survey.ts";
+import { presentListedSurvey, presentMembers, presentOtherSurvey, presentSurvey } from "../presenters/survey.ts";
 import { addMember } from "../services/add-member.ts";
 import { createSurvey } from "../services/create-survey.ts";
 import { listMembers } from "../services/list-members.ts";
 import { listOtherSurveys, listSurveys, readSurvey } from "../services/read-surveys.ts";
 
 export function surveyRoutes(mount: Mount): void {
-  mount.signedIn(api.listSurveys, (ctx) => ({
-    surveys: listSurveys(ctx.db, ctx.account.id).map(presentSurveySummary),
-  }));
+  mount.signedIn(api.listSurveys, (ctx) => {
+    const { surveys, installation } = listSurveys(ctx);
+    return { surveys: surveys.map(presentListedSurvey), installation };
+  });
 
   mount.signedIn(api.listOtherSurveys, (ctx) => ({
     surveys: listOtherSurveys(ctx.db, ctx.account.id).map(presentOtherSurvey),

@@ -1,18 +1,8 @@
 import type { ImportReport } from "#shared/area/report.ts";
 import type { Stage, StageState } from "#shared/api/surveys.ts";
-import { isClosing } from "#shared/field/states.ts";
-import { areasOf } from "../db/areas.ts";
-import type { CountRow } from "../db/counts.ts";
-import { declarationsOf, drawsOf } from "../db/draws.ts";
-import { keptEstimatesOf } from "../db/estimates.ts";
-import { newestEvent } from "../db/events.ts";
-import { framesOf } from "../db/frames.ts";
-import type { Reader } from "../db/open.ts";
-import { findSurvey } from "../db/surveys.ts";
-import { assignmentsOf, visitsOn } from "../db/visits.ts";
 import { localDay } from "./local-day.ts";
 import { declaredText } from "./read-draws.ts";
-import { type SeasonInUse, seasonInUse } from "./read-visits.ts";
+import { countsSinceKept, hasValue, isReported, openDeclarationIn, type SurveyFacts } from "./survey-facts.ts";
 
 type Standing = Pick<StageState, "state" | "note">;
 
@@ -20,77 +10,69 @@ const NOT_STARTED: Standing = { state: "not-started", note: "not started" };
 
 const some = (count: number, one: string, many = `${one}s`): string => `${count} ${count === 1 ? one : many}`;
 
-/** How each stage of a survey stands, at a glance: a state, and the line under its name. */
-export function stageStates(reader: Reader, surveyId: string): StageState[] {
-  const season = seasonInUse(reader, surveyId);
-  const cells = cellsOf(reader, season);
+/** How each stage of a survey stands, at a glance: a state, and the line under its name. A counter is told of their own cells only. */
+export function stageStates(facts: SurveyFacts): StageState[] {
+  if (facts.ownOnly) {
+    return [
+      { stage: "field", ...ownFieldStanding(facts) },
+      { stage: "counts", ...ownCountsStanding(facts) },
+    ];
+  }
   const of: Record<Stage, Standing> = {
-    area: areaStanding(reader, surveyId),
-    frame: frameStanding(reader, surveyId),
-    plan: planStanding(reader, surveyId),
-    draw: drawStanding(reader, surveyId, season),
-    field: fieldStanding(reader, surveyId, season, cells),
-    counts: countsStanding(season, cells),
-    estimate: estimateStanding(reader, surveyId, cells),
-    record: { state: "in-work", note: some(newestEvent(reader, surveyId)?.sequence ?? 0, "event") },
+    area: areaStanding(facts),
+    frame: frameStanding(facts),
+    plan: planStanding(facts),
+    draw: drawStanding(facts),
+    field: fieldStanding(facts),
+    counts: countsStanding(facts),
+    estimate: estimateStanding(facts),
+    record: { state: "in-work", note: some(facts.newestEvent?.sequence ?? 0, "event") },
   };
   return Object.entries(of).map(([stage, standing]) => ({ stage: stage as Stage, ...standing }));
 }
 
-/** A cell in use, its earliest pick and what is written down for it. */
-interface CellInUse {
-  readonly unit: number;
-  readonly position: number;
-  readonly visitId: string | undefined;
-  readonly count: CountRow | undefined;
+function ownFieldStanding({ cells }: SurveyFacts): Standing {
+  if (cells.length === 0) return { state: "not-started", note: "no cells are yours yet" };
+  const left = cells.filter(({ count }) => count === undefined).length;
+  if (left === 0) return { state: "done", note: `your ${some(cells.length, "cell")} visited` };
+  return { state: "in-work", note: `${left} of your ${some(cells.length, "cell")} to visit` };
 }
 
-function cellsOf(reader: Reader, { live, lists, counts, seasonId }: SeasonInUse): CellInUse[] {
-  if (!live) return [];
-  const visits = new Map(visitsOn(reader, seasonId, live.draw.frameVersionId).map((visit) => [visit.unit, visit.id]));
-  const cells = new Map<number, CellInUse>();
-  for (const { unit, position } of lists.flatMap((list) => list.use.inUse)) {
-    if (cells.has(unit)) continue;
-    const visitId = visits.get(unit);
-    cells.set(unit, { unit, position, visitId, count: visitId === undefined ? undefined : counts.get(visitId) });
-  }
-  return [...cells.values()];
+function ownCountsStanding({ cells }: SurveyFacts): Standing {
+  if (cells.length === 0) return NOT_STARTED;
+  const counted = cells.filter(hasValue).length;
+  const state = counted === 0 ? "not-started" : counted === cells.length ? "done" : "in-work";
+  return { state, note: `${counted} of your ${some(cells.length, "cell")}` };
 }
 
-const hasValue = ({ count }: CellInUse): boolean => count !== undefined && !isClosing(count.state);
-
-function areaStanding(reader: Reader, surveyId: string): Standing {
-  const [newest] = areasOf(reader, surveyId);
-  if (!newest) return NOT_STARTED;
-  const { parts, holes } = newest.report as ImportReport;
+function areaStanding({ area }: SurveyFacts): Standing {
+  if (!area) return NOT_STARTED;
+  const { parts, holes } = area.report as ImportReport;
   return { state: "done", note: holes === 0 ? some(parts, "area") : `${some(parts, "area")}, ${some(holes, "hole")}` };
 }
 
-function frameStanding(reader: Reader, surveyId: string): Standing {
-  const [newest] = framesOf(reader, surveyId);
-  if (!newest) return NOT_STARTED;
-  if (newest.sealedAt === null) return { state: "in-work", note: `version ${newest.number}, not sealed` };
-  return { state: "done", note: `version ${newest.number}, sealed` };
+function frameStanding({ frame }: SurveyFacts): Standing {
+  if (!frame) return NOT_STARTED;
+  if (frame.sealedAt === null) return { state: "in-work", note: `version ${frame.number}, not sealed` };
+  return { state: "done", note: `version ${frame.number}, sealed` };
 }
 
-function planStanding(reader: Reader, surveyId: string): Standing {
-  const newest = declarationsOf(reader, surveyId).find((one) => one.abandoned === null);
+function planStanding({ declarations }: SurveyFacts): Standing {
+  const newest = declarations.find((one) => one.abandoned === null);
   return newest ? { state: "done", note: `n = ${declaredText(newest).design.n} declared` } : NOT_STARTED;
 }
 
-function drawStanding(reader: Reader, surveyId: string, { live, seasonId }: SeasonInUse): Standing {
+function drawStanding(facts: SurveyFacts): Standing {
+  const { live } = facts.season;
   if (live) return { state: "done", note: `draw ${live.draw.number}, live` };
-  const [declared] = declarationsOf(reader, surveyId).filter((one) => one.declaration.seasonId === seasonId);
-  if (declared && declared.drawId === null && declared.abandoned === null) {
-    return { state: "in-work", note: "declared, not drawn" };
-  }
-  const [last] = drawsOf(reader, surveyId);
+  if (openDeclarationIn(facts)) return { state: "in-work", note: "declared, not drawn" };
+  const [last] = facts.draws;
   return last ? { state: "attention", note: `draw ${last.draw.number} withdrawn` } : NOT_STARTED;
 }
 
-function fieldStanding(reader: Reader, surveyId: string, season: SeasonInUse, cells: readonly CellInUse[]): Standing {
+function fieldStanding({ season, cells }: SurveyFacts): Standing {
   if (!season.live) return NOT_STARTED;
-  const toClose = cells.filter(({ count }) => count !== undefined && isClosing(count.state));
+  const toClose = cells.filter(isReported);
   const [first] = toClose;
   if (first) {
     const note = toClose.length === 1 ? `pick ${first.position} to be closed` : `${toClose.length} cells to be closed`;
@@ -99,32 +81,27 @@ function fieldStanding(reader: Reader, surveyId: string, season: SeasonInUse, ce
   const unreplaced = season.lists.reduce((sum, list) => sum + list.use.unfilled, 0);
   if (unreplaced > 0) return { state: "attention", note: `${some(unreplaced, "pick")} not counted` };
   if (cells.every(hasValue)) return { state: "done", note: `${some(cells.length, "cell")} visited` };
-  const assigned = new Set(assignmentsOf(reader, surveyId).map((row) => row.visitId));
-  const shared = cells.filter(({ visitId }) => visitId !== undefined && assigned.has(visitId)).length;
+  const shared = cells.filter(({ assignment }) => assignment !== undefined).length;
   if (shared === 0) return { state: "not-started", note: "not shared out" };
   return { state: "in-work", note: `${shared} of ${some(cells.length, "cell")} shared out` };
 }
 
-function countsStanding({ live }: SeasonInUse, cells: readonly CellInUse[]): Standing {
-  if (!live) return NOT_STARTED;
+function countsStanding({ season, cells }: SurveyFacts): Standing {
+  if (!season.live) return NOT_STARTED;
   const counted = cells.filter(hasValue).length;
   const state = counted === 0 ? "not-started" : counted === cells.length ? "done" : "in-work";
   return { state, note: `${counted} of ${some(cells.length, "cell")}` };
 }
 
-function estimateStanding(reader: Reader, surveyId: string, cells: readonly CellInUse[]): Standing {
-  const kept = keptEstimatesOf(reader, surveyId).at(-1);
-  const entered = cells.flatMap(({ count }) => (count ? [count.enteredAt] : [])).toSorted();
-  if (kept) {
-    const note = `kept on ${dayOf(reader, surveyId, kept.keptAt)}`;
-    const since = (entered.at(-1) ?? "") > kept.keptAt;
-    return since ? { state: "attention", note: `${note}, counts since` } : { state: "done", note };
-  }
-  return cells.some(hasValue) ? { state: "in-work", note: "not kept yet" } : NOT_STARTED;
+function estimateStanding(facts: SurveyFacts): Standing {
+  const { keptAt, cells, survey } = facts;
+  if (keptAt === null) return cells.some(hasValue) ? { state: "in-work", note: "not kept yet" } : NOT_STARTED;
+  const note = `kept on ${dayOf(keptAt, survey.timeZone)}`;
+  return countsSinceKept(facts) ? { state: "attention", note: `${note}, counts since` } : { state: "done", note };
 }
 
 /** "9 July": the day of a time, for the people there. */
-function dayOf(reader: Reader, surveyId: string, at: string): string {
-  const day = new Date(localDay(at, findSurvey(reader, surveyId)?.timeZone ?? "UTC"));
+function dayOf(at: string, timeZone: string): string {
+  const day = new Date(localDay(at, timeZone));
   return new Intl.DateTimeFormat("en-GB", { day: "numeric", month: "long", timeZone: "UTC" }).format(day);
 }

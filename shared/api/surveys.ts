@@ -1,6 +1,7 @@
 import * as z from "zod/mini";
 import { email, id, longText, none, role, shortText, surveyParams, utc } from "#shared/api/common.ts";
 import { contract, json } from "#shared/api/contract.ts";
+import { ownersWaiting, waitingThing } from "#shared/api/waiting.ts";
 
 export const STAGES = ["area", "frame", "plan", "draw", "field", "counts", "estimate", "record"] as const;
 export type Stage = (typeof STAGES)[number];
@@ -32,8 +33,19 @@ export const surveySummary = z.object({
   /** Outline for a thumbnail in degrees, or null while there is no boundary. */
   outline: z.nullable(z.array(z.array(z.array(z.tuple([z.number(), z.number()]))))),
   createdAt: utc,
+  /** Since when nothing can be changed; null for a survey in work. */
+  archivedAt: z.nullable(utc),
 });
 export type SurveySummary = z.infer<typeof surveySummary>;
+
+/** A survey on the list of surveys. */
+export const listedSurvey = z.extend(surveySummary, {
+  /** For those who may read the record. */
+  newestEvent: z.nullable(z.object({ sequence: z.int(), at: utc })),
+  /** What it waits for of whoever asks; nothing while it is archived. */
+  waiting: z.array(waitingThing),
+});
+export type ListedSurvey = z.infer<typeof listedSurvey>;
 
 export const survey = z.extend(surveySummary, {
   timeZone: z.string(),
@@ -60,11 +72,17 @@ export const listSurveys = contract({
   method: "GET",
   path: "/api/surveys",
   guard: "signed-in",
-  summary: "The surveys in which I hold a role",
+  summary: "The surveys in which I hold a role, archived ones too, and what waits for me",
   params: none,
   query: none,
   body: none,
-  answer: json(z.object({ surveys: z.array(surveySummary) })),
+  answer: json(
+    z.object({
+      surveys: z.array(listedSurvey),
+      /** For an owner of the installation; null for others. */
+      installation: z.nullable(ownersWaiting),
+    }),
+  ),
 });
 
 export const otherSurvey = z.object({ id, name: z.string(), createdAt: utc });
