@@ -103,3 +103,14 @@ export function hasEvent(reader: Reader, surveyId: string, kinds: readonly Event
     .get();
   return found !== undefined;
 }
+
+/** The newest event of any of these kinds. */
+export function newestEventOf(reader: Reader, surveyId: string, kinds: readonly EventKind[]): EventRow | undefined {
+  return reader
+    .select()
+    .from(events)
+    .where(and(eq(events.surveyId, surveyId), inArray(events.kind, [...kinds])))
+    .orderBy(desc(events.sequence))
+    .limit(1)
+    .get();
+}

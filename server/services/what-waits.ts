@@ -21,12 +21,12 @@ export function whatWaits(reader: Reader, facts: SurveyFacts, now: Date): Waitin
 }
 
 /** What an installation waits for of its owners. */
-export function whatWaitsForOwners(platform: Pick<Platform, "db" | "dailyCopies">): OwnersWaiting {
+export function whatWaitsForOwners(platform: Pick<Platform, "db" | "dailyCopies" | "demo">): OwnersWaiting {
   const { failed, kept } = mailsByState(platform.db);
   return {
     mailsFailed: failed,
     mailsKept: kept,
-    publicAddressMissing: installationRow(platform.db).publicAddress === null,
+    publicAddressMissing: !platform.demo && installationRow(platform.db).publicAddress === null,
     backupError: platform.dailyCopies?.lastError ?? null,
   };
 }

@@ -57,6 +57,7 @@ export function HeaderEnd({ roles, links = false }: HeaderEndProps) {
         items={[
           { kind: "link", label: "Surveys", to: paths.surveys },
           { kind: "link", label: "Account", to: paths.account },
+          ...(account.isOwner ? [{ kind: "link", label: "Installation", to: paths.installation } as const] : []),
           { kind: "link", label: "Replay a record", to: paths.replay },
           { kind: "rule" },
           { kind: "act", label: "Sign out", onSelect: () => signOut.mutate() },

@@ -5,7 +5,7 @@ import { problemOf } from "../api/problem-of.ts";
 import { AppShell } from "../components/ui/AppShell.tsx";
 import { Button } from "../components/ui/Button.tsx";
 import { ButtonLink } from "../components/ui/ButtonLink.tsx";
-import { formatList } from "../components/ui/format.ts";
+import { formatList, timesIn } from "../components/ui/format.ts";
 import { Refusal } from "../components/ui/Refusal.tsx";
 import { RuledLoading } from "../components/ui/RuledLoading.tsx";
 import { TimeZoneContext } from "../components/ui/use-times.ts";
@@ -59,6 +59,12 @@ export function SurveyLayout() {
   );
 }
 
+/** What is counted and when; since when it is archived, where it is. */
+function noteOf({ target, season, archivedAt, timeZone }: Survey): string {
+  const note = `${target}, season ${season}`;
+  return archivedAt === null ? note : `${note} · archived on ${timesIn(timeZone).day(archivedAt)}`;
+}
+
 function LoadedSurvey({ survey, onPeople }: { readonly survey: Survey; readonly onPeople: boolean }) {
   const demo = useDemo();
   const part = useMatch(patterns.stage)?.params.stage ?? "";
@@ -74,7 +80,7 @@ function LoadedSurvey({ survey, onPeople }: { readonly survey: Survey; readonly 
           home={paths.home}
           crumbs={[{ label: "Surveys", to: paths.surveys }]}
           here={survey.name}
-          hereNote={`${survey.target}, season ${survey.season}`}
+          hereNote={noteOf(survey)}
           end={<HeaderEnd roles={formatList(survey.roles)} />}
           notice={demo ? <DemoNotice /> : undefined}
           stages={seen}

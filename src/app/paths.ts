@@ -9,6 +9,7 @@ export const patterns = {
   stage: "/surveys/:surveyId/:stage",
   people: "/surveys/:surveyId/people",
   account: "/account",
+  installation: "/installation",
   replay: "/replay",
 } as const;
 
@@ -19,6 +20,7 @@ export const paths = {
   surveys: patterns.surveys,
   newSurvey: patterns.newSurvey,
   account: patterns.account,
+  installation: patterns.installation,
   replay: patterns.replay,
   survey: (surveyId: string) => `/surveys/${encodeURIComponent(surveyId)}`,
   stage: (surveyId: string, stage: Stage) => `/surveys/${encodeURIComponent(surveyId)}/${stage}`,

@@ -75,7 +75,11 @@ export interface Times {
   readonly day: (iso: string) => string;
   /** "11:12", where the zone is said once beside it. */
   readonly timeOfDay: (iso: string) => string;
+  /** On a list of what happened: "today, 11:12", "yesterday, 17:44", else the day. */
+  readonly recent: (iso: string) => string;
 }
+
+const MS_A_DAY = 86_400_000;
 
 /** The one way from an instant to what is read on screen. */
 export function timesIn(timeZone: string): Times {
@@ -99,10 +103,17 @@ export function timesIn(timeZone: string): Times {
     partsOf(iso)("timeZoneName")
       .replace(/^GMT(?=[+-])/, "UTC")
       .replace("-", "\u2212");
+  const recent = (iso: string) => {
+    const at = day(iso);
+    if (at === day(new Date().toISOString())) return `today, ${timeOfDay(iso)}`;
+    if (at === day(new Date(Date.now() - MS_A_DAY).toISOString())) return `yesterday, ${timeOfDay(iso)}`;
+    return at;
+  };
   return {
     zone: clock.resolvedOptions().timeZone,
     day,
     timeOfDay,
+    recent,
     time: (iso) => `${day(iso)}, ${timeOfDay(iso)} ${abbreviation(iso)}`,
   };
 }

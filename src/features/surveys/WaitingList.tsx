@@ -1,4 +1,5 @@
 import { Link } from "react-router-dom";
+import { Hash } from "../../components/ui/Hash.tsx";
 import { StageMark } from "../../components/ui/StageMark.tsx";
 import type { StageState } from "../../components/ui/stage-state.ts";
 
@@ -11,6 +12,8 @@ export interface Waiting {
   readonly survey: string;
   readonly fact: string;
   readonly next: string;
+  /** To be kept elsewhere. */
+  readonly hash?: string;
   readonly link: string;
   readonly to: string;
 }
@@ -18,7 +21,7 @@ export interface Waiting {
 /** What waits, as whom, in which survey, and where to go for it. */
 export function WaitingList({ items }: { readonly items: readonly Waiting[] }) {
   return (
-    <ol className="q-waiting">
+    <ol className="q-waiting" aria-label="What waits for you">
       {items.map((item) => (
         <li key={item.key}>
           <StageMark state={item.state} size={18} />
@@ -28,7 +31,15 @@ export function WaitingList({ items }: { readonly items: readonly Waiting[] }) {
           </div>
           <div className="q-waiting-what">
             <b>{item.fact}</b>
-            <span>{item.next}</span>
+            <span>
+              {item.next}
+              {item.hash !== undefined && (
+                <>
+                  {" "}
+                  <Hash value={item.hash} label={`newest hash of ${item.survey}`} />
+                </>
+              )}
+            </span>
           </div>
           <Link to={item.to}>{item.link}</Link>
         </li>

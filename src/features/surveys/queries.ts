@@ -1,9 +1,8 @@
 import { queryOptions, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type * as z from "zod/mini";
+import { addPerson, listPeople } from "#shared/api/people.ts";
 import {
-  addMember,
   createSurvey,
-  listMembers,
   listOtherSurveys,
   listSurveys,
   readSurvey,
@@ -12,12 +11,11 @@ import { call } from "../../api/call.ts";
 import { surveyKey, surveysKey } from "../../api/keys.ts";
 
 export type NewSurvey = z.input<typeof createSurvey.body>;
-export type NewMember = z.input<typeof addMember.body>;
+export type NewMember = z.input<typeof addPerson.body>;
 
 const surveysQuery = queryOptions({
   queryKey: surveysKey,
   queryFn: ({ signal }) => call(listSurveys, { signal }),
-  select: ({ surveys }) => surveys,
 });
 
 export function useSurveys() {
@@ -55,7 +53,7 @@ export function useCreateSurvey() {
 export function useMembers(surveyId: string) {
   return useQuery({
     queryKey: surveyKey(surveyId, "people"),
-    queryFn: ({ signal }) => call(listMembers, { params: { surveyId }, signal }),
+    queryFn: ({ signal }) => call(listPeople, { params: { surveyId }, signal }),
     select: ({ members }) => members,
   });
 }
@@ -64,7 +62,7 @@ export function useAddMember(surveyId: string) {
   const queries = useQueryClient();
   return useMutation({
     meta: { keeps: true },
-    mutationFn: (body: NewMember) => call(addMember, { params: { surveyId }, body }),
+    mutationFn: (body: NewMember) => call(addPerson, { params: { surveyId }, body }),
     onSuccess: (answer) => {
       queries.setQueryData(surveyKey(surveyId, "people"), answer);
       // Not waited for: the form empties now, not while the next person is being typed.

@@ -2,7 +2,7 @@ import type { Role } from "#shared/access/table.ts";
 import type { Session } from "#shared/api/accounts.ts";
 import type { AreaVersion, PlaneRings } from "#shared/api/area.ts";
 import type { FrameSpec, FrameVersion } from "#shared/api/frame.ts";
-import { STAGES, type StageState, type Survey } from "#shared/api/surveys.ts";
+import { type ListedSurvey, STAGES, type StageState, type Survey } from "#shared/api/surveys.ts";
 
 export function session(part: Partial<Session> = {}): Session {
   return {
@@ -28,6 +28,7 @@ export function survey(roles: Role[] = ["planner"], part: Partial<Survey> = {}):
     stages: stages(),
     outline: null,
     createdAt: "2031-05-02T08:00:00Z",
+    archivedAt: null,
     timeZone: "Europe/Paris",
     level: "0.95",
     safetyNotes: "",
@@ -36,6 +37,13 @@ export function survey(roles: Role[] = ["planner"], part: Partial<Survey> = {}):
     memberId: "m1",
     ...part,
   };
+}
+
+/** As the list of surveys has it. */
+export function listed(roles: Role[] = ["planner"], part: Partial<ListedSurvey> = {}): ListedSurvey {
+  const { id, name, target, season, stages: states, outline, createdAt, archivedAt } = survey(roles);
+  const head = { id, name, target, season, roles, stages: states, outline, createdAt, archivedAt };
+  return { ...head, newestEvent: { sequence: 7, at: "2031-05-03T09:30:00Z" }, waiting: [], ...part };
 }
 
 /** 100 m × 100 m, as imported. */
