@@ -1,5 +1,5 @@
 import { randomUUID } from "node:crypto";
-import express, { type Express, Router } from "express";
+import express, { type Express, type RequestHandler, Router } from "express";
 import { rateLimit } from "express-rate-limit";
 import helmet from "helmet";
 import { pinoHttp } from "pino-http";
@@ -19,8 +19,29 @@ interface AppOptions {
   readonly https: boolean;
   /** Folder of the built client; null serves the interface only. */
   readonly clientFolder: string | null;
-  /** Sign-in attempts a minute from one address. */
+  /** Attempts a minute from one network address to sign in, to accept an invitation, to ask for a link and to use one. */
   readonly signInsPerMinute: number;
+}
+
+/**
+ * What nobody has to be signed in for and yet takes a password's work or writes a mail: a cap a minute for each, whoever is
+ * meant, so that a flood can't keep the processor busy. How often a password may be wrong is services/expect-attempt.ts.
+ */
+const COSTLY = [
+  "/api/session",
+  "/api/invitations/:secret",
+  "/api/password-resets",
+  "/api/password-resets/:secret",
+] as const;
+
+function limiter(limit: number): RequestHandler {
+  return rateLimit({
+    windowMs: 60_000,
+    limit,
+    standardHeaders: true,
+    legacyHeaders: false,
+    handler: (_req, _res, next) => next(new Problem("too-many-requests", "Wait a minute, then try again.")),
+  });
 }
 
 /** Builds the app without listening, so that a test can drive it over a port of its own. */
@@ -55,18 +76,7 @@ export function createApp(platform: Platform, options: AppOptions): Express {
     }),
   );
   app.use(sameOriginOnly);
-  app.post(
-    "/api/session",
-    rateLimit({
-      windowMs: 60_000,
-      limit: options.signInsPerMinute,
-      standardHeaders: true,
-      legacyHeaders: false,
-      handler: (_req, _res, next) => {
-        next(new Problem("too-many-requests", "Wait a minute, then try to sign in again."));
-      },
-    }),
-  );
+  for (const path of COSTLY) app.post(path, limiter(options.signInsPerMinute));
   const api = Router();
   const sessions = openSessions(platform, { secret: options.sessionSecret, https: options.https });
   routes(mountOn(api, platform, sessions));

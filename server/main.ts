@@ -19,6 +19,7 @@ import { readSecrets } from "./secrets.ts";
 import { createAccount } from "./services/create-account.ts";
 import { sendQueue } from "./mail/send-queue.ts";
 import { dailyBackupRound } from "./services/daily-backup.ts";
+import { forgetEnded } from "./services/end-sessions.ts";
 import { tellCountDays } from "./services/tell-count-days.ts";
 
 /** Environment, database, server, and an orderly stop: open, listen, print where, close. */
@@ -90,6 +91,7 @@ const MINUTE_MS = 60_000;
 function roundsOf(platform: Platform, { databaseFile }: Env): Round[] {
   const rounds: Round[] = [
     { name: "mail", everyMs: MINUTE_MS / 4, work: () => sendQueue(platform) },
+    { name: "what signing in needs no more", everyMs: 60 * MINUTE_MS, work: () => forgetEnded(platform) },
     { name: "days with counts", everyMs: 5 * MINUTE_MS, work: () => tellCountDays(platform) },
   ];
   const copies = platform.dailyCopies;

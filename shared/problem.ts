@@ -28,12 +28,15 @@ export const PROBLEMS = {
   "password-wrong": { status: 422, title: "This is not the present password" },
   "link-ended": { status: 410, title: "This link no longer works" },
   "mail-not-sendable": { status: 409, title: "This mail cannot be sent again" },
+  "account-closed": { status: 409, title: "This account is closed" },
   "last-owner": { status: 409, title: "An installation needs an owner" },
   // surveys
   "survey-not-found": { status: 404, title: "There is no such survey here" },
   "survey-archived": { status: 409, title: "This survey is archived" },
   "last-planner": { status: 409, title: "A survey needs a planner" },
   "name-differs": { status: 422, title: "The name is not the survey's" },
+  "counts-not-whole": { status: 409, title: "Some counts are no whole numbers" },
+  "invitation-exists": { status: 409, title: "This person is invited already" },
   "member-exists": { status: 409, title: "This person holds this role already" },
   "account-not-found": { status: 404, title: "There is no account with this address" },
   // area

@@ -1,6 +1,6 @@
 import { eq } from "drizzle-orm";
 import type { Reader } from "./open.ts";
-import { members } from "./schema/accounts.ts";
+import { invitations, members } from "./schema/accounts.ts";
 import { areaVersions } from "./schema/area.ts";
 import { declarations, draws } from "./schema/draw.ts";
 import { visits } from "./schema/field.ts";
@@ -13,6 +13,7 @@ const TABLES = {
   drawId: draws,
   visitId: visits,
   memberId: members,
+  invitationId: invitations,
 } as const;
 
 /** Parts of a survey's paths that are no ids. */
@@ -26,7 +27,7 @@ export function isOwnedParam(name: string): name is keyof typeof TABLES {
 }
 
 /** The survey that the thing with this id belongs to. */
-export function surveyOf(reader: Reader, param: keyof typeof TABLES, id: string): string | undefined {
+export function surveyOf(reader: Reader, param: keyof typeof TABLES, id: string): string | null | undefined {
   const table = TABLES[param];
   return reader.select({ surveyId: table.surveyId }).from(table).where(eq(table.id, id)).get()?.surveyId;
 }

@@ -39,6 +39,41 @@ export function upsertMembership(tx: Tx, memberId: string, role: Role, addedAt: 
     .run();
 }
 
+export function endMembership(tx: Tx, memberId: string, role: Role, removedAt: string): void {
+  tx.update(memberships)
+    .set({ removedAt })
+    .where(and(eq(memberships.memberId, memberId), eq(memberships.role, role)))
+    .run();
+}
+
+/** Under which opaque ids the records of surveys name an account, also of surveys that this person left. */
+export function membersOfAccount(reader: Reader, accountId: string) {
+  return reader.select().from(members).where(eq(members.accountId, accountId)).orderBy(members.addedAt).all();
+}
+
+export function accountOfMember(reader: Reader, memberId: string): string | undefined {
+  return reader.select({ id: members.accountId }).from(members).where(eq(members.id, memberId)).get()?.id;
+}
+
+/** Accounts of the planners of a survey who can sign in. */
+export function openPlanners(reader: Reader, surveyId: string): string[] {
+  return reader
+    .select({ id: accounts.id })
+    .from(members)
+    .innerJoin(accounts, eq(accounts.id, members.accountId))
+    .innerJoin(memberships, eq(memberships.memberId, members.id))
+    .where(
+      and(
+        eq(members.surveyId, surveyId),
+        eq(memberships.role, "planner"),
+        isNull(memberships.removedAt),
+        isNull(accounts.closedAt),
+      ),
+    )
+    .all()
+    .map((row) => row.id);
+}
+
 export interface MemberRow {
   readonly id: string;
   readonly name: string;
@@ -74,4 +109,16 @@ export function memberNames(reader: Reader, surveyId: string): Map<string, strin
     .where(eq(members.surveyId, surveyId))
     .all();
   return new Map(rows.map((row) => [row.id, row.name]));
+}
+
+/** Whether anybody holds a role in a survey. */
+export function isRoleHeld(reader: Reader, surveyId: string, role: Role): boolean {
+  const found = reader
+    .select({ id: members.id })
+    .from(members)
+    .innerJoin(memberships, eq(memberships.memberId, members.id))
+    .where(and(eq(members.surveyId, surveyId), eq(memberships.role, role), isNull(memberships.removedAt)))
+    .limit(1)
+    .get();
+  return found !== undefined;
 }

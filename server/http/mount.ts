@@ -11,7 +11,7 @@ import { standingOf } from "../db/members.ts";
 import { isArchived } from "../db/surveys.ts";
 import { parse } from "./parse.ts";
 import { type FileAnswer, send } from "./send.ts";
-import type { Sessions } from "./session.ts";
+import type { Proven, Sessions } from "./session.ts";
 import { seenVersion, versionOf } from "./version.ts";
 
 type Schema = z.core.$ZodType;
@@ -27,8 +27,10 @@ interface Input<P extends Schema, Q extends Schema, B extends Schema> {
   readonly body: z.output<B>;
   /** Present for contracts with an upload. */
   readonly file: UploadedFile;
-  /** Starts and ends the session of this request. */
-  readonly session: { start(accountId: string): Promise<void>; end(): Promise<void> };
+  /** Starts and ends the session of this request, and says which it came with. */
+  readonly session: { id(): Promise<string>; start(proven: Proven): Promise<void>; end(): Promise<void> };
+  /** Network address of whoever asks. */
+  readonly source: string;
   /** Aborts when the caller has gone. */
   readonly signal: AbortSignal;
   /** For versioned contracts: refuses unless this is the version that the caller saw. To be called inside the transaction. */
@@ -82,11 +84,13 @@ export function mountOn(router: Router, platform: Platform, sessions: Sessions):
       const gone = new AbortController();
       res.on("close", () => gone.abort());
       const session = {
-        start: (accountId: string) => sessions.start(req, res, accountId),
+        id: () => sessions.id(req, res),
+        start: (proven: Proven) => sessions.start(req, res, proven),
         end: () => sessions.end(req, res),
       };
       const expectSeen = seenVersion(contract, req);
-      const input = { params, query, body, file, session, signal: gone.signal, expectSeen };
+      const source = req.ip ?? "unknown";
+      const input = { params, query, body, file, session, source, signal: gone.signal, expectSeen };
       const result = await (handler as (ctx: unknown, input: unknown) => unknown)(ctx, input);
       if (contract.versioned === true) res.setHeader("ETag", versionOf(contract.answer, result));
       await send(res, contract.answer, result);

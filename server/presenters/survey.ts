@@ -1,8 +1,7 @@
 import type { Role } from "#shared/access/table.ts";
-import type { ListedSurvey, Member, OtherSurvey, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
+import type { ListedSurvey, OtherSurvey, StageState, Survey, SurveySummary } from "#shared/api/surveys.ts";
 import type { WaitingThing } from "#shared/api/waiting.ts";
 import type { EventRow } from "../db/events.ts";
-import type { MemberRow } from "../db/members.ts";
 import type { SeasonRow, SurveyRow, TargetRow } from "../db/surveys.ts";
 
 interface SurveyParts {
@@ -65,15 +64,4 @@ export function presentSurvey(parts: SurveyParts): Survey {
 /** What an owner without a role is told of a survey: enough to find it. */
 export function presentOtherSurvey({ id, name, createdAt }: SurveyRow): OtherSurvey {
   return { id, name, createdAt };
-}
-
-/** One entry a person, with the roles held now. */
-export function presentMembers(rows: readonly MemberRow[]): Member[] {
-  const people = new Map<string, Member>();
-  for (const row of rows) {
-    const known = people.get(row.id);
-    if (known) known.roles.push(row.role);
-    else people.set(row.id, { id: row.id, name: row.name, email: row.email, addedAt: row.addedAt, roles: [row.role] });
-  }
-  return [...people.values()];
 }

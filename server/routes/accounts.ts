@@ -6,9 +6,9 @@ import { checkPassword } from "../services/check-password.ts";
 export function accountRoutes(mount: Mount): void {
   mount.open(api.readSession, (ctx) => presentSession(ctx, ctx.account));
 
-  mount.open(api.signIn, async (ctx, { body, session }) => {
-    const account = await checkPassword(ctx, body.email, body.password);
-    await session.start(account.id);
+  mount.open(api.signIn, async (ctx, { body, source, session }) => {
+    const account = await checkPassword(ctx, { ...body, source });
+    await session.start(account);
     return presentSession(ctx, account);
   });
 

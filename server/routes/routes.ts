@@ -7,14 +7,18 @@ import { drawRoutes } from "./draw.ts";
 import { estimateRoutes } from "./estimate.ts";
 import { fieldRoutes } from "./field.ts";
 import { installationRoutes } from "./installation.ts";
+import { peopleRoutes } from "./people.ts";
 import { recordRoutes } from "./record.ts";
+import { settingsRoutes } from "./settings.ts";
 import { surveyRoutes } from "./surveys.ts";
 
 /** Every route there is, in the order of the layer words. */
 export function routes(mount: Mount): void {
   accountRoutes(mount);
   installationRoutes(mount);
+  peopleRoutes(mount);
   surveyRoutes(mount);
+  settingsRoutes(mount);
   areaRoutes(mount);
   frameRoutes(mount);
   drawRoutes(mount);

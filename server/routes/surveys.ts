@@ -1,9 +1,7 @@
 import * as api from "#shared/api/surveys.ts";
 import type { Mount } from "../http/mount.ts";
-import { presentListedSurvey, presentMembers, presentOtherSurvey, presentSurvey } from "../presenters/survey.ts";
-import { addMember } from "../services/add-member.ts";
+import { presentListedSurvey, presentOtherSurvey, presentSurvey } from "../presenters/survey.ts";
 import { createSurvey } from "../services/create-survey.ts";
-import { listMembers } from "../services/list-members.ts";
 import { listOtherSurveys, listSurveys, readSurvey } from "../services/read-surveys.ts";
 
 export function surveyRoutes(mount: Mount): void {
@@ -21,11 +19,4 @@ export function surveyRoutes(mount: Mount): void {
   );
 
   mount.survey(api.readSurvey, (ctx) => presentSurvey(readSurvey(ctx.db, ctx.surveyId, ctx.account.id)));
-
-  mount.survey(api.listMembers, (ctx) => ({ members: presentMembers(listMembers(ctx)) }));
-
-  mount.survey(api.addMember, async (ctx, { body }) => {
-    await addMember(ctx, body);
-    return { members: presentMembers(listMembers(ctx)) };
-  });
 }

@@ -1,18 +1,32 @@
 import { Problem } from "#shared/problem.ts";
-import type { Platform, Visitor } from "../context.ts";
-import { findAccountByEmail } from "../db/accounts.ts";
-import { hashPassword, passwordFits } from "./passwords.ts";
+import type { Platform } from "../context.ts";
+import { type AccountRow, findAccountByEmail } from "../db/accounts.ts";
+import { deleteFailuresOf } from "../db/sign-in-failures.ts";
+import { type Attempt, expectAttempt } from "./expect-attempt.ts";
+import { decoyHash, passwordFits } from "./passwords.ts";
 
-/** A hash that no password fits, so that an unknown address takes as long to refuse as a wrong password. */
 let decoy: Promise<string> | undefined;
 
-/** Who this is, or one refusal for an unknown address and a wrong password alike. */
-export async function checkPassword(platform: Platform, email: string, password: string): Promise<Visitor["account"]> {
+type Tried = Attempt & { readonly password: string };
+
+/** Who this is, or one refusal for an unknown address, a wrong password and a closed account alike. */
+export async function checkPassword(platform: Platform, tried: Tried): Promise<AccountRow> {
+  const account = await whoseFits(platform, tried);
+  if (account) return account;
+  throw new Problem("sign-in-refused", "Check both and try again; an owner of this installation can help.");
+}
+
+/**
+ * The account that an address and a password belong to, or null, which counts against the limits.
+ * @throws Problem `too-many-requests`
+ */
+export async function whoseFits(platform: Platform, { password, ...attempt }: Tried): Promise<AccountRow | null> {
+  const email = attempt.email.toLowerCase();
+  expectAttempt(platform, { ...attempt, email });
   const account = findAccountByEmail(platform.db, email);
-  decoy ??= hashPassword(Buffer.from(platform.random(24)).toString("hex"));
+  decoy ??= decoyHash(platform.random);
   const fits = await passwordFits(account?.passwordHash ?? (await decoy), password);
-  if (!account || !fits) {
-    throw new Problem("sign-in-refused", "Check both and try again; an owner of this installation can help.");
-  }
-  return { id: account.id, name: account.name, email: account.email, isOwner: account.isOwner };
+  if (!account || !fits || account.closedAt !== null) return null;
+  deleteFailuresOf(platform.db, email);
+  return account;
 }

@@ -1,9 +1,9 @@
 import { Problem } from "#shared/problem.ts";
 import type { Platform } from "../context.ts";
-import { findAccountByEmail, insertAccount } from "../db/accounts.ts";
-import { writeTx } from "../db/open.ts";
+import { type AccountRow, findAccountByEmail, insertAccount } from "../db/accounts.ts";
+import { type Tx, writeTx } from "../db/open.ts";
 import { newId } from "./new-id.ts";
-import { hashPassword } from "./passwords.ts";
+import { hashNewPassword } from "./passwords.ts";
 
 interface NewAccount {
   readonly email: string;
@@ -18,22 +18,23 @@ export async function createAccount(
   wanted: NewAccount,
 ): Promise<string> {
   const email = wanted.email.trim().toLowerCase();
-  const passwordHash = await hashPassword(wanted.password);
+  const name = wanted.name.trim();
+  const passwordHash = await hashNewPassword(wanted.password, { name, email });
   return writeTx(platform.db, (tx) => {
     if (findAccountByEmail(tx, email)) {
       throw new Problem("account-exists", `${email} has an account: use it, or another address.`);
     }
-    const id = newId(platform);
-    const createdAt = platform.now().toISOString();
-    insertAccount(tx, {
-      id,
-      email,
-      name: wanted.name.trim(),
-      passwordHash,
-      isOwner: wanted.isOwner,
-      createdAt,
-      closedAt: null,
-    });
-    return id;
+    return addAccount(tx, platform, { email, name, passwordHash, isOwner: wanted.isOwner }).id;
   });
+}
+
+/** Writes an open account, in the transaction of what it is made for. */
+export function addAccount(
+  tx: Tx,
+  platform: Pick<Platform, "now" | "random">,
+  made: Pick<AccountRow, "email" | "name" | "passwordHash" | "isOwner">,
+): AccountRow {
+  const row = { id: newId(platform), ...made, createdAt: platform.now().toISOString(), closedAt: null };
+  insertAccount(tx, row);
+  return row;
 }

@@ -7,7 +7,9 @@ import * as estimate from "#shared/api/estimate.ts";
 import * as field from "#shared/api/field.ts";
 import * as frame from "#shared/api/frame.ts";
 import * as installation from "#shared/api/installation.ts";
+import * as people from "#shared/api/people.ts";
 import * as record from "#shared/api/record.ts";
+import * as settings from "#shared/api/settings.ts";
 import * as surveys from "#shared/api/surveys.ts";
 
 /** Whether a thing that a module exports is a contract: schemas and constants stand beside them. */
@@ -19,7 +21,9 @@ function isContract(thing: unknown): thing is Contract {
 export const ALL_CONTRACTS: readonly Contract[] = [
   accounts,
   installation,
+  people,
   surveys,
+  settings,
   area,
   frame,
   draw,

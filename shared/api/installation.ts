@@ -132,6 +132,18 @@ export const inviteAccount = contract({
   answer: accounts,
 });
 
+export const withdrawAccountInvitation = contract({
+  name: "withdrawAccountInvitation",
+  method: "DELETE",
+  path: "/api/installation/invitations/:invitationId",
+  guard: "owner",
+  summary: "End an invitation to the installation that nobody has accepted",
+  params: z.object({ invitationId: id }),
+  query: none,
+  body: none,
+  answer: accounts,
+});
+
 export const changeAccount = contract({
   name: "changeAccount",
   method: "PUT",

@@ -218,6 +218,7 @@ export const signedInAt = z.object({
   userAgent: z.string(),
   isThis: z.boolean(),
 });
+export type SignedInAt = z.infer<typeof signedInAt>;
 const sessions = json(z.object({ sessions: z.array(signedInAt) }));
 
 export const listSessions = contract({

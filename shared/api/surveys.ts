@@ -1,5 +1,5 @@
 import * as z from "zod/mini";
-import { email, id, longText, none, role, shortText, surveyParams, utc } from "#shared/api/common.ts";
+import { id, longText, none, role, shortText, surveyParams, utc } from "#shared/api/common.ts";
 import { contract, json } from "#shared/api/contract.ts";
 import { ownersWaiting, waitingThing } from "#shared/api/waiting.ts";
 
@@ -57,15 +57,6 @@ export const survey = z.extend(surveySummary, {
   memberId: z.nullable(id),
 });
 export type Survey = z.infer<typeof survey>;
-
-export const member = z.object({
-  id,
-  name: z.string(),
-  email: z.string(),
-  roles: z.array(role),
-  addedAt: utc,
-});
-export type Member = z.infer<typeof member>;
 
 export const listSurveys = contract({
   name: "listSurveys",
@@ -131,32 +122,4 @@ export const readSurvey = contract({
   query: none,
   body: none,
   answer: json(survey),
-});
-
-export const listMembers = contract({
-  name: "listMembers",
-  method: "GET",
-  path: "/api/surveys/:surveyId/members",
-  guard: "people.see",
-  summary: "The people of a survey and their roles",
-  params: surveyParams,
-  query: none,
-  body: none,
-  answer: json(z.object({ members: z.array(member) })),
-});
-
-export const addMember = contract({
-  name: "addMember",
-  method: "POST",
-  path: "/api/surveys/:surveyId/members",
-  guard: "people.change",
-  summary: "Give somebody a role; a name and a first password make the account where there is none",
-  params: surveyParams,
-  query: none,
-  body: z.object({
-    email,
-    role,
-    newAccount: z.optional(z.object({ name: shortText, password: z.string().check(z.maxLength(1000)) })),
-  }),
-  answer: json(z.object({ members: z.array(member) })),
 });

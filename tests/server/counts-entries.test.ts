@@ -2,7 +2,7 @@ import { randomUUID } from "node:crypto";
 import { describe, expect, test } from "vitest";
 import { enterCounts, listEntries } from "#shared/api/counts.ts";
 import { assignVisits, listVisits } from "#shared/api/field.ts";
-import { listMembers } from "#shared/api/surveys.ts";
+import { listPeople } from "#shared/api/people.ts";
 import { allEvents } from "#server/db/events.ts";
 import { drawnSurveyEachTest, MADE } from "../fixtures/drawn-survey.ts";
 import { anotherSurvey } from "../fixtures/sealed-frame.ts";
@@ -92,7 +92,7 @@ describe("what can be entered, and by whom", () => {
   });
 
   test("a counter writes to their own cells only, and reads only theirs", async () => {
-    const members = (await survey.team.planner.call(listMembers, { params: survey.here() })).json.members;
+    const members = (await survey.team.planner.call(listPeople, { params: survey.here() })).json.members;
     const memberId = members.find((member) => member.roles.includes("counter"))?.id ?? "";
     const refused = await survey.enter([survey.entry(0, { state: "counted", value: 1 })], "counter");
     expect(refused.json.code).toBe("not-allowed");
@@ -112,17 +112,22 @@ describe("what can be entered, and by whom", () => {
   });
 
   test("what was kept is answered as kept when it is sent again after the cell went to somebody else", async () => {
-    const { members } = (await survey.team.planner.call(listMembers, { params: survey.here() })).json;
+    const { members } = (await survey.team.planner.call(listPeople, { params: survey.here() })).json;
     const idOf = (role: "counter" | "lead") => members.find((member) => member.roles.includes(role))?.id ?? "";
-    const give = (memberId: string) =>
+    const give = (memberId: string, from?: string) =>
       survey.team.lead.call(assignVisits, {
         params: survey.here(),
-        body: { visitIds: [survey.cell(0).id], memberId, day: "" },
+        body: {
+          visitIds: [survey.cell(0).id],
+          memberId,
+          day: "",
+          seen: from === undefined ? [] : [{ visitId: survey.cell(0).id, memberId: from, day: "" }],
+        },
       });
     await give(idOf("counter"));
     const one = survey.entry(0, { state: "counted", value: 1 });
     await survey.enter([one], "counter");
-    await give(idOf("lead"));
+    await give(idOf("lead"), idOf("counter"));
     const before = survey.kinds().length;
     const again = await survey.enter([one], "counter");
     expect(again.status).toBe(200);

@@ -53,8 +53,9 @@ describe("the demo", () => {
     expect(JSON.parse(readFileSync(file, "utf8"))).toEqual(accounts);
     expect(new Set(accounts.map(({ password }) => password)).size).toBe(5);
     for (const { email, password, role } of accounts) {
-      const platform = { db, random: (bytes: number) => new Uint8Array(bytes) };
-      const account = await checkPassword(platform as Parameters<typeof checkPassword>[0], email, password);
+      const platform = { db, now: () => new Date(), random: (bytes: number) => new Uint8Array(bytes) };
+      const tried = { email, password, source: "here" };
+      const account = await checkPassword(platform as Parameters<typeof checkPassword>[0], tried);
       expect(account.isOwner).toBe(role === "owner");
     }
   });

@@ -1,7 +1,7 @@
 import { describe, expect, test } from "vitest";
 import { abandonDeclaration, declareDraw, listDraws, makeDraw, readDraw, withdrawDraw } from "#shared/api/draw.ts";
 import { assignVisits, exportWaypoints } from "#shared/api/field.ts";
-import { listMembers } from "#shared/api/surveys.ts";
+import { listPeople } from "#shared/api/people.ts";
 import { allEvents } from "#server/db/events.ts";
 import { anotherSurvey, declaring, drawCells, putSealedFrame } from "../fixtures/sealed-frame.ts";
 import { surveyEachTest } from "../fixtures/each-survey.ts";
@@ -176,7 +176,7 @@ describe("who sees what", () => {
     const draw = await drawCells(survey.team, declaring(survey.frame.frameId));
     const params = { ...survey.here(), drawId: draw.id };
     expect((await survey.team.counter.call(readDraw, { params })).json.entries).toEqual([]);
-    const members = (await survey.team.planner.call(listMembers, { params: survey.here() })).json.members;
+    const members = (await survey.team.planner.call(listPeople, { params: survey.here() })).json.members;
     const memberId = members.find((member) => member.roles.includes("counter"))?.id ?? "";
     const visitId = draw.entries[0]?.visitId ?? "";
     await survey.team.lead.call(assignVisits, {

@@ -6,7 +6,7 @@ import { ringsFromJson } from "#shared/geometry/rings.ts";
 import { WHOLE_CELL } from "#shared/units/metric.ts";
 import type { Context, Platform } from "../../context.ts";
 import type { PlaneRow } from "../../db/areas.ts";
-import { addMember } from "../add-member.ts";
+import { addPerson } from "../add-person.ts";
 import { amendCount } from "../amend-count.ts";
 import { assignVisits } from "../assign-visits.ts";
 import { closePick } from "../close-pick.ts";
@@ -69,7 +69,7 @@ async function beginSurvey(story: Story): Promise<string> {
   });
   for (const role of ["lead", "counter", "auditor"] as const) {
     story.later(3);
-    await addMember(story.context("planner", surveyId), { email: story.visitor(role).account.email, role });
+    addPerson(story.context("planner", surveyId), { email: story.visitor(role).account.email, role });
   }
   return surveyId;
 }
@@ -94,14 +94,8 @@ async function sealGrid(story: Story, surveyId: string, plane: PlaneRow): Promis
     rotationMicroDegrees: 0,
   } as const;
   const { membership, countIn } = EDGE_PRESETS.clip;
-  const draft = saveDraftFrame(planner, {
-    areaId: plane.areaVersionId,
-    epsg: plane.epsg,
-    cells,
-    membership: { rule: "touch" },
-    countIn,
-    leftOut: [],
-  });
+  const spec = { areaId: plane.areaVersionId, epsg: plane.epsg, cells, membership, countIn, leftOut: [] };
+  const draft = saveDraftFrame(planner, spec, null);
   story.later(25);
   const measured = measureCells(ringsFromJson(JSON.parse(plane.rings)), cells);
   const seen = { draftSha256: draft.draftSha256, cells: summarise(measured, membership, countIn).cells };
@@ -132,9 +126,9 @@ async function shareOut(story: Story, surveyId: string): Promise<void> {
   const ids = listVisits(lead).visits.map(({ visit }) => visit.id);
   const half = Math.ceil(ids.length / 2);
   const counter = story.context("counter", surveyId).memberId;
-  assignVisits(lead, { visitIds: ids.slice(0, half), memberId: counter, day: "First week" });
+  assignVisits(lead, { visitIds: ids.slice(0, half), memberId: counter, day: "First week", seen: [] });
   story.later(2);
-  assignVisits(lead, { visitIds: ids.slice(half), memberId: lead.memberId, day: "Second week" });
+  assignVisits(lead, { visitIds: ids.slice(half), memberId: lead.memberId, day: "Second week", seen: [] });
   story.later(20);
   const wanted = { format: "gpx", nameLength: 8, prefix: "", memberId: null } as const;
   await exportWaypoints(story.context("lead", surveyId), wanted, never);

@@ -1,7 +1,7 @@
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type * as z from "zod/mini";
 import { assignVisits, closePick, exportWaypoints } from "#shared/api/field.ts";
-import { listMembers, type Member } from "#shared/api/surveys.ts";
+import { listPeople, type Member } from "#shared/api/people.ts";
 import { call } from "../../api/call.ts";
 import { surveyKey } from "../../api/keys.ts";
 import { saveFile } from "../../api/save-file.ts";
@@ -10,7 +10,7 @@ import { saveFile } from "../../api/save-file.ts";
 export function useFieldMembers(surveyId: string) {
   return useQuery({
     queryKey: surveyKey(surveyId, "people"),
-    queryFn: ({ signal }) => call(listMembers, { params: { surveyId }, signal }),
+    queryFn: ({ signal }) => call(listPeople, { params: { surveyId }, signal }),
     select: ({ members }): Member[] => members.filter(({ roles }) => roles.some((role) => role !== "auditor")),
   });
 }

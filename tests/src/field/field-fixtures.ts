@@ -1,6 +1,6 @@
 import type * as z from "zod/mini";
 import type { listVisits, Visit } from "#shared/api/field.ts";
-import type { Member } from "#shared/api/surveys.ts";
+import type { Member } from "#shared/api/people.ts";
 
 export type VisitList = z.input<typeof listVisits.answer.schema>;
 
@@ -62,7 +62,28 @@ export function visitList(visits: Visit[], part: Partial<VisitList> = {}): Visit
 }
 
 export const people: Member[] = [
-  { id: "m1", name: "Ines Marrow", email: "ines@example.org", roles: ["lead"], addedAt: "2031-05-02T08:00:00Z" },
-  { id: "m2", name: "Tove Lind", email: "tove@example.org", roles: ["counter"], addedAt: "2031-05-02T08:00:00Z" },
-  { id: "m3", name: "Ada Quill", email: "ada@example.org", roles: ["auditor"], addedAt: "2031-05-02T08:00:00Z" },
+  {
+    id: "m1",
+    name: "Ines Marrow",
+    email: "ines@example.org",
+    roles: ["lead"],
+    addedAt: "2031-05-02T08:00:00Z",
+    isSelf: false,
+  },
+  {
+    id: "m2",
+    name: "Tove Lind",
+    email: "tove@example.org",
+    roles: ["counter"],
+    addedAt: "2031-05-02T08:00:00Z",
+    isSelf: false,
+  },
+  {
+    id: "m3",
+    name: "Ada Quill",
+    email: "ada@example.org",
+    roles: ["auditor"],
+    addedAt: "2031-05-02T08:00:00Z",
+    isSelf: false,
+  },
 ];

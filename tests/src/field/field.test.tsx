@@ -3,7 +3,8 @@ import userEvent from "@testing-library/user-event";
 import { afterEach, expect, test, vi } from "vitest";
 import { readSession } from "#shared/api/accounts.ts";
 import { assignVisits, closePick, exportWaypoints, listVisits } from "#shared/api/field.ts";
-import { listMembers, readSurvey } from "#shared/api/surveys.ts";
+import { listPeople } from "#shared/api/people.ts";
+import { readSurvey } from "#shared/api/surveys.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Role } from "#shared/access/table.ts";
 import { FakeApi } from "../app/fake-api.ts";
@@ -25,7 +26,7 @@ function open(roles: Role[], list: VisitList) {
   const api = new FakeApi()
     .on(readSession, () => session())
     .on(readSurvey, () => survey(roles))
-    .on(listMembers, () => ({ members: people }))
+    .on(listPeople, () => ({ members: people, invitations: [] }))
     .on(listVisits, () => state.list);
   return { api, state };
 }
@@ -225,7 +226,7 @@ test("a counter sees their own cells only, with waypoints and the way to the cou
   expect(screen.queryByRole("checkbox")).toBeNull();
   expect(screen.queryByLabelText("Cells of")).toBeNull();
   expect(screen.queryByText("Reserves left")).toBeNull();
-  expect(api.named("listMembers")).toEqual([]);
+  expect(api.named("listPeople")).toEqual([]);
   await userEvent.click(await rowOf("A4"));
   expect(screen.queryByRole("button", { name: /^Close/ })).toBeNull();
   screen.getByRole("button", { name: "Save as GPX" });

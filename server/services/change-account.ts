@@ -1,0 +1,30 @@
+import { Problem } from "#shared/problem.ts";
+import type { Visitor } from "../context.ts";
+import { findAccount, openOwners, updateAccount } from "../db/accounts.ts";
+import { writeTx } from "../db/open.ts";
+import { deleteSessionsOf } from "../db/sessions.ts";
+import { endResets } from "./send-reset.ts";
+
+interface Wanted {
+  readonly isOwner: boolean;
+  readonly closed: boolean;
+}
+
+/**
+ * Makes somebody an owner or not, closes their account or opens it again. Closing ends their sessions; their roles stay, and
+ * so do their names on records.
+ * @throws Problem `account-not-found`; `last-owner` where nobody who can sign in would be an owner
+ */
+export function changeAccount(ctx: Visitor, accountId: string, { isOwner, closed }: Wanted): void {
+  writeTx(ctx.db, (tx) => {
+    const account = findAccount(tx, accountId);
+    if (!account) throw new Problem("account-not-found", "Reload the page.");
+    const now = ctx.now().toISOString();
+    updateAccount(tx, accountId, { isOwner, closedAt: closed ? (account.closedAt ?? now) : null });
+    // Thrown inside the transaction, which is taken back then.
+    if (openOwners(tx) === 0) throw new Problem("last-owner", "Make somebody else an owner first.");
+    if (!closed) return;
+    deleteSessionsOf(tx, accountId, null);
+    endResets(tx, accountId, now);
+  });
+}

@@ -1,0 +1,55 @@
+import { type Role, ROLES } from "#shared/access/table.ts";
+import { Problem } from "#shared/problem.ts";
+import type { Context } from "../context.ts";
+import { type AccountRow, findAccount } from "../db/accounts.ts";
+import { accountOfMember, openPlanners, standingOf } from "../db/members.ts";
+import { type Reader, type Tx, writeTx } from "../db/open.ts";
+import { deleteSessionsOf } from "../db/sessions.ts";
+import { expectOpenAccount } from "./add-person.ts";
+import { actingOnPeople, endRole, giveRole } from "./give-role.ts";
+import { tellAdded, tellRoleEnded } from "./tell-roles.ts";
+
+/**
+ * The roles that somebody holds from now on; none removes them from the survey, which ends their sessions.
+ * @throws Problem `last-planner`, `account-closed`
+ */
+export function setRoles(ctx: Context, memberId: string, roles: readonly Role[]): void {
+  writeTx(ctx.db, (tx) => {
+    const accountId = accountOfMember(tx, memberId);
+    const account = accountId === undefined ? undefined : findAccount(tx, accountId);
+    if (!account) throw new Error(`member ${memberId} has no account`);
+    const held = standingOf(tx, ctx.surveyId, account.id).roles;
+    const ended = ROLES.filter((role) => held.includes(role) && !roles.includes(role));
+    const given = ROLES.filter((role) => roles.includes(role) && !held.includes(role));
+    if (given.length > 0) expectOpenAccount(account);
+    if (ended.includes("planner")) expectAnotherPlanner(tx, ctx.surveyId, account);
+    changeRoles(tx, ctx, account, { given, ended, last: roles.length === 0 });
+  });
+}
+
+interface Change {
+  readonly given: readonly Role[];
+  readonly ended: readonly Role[];
+  readonly last: boolean;
+}
+
+function changeRoles(tx: Tx, ctx: Context, account: AccountRow, { given, ended, last }: Change): void {
+  if (given.length + ended.length === 0) return;
+  const by = actingOnPeople(tx, ctx);
+  const { surveyId } = ctx;
+  for (const role of given) {
+    giveRole(tx, ctx, { surveyId, account, role, by });
+    tellAdded(tx, ctx, account, role);
+  }
+  for (const role of ended) {
+    endRole(tx, ctx, { surveyId, account, role, by });
+    tellRoleEnded(tx, ctx, account, role, last);
+  }
+  if (last && account.id !== ctx.account.id) deleteSessionsOf(tx, account.id, null);
+}
+
+/** @throws Problem `last-planner` where nobody else who can sign in is planner of the survey */
+export function expectAnotherPlanner(reader: Reader, surveyId: string, account: Pick<AccountRow, "id">): void {
+  if (openPlanners(reader, surveyId).some((id) => id !== account.id)) return;
+  throw new Problem("last-planner", "Make somebody else a planner first.");
+}
