@@ -59,6 +59,17 @@ export function writeTx<T>(db: Db, work: (tx: Tx) => T): T {
   return db.transaction(work, { behavior: "immediate" });
 }
 
+/**
+ * Does work on rows that the triggers guard. Only inside a write transaction: what fails rolls everything back, the triggers
+ * too, and no other connection ever sees the database without them.
+ */
+export function withoutTriggers(db: Db, work: () => void): void {
+  if (!db.$client.inTransaction) throw new Error("the triggers are dropped in a transaction only");
+  dropTriggers(db.$client);
+  work();
+  setTriggers(db.$client);
+}
+
 export function closeDb(db: Db): void {
   db.$client.close();
 }

@@ -9,7 +9,9 @@ import { sealFrame } from "../services/seal-frame.ts";
 export function frameRoutes(mount: Mount): void {
   mount.survey(api.listFrames, (ctx) => ({ frames: listFrames(ctx).map(presentFrame) }));
 
-  mount.survey(api.saveDraftFrame, (ctx, { body }) => presentFrame(viewOfFrame(ctx, saveDraftFrame(ctx, body))));
+  mount.survey(api.saveDraftFrame, (ctx, { body }) =>
+    presentFrame(viewOfFrame(ctx, saveDraftFrame(ctx, body.spec, body.seen))),
+  );
 
   mount.survey(api.sealFrame, async (ctx, { params, body, signal }) =>
     presentFrame(viewOfFrame(ctx, await sealFrame(ctx, params.frameId, body, signal))),

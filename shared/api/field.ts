@@ -71,18 +71,33 @@ export const listVisits = contract({
   ),
 });
 
+/** Who has a cell, as somebody saw it. */
+export const seenAssignment = z.object({ visitId: id, memberId: id, day: z.string() });
+
+/** What a refusal "changed-meanwhile" of sharing out holds as `current`: the cells that are not as they were seen. */
+export const assignmentsNow = z.array(
+  z.object({
+    visitId: id,
+    label: z.string(),
+    assignedTo: z.nullable(z.object({ memberId: id, name: z.string(), day: z.string() })),
+  }),
+);
+export type AssignmentsNow = z.infer<typeof assignmentsNow>;
+
 export const assignVisits = contract({
   name: "assignVisits",
   method: "POST",
   path: "/api/surveys/:surveyId/assignments",
   guard: "field.assign",
-  summary: "Give cells to a member for a day, or take them back",
+  summary: "Give cells to a member for a day, or take them back; refused where another has them than was seen",
   params: surveyParams,
   query: none,
   body: z.object({
     visitIds: z.array(id).check(z.minLength(1), z.maxLength(5000)),
     memberId: z.nullable(id),
     day: z.string().check(z.trim(), z.maxLength(60)),
+    /** Who had these cells when they were chosen; a cell that is not named here was seen with nobody. */
+    seen: z._default(z.array(seenAssignment).check(z.maxLength(5000)), []),
   }),
   answer: json(z.object({ assigned: z.int() })),
 });

@@ -72,6 +72,9 @@ export const frameVersion = z.object({
 });
 export type FrameVersion = z.infer<typeof frameVersion>;
 
+/** What a refusal "changed-meanwhile" of a draft holds as `current`: what is kept now; null where it was sealed. */
+export const draftNow = z.nullable(z.object({ spec: frameSpec, draftSha256: sha256Hex }));
+
 const frameParams = z.object({ surveyId: id, frameId: id });
 
 export const listFrames = contract({
@@ -91,10 +94,14 @@ export const saveDraftFrame = contract({
   method: "PUT",
   path: "/api/surveys/:surveyId/frames/draft",
   guard: "frame.change",
-  summary: "Keep what the planner has set; a draft becomes a version when it is sealed",
+  summary: "Keep what the planner has set over the draft that was seen; a draft becomes a version when it is sealed",
   params: surveyParams,
   query: none,
-  body: frameSpec,
+  body: z.object({
+    spec: frameSpec,
+    /** draftSha256 of the draft that was there when the setting began; null where there was none. */
+    seen: z.nullable(sha256Hex),
+  }),
   answer: json(frameVersion),
 });
 

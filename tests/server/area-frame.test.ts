@@ -111,7 +111,7 @@ describe("the study area", () => {
 describe("the frame", () => {
   test("a sealed frame rebuilds to the same list from its statement alone", async () => {
     const area = await imported();
-    const draft = await team.planner.call(saveDraftFrame, { params: { surveyId }, body: specFor(area.id) });
+    const draft = await keepDraft(specFor(area.id));
     const cells = rebuiltUnits(area.id);
     const params = { surveyId, frameId: draft.json.id };
     const wrong = await team.planner.call(sealFrame, {
@@ -139,7 +139,7 @@ describe("the frame", () => {
   test("changing the cells after a seal makes the next version and leaves the sealed one as it was", async () => {
     const area = await imported();
     const before = (await team.planner.call(listFrames, { params: { surveyId } })).json.frames;
-    const draft = await team.planner.call(saveDraftFrame, { params: { surveyId }, body: specFor(area.id, 40) });
+    const draft = await keepDraft(specFor(area.id, 40));
     expect(draft.json).toMatchObject({ state: "draft", number: (before[0]?.number ?? 0) + 1 });
     const after = (await team.planner.call(listFrames, { params: { surveyId } })).json.frames;
     expect(after.find((frame) => frame.id === before[0]?.id)).toEqual(before[0]);
@@ -147,9 +147,9 @@ describe("the frame", () => {
 
   test("settings that somebody changed meanwhile are not sealed", async () => {
     const area = await imported();
-    const seen = await team.planner.call(saveDraftFrame, { params: { surveyId }, body: specFor(area.id, 40) });
+    const seen = await keepDraft(specFor(area.id, 40));
     const cells = await rebuiltUnits(area.id, 40);
-    await team.planner.call(saveDraftFrame, { params: { surveyId }, body: specFor(area.id, 60) });
+    await keepDraft(specFor(area.id, 60));
     const reply = await team.planner.call(sealFrame, {
       params: { surveyId, frameId: seen.json.id },
       body: { draftSha256: seen.json.draftSha256, cells },
@@ -163,10 +163,17 @@ describe("the frame", () => {
     const area = await imported();
     const spec = specFor(area.id);
     const odd = { ...spec, cells: { ...spec.cells, widthMm: 50_001 } };
-    const reply = await team.planner.call(saveDraftFrame, { params: { surveyId }, body: odd });
+    const reply = await keepDraft(odd);
     expect(reply).toMatchObject({ status: 422, json: { code: "cell-size" } });
   });
 });
+
+/** Keeps a draft over the one that is there now. */
+async function keepDraft(spec: FrameSpec) {
+  const { frames } = (await team.planner.call(listFrames, { params: { surveyId } })).json;
+  const seen = frames[0]?.state === "draft" ? frames[0].draftSha256 : null;
+  return team.planner.call(saveDraftFrame, { params: { surveyId }, body: { spec, seen } });
+}
 
 /** What the planner's browser would have counted: the cells of the plane's rings. */
 async function rebuiltUnits(areaId: string, side = 50): Promise<number> {

@@ -43,6 +43,8 @@ describe("the cells to visit", () => {
   });
 });
 
+const seenWith = (visitId = "", memberId: string, day: string) => [{ visitId, memberId, day }];
+
 describe("assigning", () => {
   test("cells are given for a day, given to another and taken back; each is an event", async () => {
     await drawCells(survey.team, declaring(survey.frame.frameId));
@@ -65,11 +67,11 @@ describe("assigning", () => {
 
     await survey.team.lead.call(assignVisits, {
       params: survey.here(),
-      body: { visitIds: ids.slice(0, 1), memberId: lead, day: "" },
+      body: { visitIds: ids.slice(0, 1), memberId: lead, day: "", seen: seenWith(ids[0], counter, "Tuesday") },
     });
     await survey.team.lead.call(assignVisits, {
       params: survey.here(),
-      body: { visitIds: ids.slice(1, 2), memberId: null, day: "" },
+      body: { visitIds: ids.slice(1, 2), memberId: null, day: "", seen: seenWith(ids[1], counter, "Tuesday") },
     });
     const left = await survey.team.counter.call(listVisits, { params: survey.here() });
     expect(left.json.visits.map((visit) => visit.id)).toEqual(ids.slice(2));

@@ -45,7 +45,7 @@ export async function fillDemo(platform: Platform, accounts: readonly DemoAccoun
   for (const { name, email, password, role } of accounts) {
     await createAccount(story.platform, { name, email, password, isOwner: role === "owner" });
   }
-  const surveyId = await beginSurvey(story);
+  const surveyId = beginSurvey(story);
   const plane = await bringBoundary(story, surveyId);
   const frameId = await sealGrid(story, surveyId, plane);
   await drawCells(story, surveyId, frameId);
@@ -53,7 +53,7 @@ export async function fillDemo(platform: Platform, accounts: readonly DemoAccoun
   countHalf(story, surveyId);
 }
 
-async function beginSurvey(story: Story): Promise<string> {
+function beginSurvey(story: Story): string {
   story.at(1, "08:40");
   const surveyId = createSurvey(story.visitor("planner"), {
     name: "Brannet Heath",

@@ -1,0 +1,32 @@
+import { Problem } from "#shared/problem.ts";
+import type { Context } from "../context.ts";
+import { deleteEverythingOf } from "../db/delete-survey.ts";
+import { newestEvent } from "../db/events.ts";
+import { withoutTriggers, writeTx } from "../db/open.ts";
+import { findSurvey } from "../db/surveys.ts";
+
+/**
+ * Deletes a survey with all that belongs to it. What stays is that it was there and the newest hash of its record, so that
+ * a record file that somebody keeps can be told from a made-up one.
+ * @throws Problem `name-differs` unless the survey's name was typed as it is
+ */
+export function deleteSurvey(ctx: Context, typedName: string): void {
+  writeTx(ctx.db, (tx) => {
+    const survey = findSurvey(tx, ctx.surveyId);
+    if (!survey) throw new Problem("survey-not-found", "It has been deleted.");
+    if (typedName.trim() !== survey.name) {
+      throw new Problem("name-differs", `Type “${survey.name}” as it stands, then delete.`);
+    }
+    const newest = newestEvent(tx, ctx.surveyId);
+    if (!newest) throw new Error(`survey ${ctx.surveyId} has no record`);
+    withoutTriggers(ctx.db, () => {
+      deleteEverythingOf(tx, {
+        id: ctx.surveyId,
+        newestSequence: newest.sequence,
+        newestSha256: newest.sha256,
+        deletedAt: ctx.now().toISOString(),
+        deletedBy: ctx.account.id,
+      });
+    });
+  });
+}
