@@ -3,6 +3,7 @@ import { Button } from "../components/ui/Button.tsx";
 import { Refusal } from "../components/ui/Refusal.tsx";
 import { RuledLoading } from "../components/ui/RuledLoading.tsx";
 import { useSession } from "../features/accounts/queries.ts";
+import { BaseMapContext } from "../map/base-map-context.ts";
 import { paths } from "./paths.ts";
 import { AccountContext } from "./use-account.ts";
 
@@ -28,7 +29,9 @@ export function SignedIn() {
   }
   return (
     <AccountContext value={session.data.account}>
-      <Outlet />
+      <BaseMapContext value={session.data.baseMap}>
+        <Outlet />
+      </BaseMapContext>
     </AccountContext>
   );
 }

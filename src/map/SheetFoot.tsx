@@ -11,14 +11,22 @@ interface SheetFootProps {
   readonly narrow: boolean;
   readonly crsName: string | null;
   readonly legend: ReactNode;
+  /** Whom the base map names; undefined where there is none. */
+  readonly attribution: string | undefined;
 }
 
 /** Below the sheet: scale bar and CRS, legend, north. On a phone the bar lies inside the sheet and only the legend below it. */
-export function SheetFoot({ window, compact, narrow, crsName, legend }: SheetFootProps) {
-  if (compact)
-    return legend === undefined ? null : (
-      <figcaption className="q-sheet-foot q-sheet-foot-compact">{legend}</figcaption>
+export function SheetFoot({ window, compact, narrow, crsName, legend, attribution }: SheetFootProps) {
+  const named = attribution !== undefined && <p className="q-sheet-attribution">{`Base map: ${attribution}`}</p>;
+  if (compact) {
+    if (legend === undefined && named === false) return null;
+    return (
+      <figcaption className="q-sheet-foot q-sheet-foot-compact">
+        {legend}
+        {named}
+      </figcaption>
     );
+  }
   const step = stepOf(window);
   const every = step >= 1000 ? `${step / 1000}\u00a0km` : `${step}\u00a0m`;
   return (
@@ -29,6 +37,7 @@ export function SheetFoot({ window, compact, narrow, crsName, legend }: SheetFoo
       </div>
       <div className="q-sheet-legend">{legend}</div>
       <NorthArrow />
+      {named}
     </figcaption>
   );
 }

@@ -1,6 +1,8 @@
 import { createLeafletContext, LeafletContext } from "@react-leaflet/core";
 import "leaflet/dist/leaflet.css";
-import { useId, useMemo, useRef, useState, type CSSProperties, type ReactNode } from "react";
+import { use, useId, useMemo, useRef, useState, type CSSProperties, type ReactNode } from "react";
+import { BaseMapContext } from "./base-map-context.ts";
+import { BaseMapTiles } from "./BaseMapTiles.tsx";
 import type { LngLatOf } from "./planes.ts";
 import { ScaleBar } from "./ScaleBar.tsx";
 import { SheetBorder } from "./SheetBorder.tsx";
@@ -33,8 +35,10 @@ interface SheetMapProps {
 const UPPER_SLOTS: readonly SheetSlot[] = ["hole", "fill", "drawn", "boundary", "figures", "chosen"];
 
 /** px from the view's anchor to px of the sheet. */
-function shiftOf({ view, window }: PlanarMap): string {
-  return `translate(${(view.anchorEast - window.west) * window.scale} ${(window.north - view.anchorNorth) * window.scale})`;
+function shiftOf({ view, window }: PlanarMap): { readonly svg: string; readonly css: string } {
+  const x = (view.anchorEast - window.west) * window.scale;
+  const y = (window.north - view.anchorNorth) * window.scale;
+  return { svg: `translate(${x} ${y})`, css: `translate(${x}px, ${y}px)` };
 }
 
 /** What the layers are told, once map and slots are there; the same object until the view changes. */
@@ -55,7 +59,7 @@ function useSheetValue(
   }, [view, under, over, id, onPress]);
 }
 
-/** The map as a printed sheet: neat line, alternating bar, figures in the margin, scale bar, north, legend; it needs no base map and no network. */
+/** The map as a printed sheet: neat line, alternating bar, figures in the margin, scale bar, north, legend; it needs no base map and no network. The owner's base map, where there is one, lies below all else. */
 export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, children }: SheetMapProps) {
   const paper = useRef<HTMLDivElement>(null);
   const container = useRef<HTMLDivElement>(null);
@@ -70,6 +74,7 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
   const seen = planar?.window;
   const shift = planar === null ? undefined : shiftOf(planar);
   const inMetres = crsName !== null;
+  const baseMap = use(BaseMapContext);
   return (
     <figure
       className="q-sheet"
@@ -81,9 +86,12 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
           className="q-sheet-inner"
           style={{ left: margins.left, right: margins.right, top: margins.top, bottom: margins.bottom }}
         >
+          {planar !== null && shift !== undefined && lngLatOf !== undefined && (
+            <BaseMapTiles view={planar.view} shift={shift.css} lngLatOf={lngLatOf} />
+          )}
           <svg ref={setUnder} className="q-sheet-under" aria-hidden="true">
             {seen !== undefined && <SheetGrid window={seen} inMetres={inMetres} lngLatOf={lngLatOf} />}
-            <g transform={shift}>
+            <g transform={shift?.svg}>
               <g data-slot="tint" />
             </g>
           </svg>
@@ -94,7 +102,7 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
             aria-label={`${label}. Arrow keys move the map, plus and minus zoom.`}
           />
           <svg ref={setOver} className="q-sheet-over" role="group" aria-label={`On the map: ${label}`}>
-            <g transform={shift}>
+            <g transform={shift?.svg}>
               {UPPER_SLOTS.map((name) => (
                 <g key={name} data-slot={name} />
               ))}
@@ -130,6 +138,7 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
           narrow={size.width < 680}
           crsName={crsName}
           legend={legend}
+          attribution={lngLatOf === undefined ? undefined : baseMap?.attribution}
         />
       )}
     </figure>

@@ -1,12 +1,7 @@
 import { queryOptions, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type * as z from "zod/mini";
 import { addPerson, listPeople } from "#shared/api/people.ts";
-import {
-  createSurvey,
-  listOtherSurveys,
-  listSurveys,
-  readSurvey,
-} from "#shared/api/surveys.ts";
+import { createSurvey, listOtherSurveys, listSurveys, readSurvey } from "#shared/api/surveys.ts";
 import { call } from "../../api/call.ts";
 import { surveyKey, surveysKey } from "../../api/keys.ts";
 
