@@ -71,7 +71,8 @@ function LoadedSurvey({ survey, onPeople }: { readonly survey: Survey; readonly 
   const stage = STAGES.find((name) => name === part);
   const seen = stations(survey.id, survey.roles, survey.stages);
   const mayRead = stage === undefined || seen.some((station) => station.id === stage);
-  const pageName = onPeople ? "People" : stage === undefined ? "" : STAGE_NAMES[stage];
+  const onSettings = useLocation().pathname === paths.settings(survey.id);
+  const pageName = onPeople ? "People" : onSettings ? "Settings" : stage === undefined ? "" : STAGE_NAMES[stage];
   return (
     <CurrentSurveyContext value={survey}>
       <TimeZoneContext value={survey.timeZone}>
@@ -86,11 +87,16 @@ function LoadedSurvey({ survey, onPeople }: { readonly survey: Survey; readonly 
           stages={seen}
           {...(stage !== undefined && { currentStage: stage })}
           railFoot={
-            reach(survey.roles, "people.see") === "none" ? undefined : (
-              <Link to={paths.people(survey.id)} aria-current={onPeople ? "page" : undefined}>
-                People
+            <>
+              {reach(survey.roles, "people.see") !== "none" && (
+                <Link to={paths.people(survey.id)} aria-current={onPeople ? "page" : undefined}>
+                  People
+                </Link>
+              )}
+              <Link to={paths.settings(survey.id)} aria-current={onSettings ? "page" : undefined}>
+                Settings
               </Link>
-            )
+            </>
           }
         >
           {mayRead ? <Outlet /> : <NotForRole survey={survey} stage={pageName} first={seen[0]?.to ?? paths.surveys} />}

@@ -3,6 +3,9 @@ import type { Stage } from "#shared/api/surveys.ts";
 /** Patterns for the router. */
 export const patterns = {
   signIn: "/sign-in",
+  invitation: "/invitation/:secret",
+  askForReset: "/reset",
+  reset: "/reset/:secret",
   surveys: "/surveys",
   newSurvey: "/surveys/new",
   survey: "/surveys/:surveyId",
@@ -17,6 +20,7 @@ export const patterns = {
 export const paths = {
   home: "/surveys",
   signIn: patterns.signIn,
+  askForReset: patterns.askForReset,
   surveys: patterns.surveys,
   newSurvey: patterns.newSurvey,
   account: patterns.account,
@@ -25,4 +29,5 @@ export const paths = {
   survey: (surveyId: string) => `/surveys/${encodeURIComponent(surveyId)}`,
   stage: (surveyId: string, stage: Stage) => `/surveys/${encodeURIComponent(surveyId)}/${stage}`,
   people: (surveyId: string) => `/surveys/${encodeURIComponent(surveyId)}/people`,
+  settings: (surveyId: string) => `/surveys/${encodeURIComponent(surveyId)}/settings`,
 } as const;

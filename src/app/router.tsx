@@ -35,6 +35,18 @@ export const routes: RouteObject[] = [
         lazy: async () => ({ Component: (await import("./pages/SignInPage.tsx")).SignInPage }),
       },
       {
+        path: patterns.invitation,
+        lazy: async () => ({ Component: (await import("./pages/InvitationPage.tsx")).InvitationPage }),
+      },
+      {
+        path: patterns.askForReset,
+        lazy: async () => ({ Component: (await import("./pages/AskForResetPage.tsx")).AskForResetPage }),
+      },
+      {
+        path: patterns.reset,
+        lazy: async () => ({ Component: (await import("./pages/ResetPage.tsx")).ResetPage }),
+      },
+      {
         lazy: async () => ({ Component: (await import("./PublicLayout.tsx")).PublicLayout }),
         children: [
           {
@@ -59,6 +71,10 @@ export const routes: RouteObject[] = [
             lazy: async () => ({ Component: (await import("./pages/AccountPage.tsx")).AccountPage }),
           },
           {
+            path: patterns.installation,
+            lazy: async () => ({ Component: (await import("./pages/InstallationPage.tsx")).InstallationPage }),
+          },
+          {
             path: patterns.survey,
             lazy: async () => ({ Component: (await import("./SurveyLayout.tsx")).SurveyLayout }),
             children: [
@@ -69,6 +85,10 @@ export const routes: RouteObject[] = [
               {
                 path: "people",
                 lazy: async () => ({ Component: (await import("./pages/PeoplePage.tsx")).PeoplePage }),
+              },
+              {
+                path: "settings",
+                lazy: async () => ({ Component: (await import("./pages/SettingsPage.tsx")).SettingsPage }),
               },
               ...stageRoutes,
             ],

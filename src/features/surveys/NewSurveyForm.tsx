@@ -8,7 +8,8 @@ import { Refusal } from "../../components/ui/Refusal.tsx";
 import { Select } from "../../components/ui/Select.tsx";
 import { TextArea } from "../../components/ui/TextArea.tsx";
 import { TextInput } from "../../components/ui/TextInput.tsx";
-import { newSurveyDefaults, newSurveyForm, ownTimeZone, timeZones, type NewSurveyFields } from "./new-survey-form.ts";
+import { ownTimeZone, timeZones } from "../../components/ui/time-zones.ts";
+import { newSurveyDefaults, newSurveyForm, type NewSurveyFields } from "./new-survey-form.ts";
 import { useCreateSurvey } from "./queries.ts";
 
 interface NewSurveyFormProps {
