@@ -4,6 +4,12 @@
  */
 export const sessionKey = ["session"] as const;
 
+/** Whether whoever was signed in here left by their own choice; a session that ends otherwise leaves the page as it is. */
+export const hasLeftKey = ["session", "left"] as const;
+
+/** What belongs to an account rather than to a survey: where it is signed in. */
+export const accountKey = ["account"] as const;
+
 export const surveysKey = ["surveys"] as const;
 
 export function surveyKey(surveyId: string, ...rest: readonly (string | number)[]): readonly (string | number)[] {

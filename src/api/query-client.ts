@@ -15,7 +15,7 @@ declare module "@tanstack/react-query" {
 
 const RETRIES = 2;
 
-/** Answers are kept for a while, refusals are not asked again, and a session that ended leads to the sign-in page. */
+/** Answers are kept for a while, refusals are not asked again, and a session that ended is known to the page, which asks to sign in again. */
 export function makeQueryClient(): QueryClient {
   const onError = (error: Error) => {
     if (error instanceof Problem && error.code === "not-signed-in") {

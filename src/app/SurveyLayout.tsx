@@ -88,11 +88,9 @@ function LoadedSurvey({ survey, onPeople }: { readonly survey: Survey; readonly 
           {...(stage !== undefined && { currentStage: stage })}
           railFoot={
             <>
-              {reach(survey.roles, "people.see") !== "none" && (
-                <Link to={paths.people(survey.id)} aria-current={onPeople ? "page" : undefined}>
-                  People
-                </Link>
-              )}
+              <Link to={paths.people(survey.id)} aria-current={onPeople ? "page" : undefined}>
+                {reach(survey.roles, "people.see") === "none" ? "Your part" : "People"}
+              </Link>
               <Link to={paths.settings(survey.id)} aria-current={onSettings ? "page" : undefined}>
                 Settings
               </Link>

@@ -1,19 +1,26 @@
-import { useState, type SubmitEvent } from "react";
+import { useState, type ReactNode, type SubmitEvent } from "react";
 import { flushSync } from "react-dom";
 import { Button } from "../../components/ui/Button.tsx";
 import { Field } from "../../components/ui/Field.tsx";
 import { focusFirstInvalid } from "../../components/ui/focus-first-invalid.ts";
 import { Refusal } from "../../components/ui/Refusal.tsx";
 import { TextInput } from "../../components/ui/TextInput.tsx";
-import { useSignIn } from "./queries.ts";
+import { PasswordField } from "./PasswordField.tsx";
+import type { SignIn } from "./queries.ts";
+
+interface SignInFormProps {
+  readonly signIn: SignIn;
+  /** The address that is there already. */
+  readonly email?: string;
+  /** Between the password and the button: the way out for those who forgot it. */
+  readonly children?: ReactNode;
+}
 
 /** E-mail and password. What was typed stays when it is refused. */
-export function SignInForm() {
-  const [email, setEmail] = useState("");
+export function SignInForm({ signIn, email: known = "", children }: SignInFormProps) {
+  const [email, setEmail] = useState(known);
   const [password, setPassword] = useState("");
-  const [shown, setShown] = useState(false);
   const [missing, setMissing] = useState({ email: false, password: false });
-  const signIn = useSignIn();
   const submit = (event: SubmitEvent<HTMLFormElement>) => {
     event.preventDefault();
     const lacks = { email: email.trim() === "", password: password === "" };
@@ -34,26 +41,14 @@ export function SignInForm() {
           onChange={(event) => setEmail(event.target.value)}
         />
       </Field>
-      <Field label="Password" error={missing.password && "Write the password of your account."}>
-        <TextInput
-          name="password"
-          type={shown ? "text" : "password"}
-          autoComplete="current-password"
-          value={password}
-          onChange={(event) => setPassword(event.target.value)}
-          end={
-            <button
-              type="button"
-              className="q-input-act"
-              aria-pressed={shown}
-              aria-label={shown ? "Hide the password" : "Show the password"}
-              onClick={() => setShown(!shown)}
-            >
-              {shown ? "Hide" : "Show"}
-            </button>
-          }
-        />
-      </Field>
+      <PasswordField
+        label="Password"
+        kind="current"
+        value={password}
+        onChange={setPassword}
+        error={missing.password && "Write the password of your account."}
+      />
+      {children}
       <Button type="submit" variant="primary" size="wide" busy={signIn.isPending} busyLabel="Signing in…">
         Sign in
       </Button>

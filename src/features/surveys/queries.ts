@@ -1,12 +1,10 @@
 import { queryOptions, useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type * as z from "zod/mini";
-import { addPerson, listPeople } from "#shared/api/people.ts";
 import { createSurvey, listOtherSurveys, listSurveys, readSurvey } from "#shared/api/surveys.ts";
 import { call } from "../../api/call.ts";
 import { surveyKey, surveysKey } from "../../api/keys.ts";
 
 export type NewSurvey = z.input<typeof createSurvey.body>;
-export type NewMember = z.input<typeof addPerson.body>;
 
 const surveysQuery = queryOptions({
   queryKey: surveysKey,
@@ -40,28 +38,6 @@ export function useCreateSurvey() {
     onSuccess: (survey) => {
       queries.setQueryData(surveyKey(survey.id), survey);
       // Not waited for: the new survey opens now.
-      void queries.invalidateQueries({ queryKey: surveysKey });
-    },
-  });
-}
-
-export function useMembers(surveyId: string) {
-  return useQuery({
-    queryKey: surveyKey(surveyId, "people"),
-    queryFn: ({ signal }) => call(listPeople, { params: { surveyId }, signal }),
-    select: ({ members }) => members,
-  });
-}
-
-export function useAddMember(surveyId: string) {
-  const queries = useQueryClient();
-  return useMutation({
-    meta: { keeps: true },
-    mutationFn: (body: NewMember) => call(addPerson, { params: { surveyId }, body }),
-    onSuccess: (answer) => {
-      queries.setQueryData(surveyKey(surveyId, "people"), answer);
-      // Not waited for: the form empties now, not while the next person is being typed.
-      void queries.invalidateQueries({ queryKey: surveyKey(surveyId) });
       void queries.invalidateQueries({ queryKey: surveysKey });
     },
   });
