@@ -50,10 +50,10 @@ export function AccountPage() {
             { key: "Version of Quillet", value: session.data?.version ?? "not known" },
           ]}
         />
-        <Section title="Name">
+        <Section title="Your name">
           <NameForm name={account.name} />
         </Section>
-        <Section title="Password">
+        <Section title="Your password">
           <PasswordForm email={account.email} />
         </Section>
         <Section title="Where you are signed in">

@@ -41,9 +41,8 @@ function useFirstTask() {
       await navigate(paths.home, { replace: true });
       return;
     }
-    const list = await queries
-      .fetchQuery({ queryKey: surveysKey, queryFn: ({ signal }) => call(listSurveys, { signal }) })
-      .catch(() => null);
+    const list = await call(listSurveys).catch(() => null);
+    if (list !== null) queries.setQueryData(surveysKey, list);
     const joined = list?.surveys.filter(({ id }) => id === surveyId) ?? [];
     await navigate(waitingIn(joined)[0]?.to ?? paths.survey(surveyId), { replace: true });
   };

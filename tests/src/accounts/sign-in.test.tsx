@@ -15,7 +15,7 @@ afterEach(() => {
 const nobody = session({ account: null });
 
 function signedOut() {
-  return new FakeApi().on(readSession, () => nobody).on(listSurveys, () => ({ surveys: [] }));
+  return new FakeApi().on(readSession, () => nobody).on(listSurveys, () => ({ surveys: [], installation: null }));
 }
 
 async function typeIn(email: string, password: string) {
@@ -67,7 +67,7 @@ test("whoever opens a page without a session signs in first and comes back to it
 test("an address of another site is not returned to after signing in", async () => {
   new FakeApi()
     .on(readSession, () => session())
-    .on(listSurveys, () => ({ surveys: [] }))
+    .on(listSurveys, () => ({ surveys: [], installation: null }))
     .install();
   const { router } = renderApp("/sign-in?next=//evil.example/x");
   await waitFor(() => {
