@@ -1,5 +1,5 @@
 import type { Role } from "#shared/access/table.ts";
-import { asWords, type Block, write, type Written } from "../template.ts";
+import { asWords, type Block, linkLine, write, type Written } from "../template.ts";
 
 export interface InvitationFacts {
   readonly invitedBy: string;
@@ -20,7 +20,7 @@ export function invitationMail(facts: InvitationFacts): Written {
     facts.to
       ? `${by} invites you to the survey “${survey}” as its ${facts.to.role}. Press this link to choose a name and a password:`
       : `${by} invites you to this installation of Quillet${facts.makesOwner ? " as one of its owners" : ""}. Press this link to choose a name and a password:`,
-    { link: facts.link },
+    linkLine(facts.link),
     `It works once, until ${facts.expires}. If you do not want to take part, leave this mail alone: nothing happens then.`,
     ...forAuditors(facts.to?.role, facts.keyFingerprint),
   ]);

@@ -1,5 +1,5 @@
 import type { Role } from "#shared/access/table.ts";
-import { asWords, write, type Written } from "../template.ts";
+import { asWords, linkLine, write, type Written } from "../template.ts";
 import { forAuditors } from "./invitation.ts";
 
 interface RoleFacts {
@@ -14,7 +14,7 @@ export function addedMail(facts: RoleFacts & { readonly link: string; readonly k
   const survey = asWords(facts.survey);
   return write(`${survey}: you are its ${facts.role} now`, [
     `${asWords(facts.by)} made you ${facts.role} of the survey “${survey}”. Sign in as you always do:`,
-    { link: facts.link },
+    linkLine(facts.link),
     "You can leave the survey on its People page.",
     ...forAuditors(facts.role, facts.keyFingerprint),
   ]);
