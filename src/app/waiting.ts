@@ -164,7 +164,10 @@ function wordsOf(thing: WaitingThing): Words {
         link: "Read the record",
         page: "record",
       };
-    default:
+    case "boundary":
+    case "sealing":
+    case "declaring":
+    case "drawing":
       return wordsOfPlan(thing);
   }
 }

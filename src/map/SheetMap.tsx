@@ -41,6 +41,15 @@ function shiftOf({ view, window }: PlanarMap): { readonly svg: string; readonly 
   return { svg: `translate(${x} ${y})`, css: `translate(${x}px, ${y}px)` };
 }
 
+/** On a phone the bar lies inside the sheet. */
+function ScaleInside({ scale }: { readonly scale: number }) {
+  return (
+    <div className="q-sheet-scale-inside">
+      <ScaleBar scale={scale} widest={90} parts={1} />
+    </div>
+  );
+}
+
 /** What the layers are told, once map and slots are there; the same object until the view changes. */
 function useSheetValue(
   planar: PlanarMap | null,
@@ -120,11 +129,7 @@ export function SheetMap({ label, bounds, crsName, lngLatOf, legend, height, chi
             compact={margins.compact}
           />
         )}
-        {seen !== undefined && margins.compact && (
-          <div className="q-sheet-scale-inside">
-            <ScaleBar scale={seen.scale} widest={90} parts={1} />
-          </div>
-        )}
+        {seen !== undefined && margins.compact && <ScaleInside scale={seen.scale} />}
         {sheet !== null && leaflet !== null && (
           <LeafletContext value={leaflet}>
             <SheetContext value={sheet}>{children}</SheetContext>

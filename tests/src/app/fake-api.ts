@@ -70,8 +70,13 @@ export class FakeApi {
   }
 }
 
-function answerOf({ answer }: Contract, value: unknown): Response {
-  if (answer.kind === "json") return Response.json(z.parse(answer.schema, value));
+/** What two may edit comes with its whole text as its version. */
+function answerOf({ answer, versioned }: Contract, value: unknown): Response {
+  if (answer.kind === "json") {
+    const json = z.parse(answer.schema, value);
+    const version = `"${encodeURIComponent(JSON.stringify(json))}"`;
+    return Response.json(json, versioned === true ? { headers: { etag: version } } : {});
+  }
   return new Response(value as string, { headers: { "content-type": answer.types[0] ?? "" } });
 }
 

@@ -1,7 +1,6 @@
 import { expect, test } from "vitest";
 import { stagesFor, stageThatMatters, stations } from "../../../src/app/stages.ts";
-import { waitingIn, waitingTitle } from "../../../src/app/waiting.ts";
-import { stages, survey } from "./fixtures.ts";
+import { stages } from "./fixtures.ts";
 
 test("a counter's stages are Field and Counts; everybody else sees all eight", () => {
   expect(stagesFor(["counter"])).toEqual(["field", "counts"]);
@@ -38,16 +37,4 @@ test("a survey where all is done leads to its record", () => {
 test("stations carry the note of their stage and the address of its page", () => {
   const [area] = stations("s1", ["planner"], stages({ area: { state: "done", note: "1 area, 1 hole" } }));
   expect(area).toMatchObject({ name: "Area", state: "done", note: "1 area, 1 hole", to: "/surveys/s1/area" });
-});
-
-test("what waits is said to those who can do it only", () => {
-  expect(waitingIn(survey(["planner"]))).toMatchObject({ role: "planner", to: "/surveys/s1/area" });
-  expect(waitingIn(survey(["auditor"]))).toBeNull();
-  const inField = stages({ field: { state: "in-work", note: "0 of 57 cells" } });
-  expect(waitingIn(survey(["counter"]))).toBeNull();
-  expect(waitingIn(survey(["counter"], { stages: inField }))).toMatchObject({ to: "/surveys/s1/counts" });
-  expect(waitingIn(survey(["lead"], { stages: inField }))).toMatchObject({ fact: "Field: 0 of 57 cells." });
-  expect(waitingTitle(0)).toBe("Nothing waits for you.");
-  expect(waitingTitle(1)).toBe("One thing waits for you.");
-  expect(waitingTitle(3)).toBe("Three things wait for you.");
 });

@@ -3,43 +3,27 @@ import userEvent from "@testing-library/user-event";
 import { afterEach, expect, test, vi } from "vitest";
 import { readSession } from "#shared/api/accounts.ts";
 import { listAreas } from "#shared/api/area.ts";
-import {
-  addMember,
-  createSurvey,
-  listMembers,
-  listOtherSurveys,
-  listSurveys,
-  readSurvey,
-} from "#shared/api/surveys.ts";
+import { createSurvey, listOtherSurveys, listSurveys, readSurvey } from "#shared/api/surveys.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Role } from "#shared/access/table.ts";
 import { FakeApi } from "../app/fake-api.ts";
-import { session, stages, survey } from "../app/fixtures.ts";
+import { listed, session, stages, survey } from "../app/fixtures.ts";
 import { renderApp } from "../app/render-app.tsx";
 
 afterEach(() => {
   vi.unstubAllGlobals();
 });
 
-const ines = {
-  id: "m1",
-  name: "Ines Marrow",
-  email: "ines@example.org",
-  roles: ["planner" as Role],
-  addedAt: "2031-05-02T08:00:00Z",
-};
-
 function signedIn(roles: Role[] = ["planner"]) {
   return new FakeApi()
     .on(readSession, () => session())
     .on(readSurvey, () => survey(roles))
-    .on(listAreas, () => ({ areas: [] }))
-    .on(listMembers, () => ({ members: [ines] }));
+    .on(listAreas, () => ({ areas: [] }));
 }
 
 test("the first day says what a survey needs and offers to start one", async () => {
   signedIn()
-    .on(listSurveys, () => ({ surveys: [] }))
+    .on(listSurveys, () => ({ surveys: [], installation: null }))
     .install();
   renderApp("/surveys");
   await screen.findByRole("heading", { name: "No surveys yet. Start with the ground." });
@@ -47,24 +31,94 @@ test("the first day says what a survey needs and offers to start one", async () 
 });
 
 test("the list tells what waits as whom, and the stage that matters of each survey", async () => {
-  const inWork = survey(["planner"], {
+  const inWork = listed(["planner"], {
     stages: stages({
       area: { state: "done", note: "1 area" },
       frame: { state: "in-work", note: "version 1, not sealed" },
     }),
+    waiting: [{ kind: "sealing", role: "planner", draft: 1 }],
   });
-  const watched = survey(["auditor"], { id: "s2", name: "Dunmarrow Links" });
+  const watched = listed(["auditor"], { id: "s2", name: "Dunmarrow Links" });
   signedIn()
-    .on(listSurveys, () => ({ surveys: [inWork, watched] }))
+    .on(listSurveys, () => ({ surveys: [inWork, watched], installation: null }))
     .install();
   renderApp("/surveys");
   await screen.findByRole("heading", { name: "One thing waits for you." });
   screen.getByText("As planner");
-  screen.getByText("Frame: version 1, not sealed.");
-  expect(screen.getByRole("link", { name: "Choose the cells" }).getAttribute("href")).toBe("/surveys/s1/frame");
+  screen.getByText("Frame version 1 is not sealed.");
+  expect(screen.getByRole("link", { name: "Seal the frame" }).getAttribute("href")).toBe("/surveys/s1/frame");
   const rows = within(screen.getByRole("table", { name: "Your surveys" })).getAllByRole("row");
   expect(rows).toHaveLength(3);
+  expect(rows[1]?.textContent).toContain("Frame: version 1, not sealed");
   expect(rows[2]?.textContent).toContain("Dunmarrow Links");
+  expect(rows[2]?.textContent).toContain("3 May 20317");
+});
+
+test("the search goes along with the typing: the slash key comes to it, Enter opens the first, Escape empties it", async () => {
+  const links = listed(["auditor"], { id: "s2", name: "Dunmarrow Links", target: "dune helleborines" });
+  const old = listed(["planner"], {
+    id: "s3",
+    name: "Pellimere Fen",
+    season: "2029",
+    archivedAt: "2030-01-02T08:00:00Z",
+  });
+  signedIn()
+    .on(listSurveys, () => ({ surveys: [listed(), links, old], installation: null }))
+    .install();
+  const { router } = renderApp("/surveys");
+  const user = userEvent.setup({ delay: null });
+  await screen.findByRole("table", { name: "Your surveys" });
+  await user.keyboard("/");
+  const search = screen.getByRole("searchbox", { name: /Find a survey/ });
+  expect(document.activeElement).toBe(search);
+  await user.keyboard("helle");
+  const names = () => screen.getAllByRole("link", { name: /Fen|Links/ }).map((link) => link.textContent);
+  expect(names()).toEqual(["Dunmarrow Links"]);
+  screen.getByText("1 of 3 surveys");
+  await user.keyboard("{Escape}");
+  expect(names()).toEqual(["Pellimere Fen", "Dunmarrow Links", "Pellimere Fen"]);
+  await user.keyboard("{ArrowDown}{ArrowDown}");
+  expect(document.activeElement?.textContent).toBe("Dunmarrow Links");
+  await user.type(search, "fen");
+  await user.keyboard("{Enter}");
+  await waitFor(() => {
+    expect(router.state.location.pathname).toContain("/surveys/s1");
+  });
+});
+
+test("archived surveys lie in a fold of their own, which opens for what is looked for in it", async () => {
+  const old = listed(["planner"], { id: "s3", name: "Wetherlow Moor", archivedAt: "2030-01-02T08:00:00Z" });
+  signedIn()
+    .on(listSurveys, () => ({ surveys: [listed(), old], installation: null }))
+    .install();
+  renderApp("/surveys");
+  const table = await screen.findByRole("table", { name: "Your surveys" });
+  expect(within(table).queryByText("Wetherlow Moor")).toBeNull();
+  const fold = () => screen.getByText("Archived surveys", { selector: "summary span" }).closest("details");
+  expect(fold()?.open).toBe(false);
+  within(fold() ?? document.body).getByText("Archived on 2 January 2030");
+  await userEvent.type(screen.getByRole("searchbox"), "moor");
+  expect(fold()?.open).toBe(true);
+  screen.getByText(/No survey in work has “moor”/);
+});
+
+test("an archived survey says so in its header", async () => {
+  signedIn()
+    .on(readSurvey, () => survey(["planner"], { archivedAt: "2032-01-02T23:30:00Z" }))
+    .install();
+  renderApp("/surveys/s1/area");
+  // 23:30 UTC is past midnight in Paris, where the survey is.
+  await screen.findByText("marsh-orchid spikes, season 2031 · archived on 3 January 2032");
+});
+
+test("what the installation waits for is told to its owner, also before there is a survey", async () => {
+  const installation = { mailsFailed: 1, mailsKept: 0, publicAddressMissing: true, backupError: null };
+  signedIn()
+    .on(listSurveys, () => ({ surveys: [], installation }))
+    .install();
+  renderApp("/surveys");
+  await screen.findByText("One mail could not be sent.");
+  expect(screen.getByRole("link", { name: "Look at the mails" }).getAttribute("href")).toBe("/installation#mails");
 });
 
 test("a survey's own address leads to the stage that matters", async () => {
@@ -84,7 +138,8 @@ test("a counter sees Field and Counts only, and another stage's address says why
   expect(
     within(rail)
       .getAllByRole("link")
-      .map((link) => link.getAttribute("href")),
+      .map((link) => link.getAttribute("href"))
+      .filter((address) => address !== "/surveys/s1/people"),
   ).toEqual(["/surveys/s1/field", "/surveys/s1/counts"]);
 });
 
@@ -135,62 +190,11 @@ test("a new survey carries the browser's time zone and whole numbers unless told
   });
 });
 
-test("an address without an account is refused, and the refusal offers to make one", async () => {
-  let members = [ines];
-  const api = signedIn()
-    .on(listMembers, () => ({ members }))
-    .on(addMember, ({ body: { newAccount, email, role } }) => {
-      if (newAccount === undefined) throw new Problem("account-not-found", "Give a name and a first password.");
-      members = [...members, { ...ines, id: "m2", name: newAccount.name, email, roles: [role] }];
-      return { members };
-    })
-    .install();
-  renderApp("/surveys/s1/people");
-  const user = userEvent.setup({ delay: null });
-  await user.type(await screen.findByLabelText("E-mail"), "tom@example.org");
-  await user.click(screen.getByRole("button", { name: "Add to the survey" }));
-  await user.click(await screen.findByRole("button", { name: "Make an account for them" }));
-  expect(document.activeElement).toBe(screen.getByLabelText("Name"));
-  screen.getByDisplayValue("tom@example.org");
-  await user.type(screen.getByLabelText("Name"), "Tom Ashby");
-  await user.type(screen.getByLabelText("First password"), "short");
-  await user.click(screen.getByRole("button", { name: "Add to the survey" }));
-  screen.getByText("Use twelve characters or more; a short sentence is easy to remember.");
-  await user.type(screen.getByLabelText("First password"), " and then longer");
-  await user.click(screen.getByRole("button", { name: "Add to the survey" }));
-  await screen.findByText("Tom Ashby");
-  expect(api.named("addMember").at(-1)?.body).toEqual({
-    email: "tom@example.org",
-    role: "counter",
-    newAccount: { name: "Tom Ashby", password: "short and then longer" },
-  });
-});
-
-test("who may not change people sees them and no form", async () => {
-  signedIn(["lead"]).install();
-  renderApp("/surveys/s1/people");
-  await screen.findByText("ines@example.org");
-  expect(screen.queryByRole("button", { name: "Add to the survey" })).toBeNull();
-});
-
-test("an owner of the installation reaches the people of a survey without a role in it", async () => {
-  const account = { id: "a1", name: "Ines Marrow", email: "ines@example.org", isOwner: true };
-  signedIn()
-    .on(readSession, () => session({ account }))
-    .on(readSurvey, () => {
-      throw new Problem("survey-not-found", "Check the address.");
-    })
-    .install();
-  renderApp("/surveys/s1/people");
-  await screen.findByText("1 person in this survey.");
-  screen.getByRole("button", { name: "Add to the survey" });
-});
-
 test("an owner finds the surveys in which they hold no role, each with the way to its people", async () => {
   const account = { id: "a1", name: "Ines Marrow", email: "ines@example.org", isOwner: true };
   signedIn()
     .on(readSession, () => session({ account }))
-    .on(listSurveys, () => ({ surveys: [] }))
+    .on(listSurveys, () => ({ surveys: [], installation: null }))
     .on(listOtherSurveys, () => ({
       surveys: [{ id: "s7", name: "Dunmarrow Links", createdAt: "2031-05-02T08:00:00Z" }],
     }))
@@ -204,7 +208,7 @@ test("an owner finds the surveys in which they hold no role, each with the way t
 
 test("who is no owner is not asked about other surveys", async () => {
   const api = signedIn()
-    .on(listSurveys, () => ({ surveys: [survey()] }))
+    .on(listSurveys, () => ({ surveys: [listed()], installation: null }))
     .install();
   renderApp("/surveys");
   await screen.findByRole("table", { name: "Your surveys" });
