@@ -41,9 +41,10 @@ export function CellsToVisit({ surveyId, visits, mayAssign, chosen, onChoose, on
         <>
           <AssignBar
             surveyId={surveyId}
-            selected={[...selected]}
+            selected={visits.filter(({ id }) => selected.has(id))}
             hidden={selected.size - shown.filter(({ id }) => selected.has(id)).length}
             onDone={() => setTicked(new Set())}
+            onUnselect={(ids) => setTicked((before) => new Set([...before].filter((id) => !ids.includes(id))))}
           />
           <p className="my-2 flex flex-wrap gap-4">
             <Button variant="link" size="small" onClick={() => setTicked(new Set(open.map(({ id }) => id)))}>

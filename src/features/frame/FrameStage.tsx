@@ -123,6 +123,7 @@ function LoadedFrames(
       area={area}
       from={draft?.spec ?? startFrom?.spec ?? null}
       isKept={draft !== undefined && draft.spec.areaId === area.id}
+      draftSha256={draft?.draftSha256 ?? null}
       number={number}
       frames={frames}
       onShow={setShown}

@@ -67,7 +67,7 @@ test("the lead gives several cells to a counter for a day in one act, and the se
   await userEvent.click(screen.getByRole("button", { name: "Share out" }));
   await screen.findByText("Select cells in the list, then say who goes.");
   expect(api.named("assignVisits").map(({ body }) => body)).toEqual([
-    { visitIds: ["v1", "v3"], memberId: "m2", day: "Tuesday" },
+    { visitIds: ["v1", "v3"], memberId: "m2", day: "Tuesday", seen: [] },
   ]);
   expect((await rowOf("A1")).textContent).toContain("Tove Lind, Tuesday");
   expect((await rowOf("A2")).textContent).toContain("nobody yet");
@@ -89,6 +89,47 @@ test("cells that cannot be shared out are told, and person, day and selection st
   expect((await screen.findByRole("alert")).textContent).toContain("Check the network");
   screen.getByText("2 cells selected.");
   expect(screen.getByLabelText<HTMLInputElement>("Day may stay empty").value).toBe("Tuesday");
+});
+
+/** Two leads: while one chooses A1 and A2, the other has given A1 to Tove for Tuesday. */
+async function shareOutLate() {
+  const { api, state } = open(["lead"], visitList([visit(1), visit(2)]));
+  api
+    .on(assignVisits, ({ body }) => {
+      if (body.seen.length > 0 || !body.visitIds.includes("v1")) return { assigned: body.visitIds.length };
+      state.list = visitList([visit(1, { assignedTo: tove }), visit(2)]);
+      const current = [{ visitId: "v1", label: "A1", assignedTo: tove }];
+      throw new Problem("changed-meanwhile", "Look who has it now.", { kind: "versions", current });
+    })
+    .install();
+  renderApp(address);
+  await userEvent.click(await screen.findByRole("button", { name: "Select all 2 shown" }));
+  await screen.findByRole("option", { name: /^Ines Marrow/ });
+  await userEvent.selectOptions(screen.getByLabelText("Give to"), screen.getByRole("option", { name: /^Ines Marrow/ }));
+  await userEvent.click(screen.getByRole("button", { name: "Share out" }));
+  await screen.findByText("1 cell was shared out by somebody else meanwhile.");
+  screen.getByText("A1: Tove Lind, Tuesday");
+  return api;
+}
+
+test("cells that another lead shared out meanwhile are named, and given anyway only when that is said", async () => {
+  const api = await shareOutLate();
+  await userEvent.click(screen.getByRole("button", { name: "Give it to Ines Marrow anyway" }));
+  await screen.findByText("Select cells in the list, then say who goes.");
+  expect(api.named("assignVisits").map(({ body }) => body)).toMatchObject([
+    { visitIds: ["v1", "v2"], seen: [] },
+    { visitIds: ["v1", "v2"], seen: [{ visitId: "v1", memberId: "m2", day: "Tuesday" }] },
+  ]);
+});
+
+test("they can be left as they are, and the other cells stay selected", async () => {
+  const api = await shareOutLate();
+  await userEvent.click(screen.getByRole("button", { name: "Leave it as it is" }));
+  screen.getByText("1 cell selected.");
+  expect(screen.queryByText(/shared out by somebody else/)).toBeNull();
+  await userEvent.click(screen.getByRole("button", { name: "Share out" }));
+  await screen.findByText("Select cells in the list, then say who goes.");
+  expect(api.named("assignVisits")[1]?.body).toMatchObject({ visitIds: ["v2"], seen: [] });
 });
 
 test("filters show whose cells and in which state; a selected cell that is hidden is told", async () => {

@@ -1,4 +1,4 @@
-import { screen, waitFor } from "@testing-library/react";
+import { screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { afterEach, expect, test, vi } from "vitest";
 import { readSession } from "#shared/api/accounts.ts";
@@ -43,7 +43,7 @@ function open(roles: Role[], frames: FrameVersion[]) {
     .on(makePlane, () => plane)
     .on(readPlane, () => plane)
     .on(saveDraftFrame, ({ body }) => {
-      const kept = draft({ spec: body, draftSha256: "77".repeat(32) });
+      const kept = draft({ spec: body.spec, draftSha256: "77".repeat(32) });
       frames.splice(0, frames[0]?.sealed === null ? 1 : 0, kept);
       return kept;
     });
@@ -107,7 +107,10 @@ test("what the planner sets is kept a moment later; opening the page alone keeps
   await waitFor(() => {
     expect(api.named("saveDraftFrame")).toHaveLength(1);
   });
-  expect(api.named("saveDraftFrame")[0]?.body).toEqual({ ...spec, membership: { rule: "centre" }, countIn: "whole" });
+  expect(api.named("saveDraftFrame")[0]?.body).toEqual({
+    spec: { ...spec, membership: { rule: "centre" }, countIn: "whole" },
+    seen: null,
+  });
 });
 
 test("sealing keeps the draft as it is on the page and seals exactly that", async () => {
@@ -199,6 +202,66 @@ test("a new version starts from the sealed one and is kept as a draft", async ()
   await waitFor(() => {
     expect(api.named("saveDraftFrame")).toHaveLength(1);
   });
-  expect(api.named("saveDraftFrame")[0]?.body).toEqual(spec);
+  expect(api.named("saveDraftFrame")[0]?.body).toEqual({ spec, seen: null });
   await userEvent.selectOptions(await screen.findByLabelText("Version"), "f1");
+});
+
+// The other planner's draft has cells of 50 m (100 m in cells of 50 m is 2 × 2) and counts whole cells by their centres.
+const theirs = {
+  ...spec,
+  cells: { ...spec.cells, widthMm: 50_000, heightMm: 50_000 },
+  membership: { rule: "centre" as const },
+  countIn: "whole" as const,
+};
+
+/** A server that keeps drafts as the real one does. */
+function changedMeanwhile(frames: FrameVersion[], now: { spec: typeof theirs; draftSha256: string } | null) {
+  const { api, address } = open(["planner"], frames);
+  api.on(saveDraftFrame, ({ body }) => {
+    if (body.seen === (now?.draftSha256 ?? null)) return draft({ spec: body.spec, draftSha256: "77".repeat(32) });
+    throw new Problem("changed-meanwhile", "Look at both versions.", { kind: "versions", current: now });
+  });
+  return { api, address };
+}
+
+test("a draft that another planner changed meanwhile is shown beside one's own, and what is chosen is kept over it", async () => {
+  const draftSha256 = "99".repeat(32);
+  const { api, address } = changedMeanwhile([draft()], { spec: theirs, draftSha256 });
+  api.install();
+  renderApp(address);
+  await sealButton("Seal the frame: 25 cells");
+  await userEvent.click(screen.getByRole("radio", { name: /^Inside/ }));
+  await screen.findByRole("heading", { name: "Both versions" });
+  expect(screen.queryByRole("button", { name: /^Seal the frame/ })).toBeNull();
+  const choices = within(screen.getByRole("region", { name: "Both versions" }));
+  // Only the other planner changed the side; both changed the edge rule.
+  const side = within(choices.getByRole("group", { name: "Square, side" }));
+  expect(side.getByRole("radio", { name: /^Take theirs/, checked: true })).toBeDefined();
+  await userEvent.click(
+    within(choices.getByRole("group", { name: "Edge rule" })).getByRole("radio", { name: /^Keep mine/ }),
+  );
+  await userEvent.click(choices.getByRole("button", { name: "Go on with what is chosen" }));
+  await sealButton("Seal the frame: 4 cells");
+  await waitFor(() => {
+    expect(api.named("saveDraftFrame")).toHaveLength(2);
+  });
+  expect(api.named("saveDraftFrame").map(({ body }) => body)).toEqual([
+    { spec: { ...spec, membership: { rule: "inside" }, countIn: "whole" }, seen: "12".repeat(32) },
+    { spec: { ...theirs, membership: { rule: "inside" } }, seen: draftSha256 },
+  ]);
+});
+
+test("a draft that was sealed meanwhile is told, and what is set here may begin the next version", async () => {
+  const { api, address } = changedMeanwhile([draft()], null);
+  api.install();
+  renderApp(address);
+  await sealButton("Seal the frame: 25 cells");
+  await userEvent.click(screen.getByRole("radio", { name: /^Inside/ }));
+  await screen.findByText("Version 1 was sealed by somebody else meanwhile.");
+  screen.getByRole("button", { name: "Look at the sealed frame" });
+  await userEvent.click(screen.getByRole("button", { name: "Begin the next version with what is set here" }));
+  await waitFor(() => {
+    expect(api.named("saveDraftFrame")).toHaveLength(2);
+  });
+  expect(api.named("saveDraftFrame")[1]?.body).toMatchObject({ seen: null, spec: { membership: { rule: "inside" } } });
 });
