@@ -11,6 +11,7 @@ import {
 } from "../db/mails.ts";
 import { type Tx, writeTx } from "../db/open.ts";
 import { MailRefused, type MailServer } from "./mail-server.ts";
+import { RESET } from "./templates/reset.ts";
 import { WITNESS, WITNESS_DAY } from "./templates/witness.ts";
 
 type Sending = Pick<Platform, "db" | "mail" | "now" | "log">;
@@ -103,7 +104,7 @@ function emptied(mail: MailRow): MailChange {
 
 function tidy(tx: Tx, now: Date): void {
   for (const mail of unsentSecrets(tx)) {
-    const life = mail.kind === "reset" ? RESET_LINK_MS : OTHER_LINK_MS;
+    const life = mail.kind === RESET ? RESET_LINK_MS : OTHER_LINK_MS;
     if (Date.parse(mail.createdAt) + life <= now.getTime()) changeMail(tx, mail.id, emptied(mail));
   }
   deleteSentBefore(tx, new Date(now.getTime() - KEPT_DAYS * DAY_MS).toISOString(), [WITNESS, WITNESS_DAY]);

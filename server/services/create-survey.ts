@@ -1,11 +1,11 @@
 import { Problem } from "#shared/problem.ts";
 import type { Visitor } from "../context.ts";
-import { appendEvent } from "../db/events.ts";
 import { insertMember, upsertMembership } from "../db/members.ts";
 import { writeTx } from "../db/open.ts";
 import { insertSurvey } from "../db/surveys.ts";
 import { isTimeZone } from "./local-day.ts";
 import { newId } from "./new-id.ts";
+import { recordEvent } from "./record-event.ts";
 
 interface NewSurvey {
   readonly name: string;
@@ -56,14 +56,14 @@ export function createSurvey(visitor: Visitor, wanted: NewSurvey): string {
     );
     insertMember(tx, { id: memberId, surveyId, accountId: visitor.account.id, addedAt: at });
     upsertMembership(tx, memberId, "planner", at);
-    appendEvent(tx, visitor, {
+    recordEvent(tx, visitor, {
       surveyId,
       at,
       memberId,
       kind: "survey-created",
       payload: { version: 1, name: wanted.name, target, season, timeZone: wanted.timeZone, level },
     });
-    appendEvent(tx, visitor, {
+    recordEvent(tx, visitor, {
       surveyId,
       at,
       memberId,
