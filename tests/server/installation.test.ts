@@ -30,7 +30,7 @@ let team: Team;
 
 beforeAll(async () => {
   smtp = await startSmtp();
-  server = await startTestServer({ mail: openSmtp(smtp.url, "Quillet <surveys@example.org>", 500) });
+  server = await startTestServer({ mail: openSmtp(smtp.url, "Quillet <surveys@example.org>") });
   team = await startTeam(server);
 }, 60_000);
 afterAll(async () => {
