@@ -1,9 +1,11 @@
 import { spawn } from "node:child_process";
 import { mkdtempSync, rmSync } from "node:fs";
+import { createServer as createHttpServer } from "node:http";
 import { createServer, type AddressInfo } from "node:net";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import type { TestProject } from "vitest/node";
+import { type FakeSmtp, startSmtp } from "../fixtures/smtp.ts";
 
 declare module "vitest" {
   interface ProvidedContext {
@@ -11,6 +13,8 @@ declare module "vitest" {
     base: string;
     ownerEmail: string;
     ownerPassword: string;
+    /** Address that answers with the text of the newest mail `?to=` somebody, or 404 while none has arrived. */
+    mailbox: string;
   }
 }
 
@@ -19,6 +23,8 @@ export default async function setup(project: TestProject): Promise<() => Promise
   const folder = mkdtempSync(join(tmpdir(), "quillet-e2e-"));
   const port = await freePort();
   const owner = { email: "owner@example.org", password: "the owner's first sentence" };
+  const smtp = await startSmtp();
+  const mailbox = await openMailbox(smtp);
   const server = spawn(process.execPath, [join("dist", "server", "main.js")], {
     stdio: ["ignore", "inherit", "inherit"],
     env: {
@@ -30,6 +36,8 @@ export default async function setup(project: TestProject): Promise<() => Promise
       QUILLET_OWNER_NAME: "Orla Owner",
       QUILLET_OWNER_PASSWORD: owner.password,
       QUILLET_LOG: "error",
+      QUILLET_SMTP_URL: smtp.url,
+      QUILLET_MAIL_FROM: "Quillet <quillet@example.org>",
     },
   });
   const base = `http://127.0.0.1:${port}`;
@@ -37,11 +45,29 @@ export default async function setup(project: TestProject): Promise<() => Promise
   project.provide("base", base);
   project.provide("ownerEmail", owner.email);
   project.provide("ownerPassword", owner.password);
+  project.provide("mailbox", mailbox.address);
   return async () => {
     const ended = new Promise((resolve) => server.once("exit", resolve));
     server.kill("SIGTERM");
     await ended;
+    await smtp.stop();
+    await mailbox.close();
     rmSync(folder, { recursive: true, force: true });
+  };
+}
+
+/** Tests run in processes of their own: they ask over HTTP what the SMTP server was given. */
+async function openMailbox(smtp: FakeSmtp): Promise<{ address: string; close: () => Promise<unknown> }> {
+  const server = createHttpServer((request, response) => {
+    const to = new URL(request.url ?? "/", "http://mailbox").searchParams.get("to") ?? "";
+    const mail = smtp.mails.findLast(({ recipients }) => recipients.includes(to));
+    response.statusCode = mail === undefined ? 404 : 200;
+    response.end(mail?.text);
+  });
+  await new Promise<void>((resolve) => server.listen(0, "127.0.0.1", resolve));
+  return {
+    address: `http://127.0.0.1:${(server.address() as AddressInfo).port}`,
+    close: () => new Promise((resolve) => server.close(resolve)),
   };
 }
 

@@ -157,7 +157,10 @@ describe("axe finds nothing serious", () => {
   const pages = [
     { path: "/sign-in", who: () => person(browser) },
     { path: "/replay", who: () => person(browser) },
+    { path: "/reset", who: () => person(browser) },
+    { path: `/invitation/${"x".repeat(43)}`, who: () => person(browser) },
     { path: "/surveys", who: () => ownerPage(browser) },
+    { path: "/account", who: () => ownerPage(browser) },
   ];
   const cases = pages.flatMap((each) => [390, 1280].map((width) => ({ ...each, width })));
 

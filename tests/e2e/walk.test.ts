@@ -5,6 +5,7 @@ import { join } from "node:path";
 import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, inject, test } from "vitest";
 import { launch, person } from "./browser.ts";
+import { accept } from "./invited.ts";
 
 // The whole path, once, as the people who walk it: an owner starts the survey and brings the four roles in; the planner imports
 // a boundary, seals a frame and draws; the lead shares cells out, takes waypoints, closes a pick and reads a table of counts in;
@@ -78,14 +79,17 @@ describe("from a boundary file to a defended estimate", () => {
     for (const role of roles) {
       await page.getByLabel("E-mail").fill(`${role}@example.org`);
       await page.getByRole("radio", { name: new RegExp(`^(a |an )?(field )?${role}`, "i") }).check();
-      await page.getByLabel("They have no account here yet").check();
-      await page.getByLabel("Name", { exact: true }).fill(`${role} of the walk`);
-      await page.getByLabel("First password").fill(PASSWORD);
       await page.getByRole("button", { name: "Add to the survey" }).click();
-      await page.getByText(`${role}@example.org`).first().waitFor();
+      await page.getByRole("row", { name: new RegExp(`^${role}@example.org ${role}`) }).waitFor();
       await expect.poll(() => page.getByLabel("E-mail").inputValue(), { timeout: 20_000 }).toBe("");
     }
     await page.close();
+    for (const role of roles) {
+      const { page: own, errors: logged } = await person(browser);
+      await accept(own, `${role}@example.org`, { name: `${role} of the walk`, password: PASSWORD });
+      expect(logged).toEqual([]);
+      await own.close();
+    }
   });
 
   test("a file without a known system is asked about, and the planner's boundary is read", async () => {

@@ -32,8 +32,8 @@ function leadOf({ role, makesOwner }: InvitationSeen): string {
   return "With an account you can start surveys of your own and be brought into others.";
 }
 
-/** To what waits for the new member in the survey; where nothing does, to its own address, which knows where to go. */
-function useFirstTask() {
+/** To the stage that waits for the new role in the survey; where none does, to its own address, which knows where to go. */
+function useFirstTask(role: InvitationSeen["role"]) {
   const queries = useQueryClient();
   const navigate = useNavigate();
   return async (surveyId: string | null) => {
@@ -44,7 +44,8 @@ function useFirstTask() {
     const list = await call(listSurveys).catch(() => null);
     if (list !== null) queries.setQueryData(surveysKey, list);
     const joined = list?.surveys.filter(({ id }) => id === surveyId) ?? [];
-    await navigate(waitingIn(joined)[0]?.to ?? paths.survey(surveyId), { replace: true });
+    const first = waitingIn(joined).find((item) => item.role === role && item.to !== paths.people(surveyId));
+    await navigate(first?.to ?? paths.survey(surveyId), { replace: true });
   };
 }
 
@@ -64,7 +65,7 @@ function KeepFingerprint({ value }: { readonly value: string }) {
 function Invited({ secret, invitation }: { readonly secret: string; readonly invitation: InvitationSeen }) {
   const times = useTimes();
   const account = useSession().data?.account;
-  const goOn = useFirstTask();
+  const goOn = useFirstTask(invitation.role);
   const isSignedIn = account?.email === invitation.email;
   return (
     <DoorPage here="Invitation" title={titleOf(invitation)}>

@@ -50,8 +50,13 @@ test("the page says who invites to what, what the role does, and until when", as
   expect(screen.queryByText(/fingerprint/)).toBeNull();
 });
 
-test("a name and a long password make the account, and lead to what waits in the survey", async () => {
-  const waiting = listed(["planner"], { waiting: [{ kind: "no-area", role: "planner" }] });
+test("a name and a long password make the account, and lead to the stage that waits for the role", async () => {
+  const waiting = listed(["planner"], {
+    waiting: [
+      { kind: "invitations", role: "planner", open: 1, expired: 1 },
+      { kind: "sealing", role: "planner", draft: null },
+    ],
+  });
   const api = invited({ role: "planner" })
     .on(acceptInvitation, () => ({ session: session({ account: tom }), surveyId: "s1" }))
     .on(listSurveys, () => ({ surveys: [listed(["auditor"], { id: "s0" }), waiting], installation: null }))
@@ -69,7 +74,7 @@ test("a name and a long password make the account, and lead to what waits in the
   await user.type(screen.getByLabelText("Password"), "s");
   await user.click(screen.getByRole("button", { name: "Take part as planner" }));
   await waitFor(() => {
-    expect(router.state.location.pathname).toBe("/surveys/s1/area");
+    expect(router.state.location.pathname).toBe("/surveys/s1/frame");
   });
   expect(api.named("acceptInvitation")[0]?.body).toEqual({ name: "Tom Ashby", password: "eleven chars" });
 });
