@@ -26,7 +26,7 @@ function eventsOf(surveyId: string) {
 }
 
 function failedChecks(surveyId: string) {
-  return replay(buildRecord(survey.server.platform, surveyId)).checks.filter(({ state }) => state === "failed");
+  return replay(buildRecord(survey.server.platform, surveyId)).checks.filter(({ outcome }) => outcome === "failed");
 }
 
 test("a copy has the settings, the boundary and the cells as a draft, under ids of its own", async () => {

@@ -75,7 +75,7 @@ describe("the settings of a survey", () => {
       target: "warrens",
     });
     const failed = replay(buildRecord(survey.server.platform, survey.here().surveyId)).checks.filter(
-      ({ state }) => state === "failed",
+      ({ outcome }) => outcome === "failed",
     );
     expect(failed).toEqual([]);
   });

@@ -14,6 +14,8 @@ export interface FakeInput {
   readonly query: Readonly<Record<string, string>>;
   readonly body: unknown;
   readonly file: File | null;
+  /** The version that the caller saw (If-Match). */
+  readonly version: string | null;
 }
 
 interface Handler {
@@ -57,11 +59,13 @@ export class FakeApi {
     const { body, file } = await sent(contract, init);
     const parsed = z.parse(contract.body, body);
     const query = Object.fromEntries(url.searchParams);
-    this.calls.push({ name: contract.name, params, query, body: parsed, file });
+    const version = new Headers(init.headers).get("if-match");
+    const input = { params, query, body: parsed, file, version };
+    this.calls.push({ name: contract.name, ...input });
     try {
       const handler = this.handlers.get(contract.name);
       if (handler === undefined) throw new Problem("not-found", `The test has no answer for ${contract.name}.`);
-      return answerOf(contract, await handler.answer({ params, query, body: parsed, file }));
+      return answerOf(contract, await handler.answer(input));
     } catch (error) {
       if (!(error instanceof Problem)) throw error;
       const { code, message: detail, status, title, question } = error;
@@ -78,6 +82,11 @@ function answerOf({ answer, versioned }: Contract, value: unknown): Response {
     return Response.json(json, versioned === true ? { headers: { etag: version } } : {});
   }
   return new Response(value as string, { headers: { "content-type": answer.types[0] ?? "" } });
+}
+
+/** An answer's version in a test: of use only to be sent back. */
+export function versionOf(answer: unknown): string {
+  return `"${encodeURIComponent(JSON.stringify(answer))}"`;
 }
 
 /** Contracts with a fixed address come before those with a name in it: /frames/draft is no frame id. */
