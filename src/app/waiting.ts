@@ -93,7 +93,7 @@ function wordsOfInvitations({ open, expired }: Extract<WaitingThing, { kind: "in
     return {
       state: "in-work",
       fact: `${countOf(open, "person is", "people are")} invited and not here yet.`,
-      next: "Their links work still. The page of people says how each mail went.",
+      next: `${open === 1 ? "The link works" : "Their links work"} still. The page of people says how each mail went.`,
       link: "See who is invited",
       page: "people",
     };
@@ -110,6 +110,12 @@ function wordsOfInvitations({ open, expired }: Extract<WaitingThing, { kind: "in
 function dayWords(days: readonly { readonly day: string; readonly cells: number }[]): string {
   const words = days.map(({ day, cells }) => `${formatNumber(cells)} ${day === "" ? "without a day" : `for ${day}`}`);
   return `${formatList(words)}. Zero is a count; a cell that nobody reached is not.`;
+}
+
+function ownCellsFact({ cells, of }: Extract<WaitingThing, { kind: "own-cells" }>): string {
+  if (of === 1) return "Your one cell is not visited yet.";
+  if (cells === of) return `None of your ${formatNumber(of)} cells is visited yet.`;
+  return `${formatNumber(cells)} of your ${formatNumber(of)} cells ${cells === 1 ? "is" : "are"} not visited yet.`;
 }
 
 function wordsOf(thing: WaitingThing): Words {
@@ -151,7 +157,7 @@ function wordsOf(thing: WaitingThing): Words {
     case "own-cells":
       return {
         state: thing.cells === thing.of ? "not-started" : "in-work",
-        fact: `${formatNumber(thing.cells)} of your ${formatCount(thing.of, "cell")} ${thing.cells === 1 ? "is" : "are"} not visited yet.`,
+        fact: ownCellsFact(thing),
         next: dayWords(thing.days),
         link: "Enter counts",
         page: "counts",

@@ -54,17 +54,17 @@ function LoadedInstallation() {
   return (
     <>
       <HttpsNotice address={globalThis.location} />
-      <div id="accounts">
+      <div id="accounts" className="min-w-0">
         <AccountsSection mailsAreKept={mail.server === null} />
       </div>
-      <div id="mails">
+      <div id="mails" className="min-w-0">
         <MailsSection mail={mail} demo={demo} />
       </div>
-      <div id="storage">
+      <div id="storage" className="min-w-0">
         <StorageSection installation={installation.data} />
       </div>
       <SettingsForm outline={outline} />
-      <div id="about">
+      <div id="about" className="min-w-0">
         <AboutSection installation={installation.data} />
       </div>
     </>

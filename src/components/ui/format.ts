@@ -135,11 +135,12 @@ function clockOf(timeZone: string): Intl.DateTimeFormat {
   }
 }
 
-/** A file's size: "41 KB", "2.3 MB" (powers of 1 000). */
+/** A size of a file or disk: "41 KB", "2.3 MB", "82.8 GB" (powers of 1 000). */
 export function formatBytes(bytes: number): string {
   if (bytes < 1000) return formatUnit(formatNumber(bytes), "bytes");
   if (bytes < 999_500) return formatUnit(formatNumber(bytes / 1000), "KB");
-  return formatUnit(formatNumber(bytes / 1_000_000, 1), "MB");
+  if (bytes < 999_950_000) return formatUnit(formatNumber(bytes / 1_000_000, 1), "MB");
+  return formatUnit(formatNumber(bytes / 1_000_000_000, 1), "GB");
 }
 
 /** "1 cell", "741 cells": a number with its noun. */

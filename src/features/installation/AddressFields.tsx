@@ -13,7 +13,7 @@ interface AddressFieldsProps {
 export function AddressFields({ typed, lacks, onChange }: AddressFieldsProps) {
   const here = globalThis.location.origin;
   return (
-    <div id="address">
+    <div id="address" className="min-w-0">
       <Section
         title="Address"
         lead="Links in mails begin with it, so it has to be one that people reach from elsewhere."

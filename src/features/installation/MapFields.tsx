@@ -28,7 +28,7 @@ interface MapFieldsProps {
 /** Pictures below every sheet, from an XYZ template, or none. */
 export function MapFields({ typed, lacks, onChange, outline, isKept }: MapFieldsProps) {
   return (
-    <div id="map">
+    <div id="map" className="min-w-0">
       <Section
         title="Map"
         lead="The sheets read without one. With a base map, its pictures lie pale and grey below everything else."
@@ -136,7 +136,7 @@ function MapPreview({ baseMap, outline, isKept }: MapPreviewProps) {
     return () => document.removeEventListener("securitypolicyviolation", onViolation);
   }, []);
   return (
-    <div className="grid max-w-160 gap-3">
+    <div className="grid min-w-0 max-w-160 gap-3">
       <BaseMapContext value={baseMap}>
         <SheetMap
           label="Preview of the base map"

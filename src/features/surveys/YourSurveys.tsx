@@ -1,4 +1,4 @@
-import { useRef } from "react";
+import { useRef, useState } from "react";
 import { useNavigate, useSearchParams } from "react-router-dom";
 import { Button } from "../../components/ui/Button.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
@@ -13,8 +13,11 @@ export function YourSurveys({ rows }: { readonly rows: readonly SurveyRow[] }) {
   const navigate = useNavigate();
   // In the address, so that coming back from a survey finds the list as it was left.
   const [search, setSearch] = useSearchParams();
-  const text = search.get("find") ?? "";
-  const find = (wanted: string) => setSearch(wanted === "" ? {} : { find: wanted }, { replace: true });
+  const [text, setText] = useState(search.get("find") ?? "");
+  const find = (wanted: string) => {
+    setText(wanted);
+    setSearch(wanted === "" ? {} : { find: wanted }, { replace: true });
+  };
   const found = rows.filter((row) => isFound(row.survey, text));
   const inWork = found.filter((row) => row.survey.archivedAt === null);
   const archived = found.filter((row) => row.survey.archivedAt !== null);

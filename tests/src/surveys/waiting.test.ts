@@ -59,6 +59,8 @@ test("a counter reads of their own cells, with the days as the lead wrote them",
   const [item] = of({ kind: "own-cells", role: "counter", cells: 3, of: 4, days });
   expect(item).toMatchObject({ fact: "3 of your 4 cells are not visited yet.", to: "/surveys/s1/counts" });
   expect(item?.next).toContain("2 for Friday and 1 without a day.");
+  const [none] = of({ kind: "own-cells", role: "counter", cells: 4, of: 4, days });
+  expect(none?.fact).toBe("None of your 4 cells is visited yet.");
 });
 
 test("an auditor gets the newest hash with the event that it is of", () => {

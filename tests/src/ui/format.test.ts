@@ -106,6 +106,7 @@ describe("texts and times on screen", () => {
     expect(formatBytes(412)).toBe("412\u00a0bytes");
     expect(formatBytes(41_300)).toBe("41\u00a0KB");
     expect(formatBytes(2_300_000)).toBe("2.3\u00a0MB");
+    expect(formatBytes(82_814_100_000)).toBe("82.8\u00a0GB");
     expect(formatCount(1, "cell")).toBe("1 cell");
     expect(formatCount(741, "cell")).toBe("741 cells");
     expect(formatCount(0, "entry", "entries")).toBe("0 entries");
