@@ -2,6 +2,7 @@ import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import type { AddressInfo } from "node:net";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
+import { pino } from "pino";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { createSurvey } from "#shared/api/surveys.ts";
 import { createApp } from "#server/app.ts";
@@ -65,6 +66,25 @@ describe("behind a proxy", () => {
     const addresses = ["198.51.100.1", "198.51.100.2", "203.0.113.99, 198.51.100.1"];
     expect(await statuses(addresses)).toEqual([401, 401, 429]);
   });
+});
+
+// The pages and the interface that a link in a mail leads to; a log is kept, copied and read by others than the mail.
+test("the secret end of a link in a mail is not written to the log", async () => {
+  const lines: string[] = [];
+  const log = pino({ level: "info" }, { write: (line) => void lines.push(line) });
+  const options = { sessionSecret: "s".repeat(40), https: false, clientFolder: null, signInsPerMinute: 10 };
+  const other = createApp({ ...server.platform, log }, options).listen(0, "127.0.0.1");
+  await new Promise((resolve) => other.once("listening", resolve));
+  const url = `http://127.0.0.1:${(other.address() as AddressInfo).port}`;
+  const secret = "k".repeat(43);
+  const pages = ["/api/invitations", "/api/password-resets", "/invitation", "/reset"];
+  for (const page of pages) await fetch(`${url}${page}/${secret}?from=mail`);
+  await fetch(`${url}/api/password-resets/${secret}`, { method: "POST", body: "{}" });
+  other.closeAllConnections();
+  await new Promise((resolve) => other.close(resolve));
+  expect(lines).toHaveLength(5);
+  expect(lines.join("")).not.toContain(secret);
+  for (const page of pages) expect(lines.join("")).toContain(`"url":"${page}/…"`);
 });
 
 describe("days", () => {
