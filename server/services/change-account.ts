@@ -1,8 +1,10 @@
 import { Problem } from "#shared/problem.ts";
 import type { Visitor } from "../context.ts";
 import { findAccount, openOwners, updateAccount } from "../db/accounts.ts";
+import { openInvitationFor } from "../db/invitations.ts";
 import { writeTx } from "../db/open.ts";
 import { deleteSessionsOf } from "../db/sessions.ts";
+import { endInvitation } from "./invite.ts";
 import { endResets } from "./send-reset.ts";
 
 interface Wanted {
@@ -23,6 +25,9 @@ export function changeAccount(ctx: Visitor, accountId: string, { isOwner, closed
     updateAccount(tx, accountId, { isOwner, closedAt: closed ? (account.closedAt ?? now) : null });
     // Thrown inside the transaction, which is taken back then.
     if (openOwners(tx) === 0) throw new Problem("last-owner", "Make somebody else an owner first.");
+    // A link sent before must not make somebody an owner whom an owner has decided about since.
+    const invited = openInvitationFor(tx, account.email, null);
+    if (invited) endInvitation(tx, invited, "withdrawnAt", now);
     if (!closed) return;
     deleteSessionsOf(tx, accountId, null);
     endResets(tx, accountId, now);

@@ -2,11 +2,13 @@ import { type Role, ROLES } from "#shared/access/table.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { type AccountRow, findAccount } from "../db/accounts.ts";
+import { openInvitationFor } from "../db/invitations.ts";
 import { accountOfMember, openPlanners, standingOf } from "../db/members.ts";
 import { type Reader, type Tx, writeTx } from "../db/open.ts";
 import { deleteSessionsOf } from "../db/sessions.ts";
 import { expectOpenAccount } from "./add-person.ts";
 import { actingOnPeople, endRole, giveRole } from "./give-role.ts";
+import { endInvitation } from "./invite.ts";
 import { tellAdded, tellRoleEnded } from "./tell-roles.ts";
 
 /**
@@ -45,7 +47,16 @@ function changeRoles(tx: Tx, ctx: Context, account: AccountRow, { given, ended, 
     endRole(tx, ctx, { surveyId, account, role, by });
     tellRoleEnded(tx, ctx, account, role, last);
   }
+  endOldInvitations(tx, ctx, account, last ? ROLES : [...given, ...ended]);
   if (last && account.id !== ctx.account.id) deleteSessionsOf(tx, account.id, null);
+}
+
+/** A link sent before somebody's roles were set must not give one back that was ended. */
+function endOldInvitations(tx: Tx, ctx: Context, { email }: AccountRow, roles: readonly Role[]): void {
+  for (const role of roles) {
+    const invited = openInvitationFor(tx, email, { surveyId: ctx.surveyId, role });
+    if (invited) endInvitation(tx, invited, "withdrawnAt", ctx.now().toISOString());
+  }
 }
 
 /** @throws Problem `last-planner` where nobody else who can sign in is planner of the survey */

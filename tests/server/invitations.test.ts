@@ -1,12 +1,14 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from "vitest";
+import type { Role } from "#shared/access/table.ts";
 import { readSession, signIn } from "#shared/api/accounts.ts";
-import { inviteAccount, listAccounts, withdrawAccountInvitation } from "#shared/api/installation.ts";
+import { changeAccount, inviteAccount, listAccounts, withdrawAccountInvitation } from "#shared/api/installation.ts";
 import {
   acceptInvitation,
   addPerson,
   listPeople,
   readInvitation,
   renewInvitation,
+  setRoles,
   withdrawInvitation,
 } from "#shared/api/people.ts";
 import { readSurvey } from "#shared/api/surveys.ts";
@@ -209,6 +211,44 @@ describe("an invitation to an address that has an account by now", () => {
     await server.person(email);
     expect((await add("lead")).status).toBe(200);
     expect((await list()).invitations).toEqual([]);
+    expect((await accept(secret)).json.code).toBe("link-ended");
+  });
+});
+
+// Invited in two roles before there was an account; one link was used, and the other is still in a mailbox.
+describe("an old link", () => {
+  const setTo = async (roles: Role[]) => {
+    const member = (await list()).members.find((one) => one.email === email);
+    const params = { ...here(), memberId: member?.id ?? "" };
+    expect((await team.planner.call(setRoles, { params, body: { roles } })).status).toBe(200);
+  };
+
+  test("does not bring back somebody who was removed from the survey", async () => {
+    const lead = await invited("lead");
+    expect((await accept(await invited("counter"))).status).toBe(200);
+    await setTo([]);
+    expect((await list()).invitations).toEqual([]);
+    expect((await accept(lead)).json.code).toBe("link-ended");
+  });
+
+  test("does not give back a role that was given and ended since; one for another role still works", async () => {
+    const lead = await invited("lead");
+    const auditor = await invited("auditor");
+    expect((await accept(await invited("counter"))).status).toBe(200);
+    await setTo(["counter", "lead"]);
+    await setTo(["counter"]);
+    expect((await accept(lead)).json.code).toBe("link-ended");
+    expect((await accept(auditor)).status).toBe(200);
+  });
+
+  test("does not make somebody an owner after an owner decided about their account", async () => {
+    await team.owner.call(inviteAccount, { body: { email, makesOwner: true } });
+    const secret = secretTo(server, email, "invitation", "owners");
+    const made = await accept(await invited());
+    const params = { accountId: made.json.session.account?.id ?? "" };
+    for (const isOwner of [true, false]) {
+      expect((await team.owner.call(changeAccount, { params, body: { isOwner, closed: false } })).status).toBe(200);
+    }
     expect((await accept(secret)).json.code).toBe("link-ended");
   });
 });
