@@ -2,6 +2,7 @@ import type { Platform } from "../context.ts";
 import {
   changeMail,
   deleteSentBefore,
+  findMail,
   keepWaitingMails,
   type MailChange,
   type MailRow,
@@ -51,7 +52,10 @@ export async function sendQueue(platform: Sending): Promise<void> {
     if (!mail) return;
     const refused = await tryToSend(server, mail);
     const now = platform.now();
-    writeTx(db, (tx) => changeMail(tx, mail.id, refused ? notSent(mail, refused, now) : sent(mail, now)));
+    writeTx(db, (tx) => {
+      const endedMeanwhile = refused !== null && mail.secret && isEmptiedNow(tx, mail.id);
+      if (!endedMeanwhile) changeMail(tx, mail.id, refused ? notSent(mail, refused, now) : sent(mail, now));
+    });
     if (refused) platform.log.warn({ mail: mail.id, kind: mail.kind, said: refused.message }, "a mail was not taken");
     if (refused?.others === false) return;
   }
@@ -65,6 +69,12 @@ export function emptyMailsAbout(tx: Tx, about: string): void {
 /** Whether a mail's text was taken out. */
 export function isEmptied(mail: Pick<MailRow, "secret" | "html">): boolean {
   return mail.secret && mail.html === "";
+}
+
+/** While a server takes its time, the link in the mail may have been used, withdrawn or replaced. */
+function isEmptiedNow(tx: Tx, id: string): boolean {
+  const found = findMail(tx, id);
+  return found !== undefined && isEmptied(found.mail);
 }
 
 async function tryToSend(server: MailServer, { id, toName, toAddress, subject, text, html }: MailRow) {

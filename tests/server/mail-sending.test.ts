@@ -1,7 +1,7 @@
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test } from "vitest";
 import { findMail, type MailRow } from "#server/db/mails.ts";
 import { closeDb, openDb, writeTx } from "#server/db/open.ts";
-import type { MailServer } from "#server/mail/mail-server.ts";
+import { MailRefused, type MailServer } from "#server/mail/mail-server.ts";
 import { queueMail } from "#server/mail/queue-mail.ts";
 import { emptyMailsAbout, sendQueue, WAITS_MS } from "#server/mail/send-queue.ts";
 import { openSmtp } from "#server/mail/smtp.ts";
@@ -263,6 +263,25 @@ describe("the queue", () => {
   });
 
   // Links of resets work for 2 hours, those of invitations for 14 days.
+  // The invitation is withdrawn while the server thinks about it; then the server says "for now not" (RFC 5321: 4xx).
+  test("a mail whose link ends while it is being refused for now is not tried again", async () => {
+    const id = queued({ secret: true, about: "link slow" });
+    const slow: MailServer = {
+      name: "slow",
+      from: FROM,
+      send: async () => {
+        writeTx(server.platform.db, (tx) => emptyMailsAbout(tx, "link slow"));
+        return Promise.reject(new MailRefused("later", { forEver: false, others: true }));
+      },
+      close: () => undefined,
+    };
+    await round(slow);
+    expect(row(id)).toMatchObject({ state: "failed", nextAttemptAt: null, html: "" });
+    server.setNow(at(24 * 3600_000));
+    await round();
+    expect(row(id)).toMatchObject({ state: "failed" });
+  });
+
   test("takes the link out of mails when it has expired", async () => {
     const reset = queued({ kind: "reset", secret: true });
     const invitation = queued({ kind: "invitation", secret: true });
