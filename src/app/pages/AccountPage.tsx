@@ -26,7 +26,8 @@ export function AccountPage() {
         </MarginNote>
       )}
       <MarginNote title="Your address">
-        An address is not changed here: records hold none, and invitations go by it. Ask the owner of the installation.
+        Invitations and links come to it. Only you, the planners of your surveys and the owner see it; no record holds
+        it.
       </MarginNote>
     </>
   );

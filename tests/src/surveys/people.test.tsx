@@ -88,7 +88,7 @@ test("an address is added at once or by an invitation, the page says so beforeha
   await user.click(screen.getByRole("radio", { name: /^Lead/ }));
   await user.click(screen.getByRole("button", { name: "Add to the survey" }));
   const table = await screen.findByRole("table", { name: "Invitations that nobody has accepted yet" });
-  within(table).getByRole("row", { name: /^new@example\.org lead not sent, kept to be forwarded 16 May 2031/ });
+  within(table).getByRole("row", { name: /^new@example\.org lead kept here 16 May 2031/ });
   screen.getByText(/the owner of this installation finds it under Mails/);
   expect(api.named("addPerson").map(({ body }) => body)).toEqual([{ email: "new@example.org", role: "lead" }]);
   expect(screen.getByLabelText<HTMLInputElement>("E-mail").value).toBe("");

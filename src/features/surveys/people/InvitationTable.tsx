@@ -18,8 +18,8 @@ interface InvitationTableProps {
 const MAIL_WORDS: Readonly<Record<Invitation["mail"], string>> = {
   waiting: "on its way",
   sent: "sent",
-  kept: "not sent, kept to be forwarded",
-  failed: "could not be sent",
+  kept: "kept here",
+  failed: "not delivered",
 };
 
 /** Who is invited and has not answered yet. */
