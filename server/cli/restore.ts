@@ -16,6 +16,7 @@ export function restore(args: readonly string[]): number {
   const restored = restoreBackup(resolve(path), {
     databaseFile: env.databaseFile,
     signingKeyFile: signingKeyFile(env),
+    signingKeyGiven: env.signingKey,
     version: version(root),
     now: () => new Date(),
   });

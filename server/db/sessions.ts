@@ -50,6 +50,10 @@ export function deleteSessionsOf(tx: Tx, accountId: string, but: string | null):
     .run();
 }
 
+export function deleteEverySession(tx: Tx): void {
+  tx.delete(sessions).run();
+}
+
 export function deleteExpiredSessions(tx: Tx, now: string): void {
   tx.delete(sessions).where(lte(sessions.expiresAt, now)).run();
 }

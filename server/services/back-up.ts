@@ -17,8 +17,13 @@ export function backUp({ databaseFile, file, signingKey, madeAt }: BackupTask): 
   if (existsSync(file)) throw new Problem("backup-exists", `${file} is there. Give another name, or move it away.`);
   const part = `${file}.part`;
   rmSync(part, { force: true });
-  writeFileSync(part, "", { mode: 0o600 });
-  writeBackupFile(databaseFile, part, { madeAt, signingKey });
-  renameSync(part, file);
+  try {
+    writeFileSync(part, "", { mode: 0o600 });
+    writeBackupFile(databaseFile, part, { madeAt, signingKey });
+    renameSync(part, file);
+  } catch (error) {
+    rmSync(part, { force: true }); // a full disk must not stay full of halves
+    throw error;
+  }
   return statSync(file).size;
 }

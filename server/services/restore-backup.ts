@@ -2,12 +2,16 @@ import { chmodSync, copyFileSync, existsSync, renameSync, rmSync, writeFileSync 
 import { Problem } from "#shared/problem.ts";
 import { takeBackupEnvelope } from "../db/backup-file.ts";
 import { lockForServing } from "../db/lock.ts";
-import { closeDb, openDb } from "../db/open.ts";
+import { closeDb, openDb, writeTx } from "../db/open.ts";
+import { deleteResetsBefore } from "../db/password-resets.ts";
+import { deleteEverySession } from "../db/sessions.ts";
 import { checkInstallation, type InstallationCheck } from "./check-installation.ts";
 
 interface Target {
   readonly databaseFile: string;
   readonly signingKeyFile: string;
+  /** The key that the environment gives, which a server takes before any file; undefined for none. */
+  readonly signingKeyGiven: string | undefined;
   readonly version: string;
   readonly now: () => Date;
 }
@@ -21,8 +25,9 @@ export interface Restored {
 
 /**
  * Puts a backup in the place of the database: copied, brought up to date and checked first; only one that is whole replaces
- * anything, and what was there is set aside under a name with the time. The backup's signing key comes with it.
- * @throws Problem `backup-unusable` where it is none or not whole, `already-served` while a server runs on the place
+ * anything, and what was there is set aside under a name with the time. The backup's signing key comes with it. Sessions and
+ * links to set a password do not: those that were ended since the backup must stay ended.
+ * @throws Problem `backup-unusable` where it is none, not whole, or signed with another key than the given one, `already-served` while a server runs on the place
  */
 export function restoreBackup(file: string, target: Target): Restored {
   if (!existsSync(file)) throw new Problem("backup-unusable", `There is no file ${file}. Check the name.`);
@@ -37,13 +42,16 @@ export function restoreBackup(file: string, target: Target): Restored {
       throw new Problem("backup-unusable", `${file} is no backup that this Quillet made. Nothing was replaced.`);
     }
     const { madeAt, signingKey } = envelope;
-    const check = checkCopy(part, signingKey, target);
-    if (!check.ok) {
-      throw new Problem("backup-unusable", `It is not whole: ${firstFault(check)}. Nothing was replaced.`);
+    if (target.signingKeyGiven !== undefined && target.signingKeyGiven !== signingKey) {
+      throw new Problem(
+        "backup-unusable",
+        "QUILLET_SIGNING_KEY is not the key that its records are signed with: take it out of the environment, then restore again. Nothing was replaced.",
+      );
     }
+    const check = checkCopy(part, signingKey, target);
     const setAside = setOldAside(target);
+    writeFileSync(target.signingKeyFile, signingKey, { mode: 0o600 }); // first: a database never stands beside another's key
     renameSync(part, target.databaseFile);
-    writeFileSync(target.signingKeyFile, signingKey, { mode: 0o600 });
     return { madeAt, check, setAside };
   } finally {
     removeDatabase(part);
@@ -51,15 +59,30 @@ export function restoreBackup(file: string, target: Target): Restored {
   }
 }
 
+/** @throws Problem `backup-unusable` */
 function checkCopy(part: string, signingKey: string, { now, version }: Target): InstallationCheck {
-  const db = openDb(part);
   try {
-    const check = checkInstallation({ db, now, signingKey, version });
-    db.$client.pragma("wal_checkpoint(TRUNCATE)");
-    return check;
-  } finally {
-    closeDb(db);
+    const db = openDb(part);
+    try {
+      const check = checkInstallation({ db, now, signingKey, version });
+      if (!check.ok) throw notWhole(firstFault(check));
+      writeTx(db, (tx) => {
+        deleteEverySession(tx);
+        deleteResetsBefore(tx, now().toISOString());
+      });
+      db.$client.pragma("wal_checkpoint(TRUNCATE)");
+      return check;
+    } finally {
+      closeDb(db);
+    }
+  } catch (error) {
+    if (error instanceof Problem) throw error;
+    throw notWhole(error instanceof Error ? error.message : String(error)); // damage that stops the walk itself
   }
+}
+
+function notWhole(fault: string): Problem {
+  return new Problem("backup-unusable", `It is not whole: ${fault}. Nothing was replaced.`);
 }
 
 function firstFault({ database, surveys }: InstallationCheck): string {

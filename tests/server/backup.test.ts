@@ -3,6 +3,7 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import Database from "better-sqlite3";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import { requestReset } from "#shared/api/people.ts";
 import { createSurvey } from "#shared/api/surveys.ts";
 import { allEvents } from "#server/db/events.ts";
 import { lockForServing } from "#server/db/lock.ts";
@@ -33,6 +34,7 @@ afterAll(async () => {
 const place = (name: string) => ({
   databaseFile: join(folder, `${name}.sqlite`),
   signingKeyFile: join(folder, `${name}-signing-key`),
+  signingKeyGiven: undefined,
   version: "0.0.0-test",
   now: () => new Date("2031-05-03T08:00:00.000Z"),
 });
@@ -83,6 +85,19 @@ describe("a backup", () => {
     expect(statSync(file).mode & 0o777).toBe(0o600);
     expect(() => taken("private.backup")).toThrow(/is there/);
   });
+
+  test("that fails leaves no half of a file", () => {
+    const text = join(folder, "text.sqlite");
+    writeFileSync(
+      text,
+      "not a database, though it has more than the hundred bytes that SQLite's header takes".repeat(9),
+    );
+    const file = join(folder, "failed.backup");
+    expect(() => backUp({ databaseFile: text, file, signingKey: "11".repeat(32), madeAt: MADE_AT })).toThrow(
+      /not a database/,
+    );
+    expect([file, `${file}.part`].filter((name) => existsSync(name))).toEqual([]);
+  });
 });
 
 const NEW_SURVEY = {
@@ -127,6 +142,49 @@ describe("restoring", () => {
     sqlite.close();
     expect(() => restoreBackup(forged, target)).toThrow(/It is not whole: .*Nothing was replaced/);
     expect(readFileSync(target.databaseFile).equals(before)).toBe(true);
+  });
+
+  // The first page of the table of memberships, which SQLite reads while it checks foreign keys.
+  test("refuses a damaged file with SQLite's words, and replaces nothing", () => {
+    const damaged = taken("damaged.backup");
+    const sqlite = new Database(damaged, { readonly: true });
+    const page = sqlite
+      .prepare("SELECT rootpage FROM sqlite_master WHERE name = 'memberships'")
+      .pluck()
+      .get() as number;
+    const size = sqlite.pragma("page_size", { simple: true }) as number;
+    sqlite.close();
+    const bytes = readFileSync(damaged);
+    bytes.fill(0xff, (page - 1) * size, page * size);
+    writeFileSync(damaged, bytes);
+    expect(() => restoreBackup(damaged, place("damaged"))).toThrow(
+      /It is not whole: .*malformed.* Nothing was replaced/,
+    );
+    expect(existsSync(place("damaged").databaseFile)).toBe(false);
+  });
+
+  // The people of the team are signed in while the backup is made; the secret of their cookies is not in it and stays.
+  test("brings back no session and no link to set a password: they may have been ended since", async () => {
+    await server.client().call(requestReset, { body: { email: "counter@example.org" } });
+    const rows = (file: string) => {
+      const sqlite = new Database(file, { readonly: true });
+      const found = ["sessions", "password_resets"].map((table) =>
+        Number(sqlite.prepare(`SELECT count(*) FROM ${table}`).pluck().get()),
+      );
+      sqlite.close();
+      return found;
+    };
+    expect(rows(server.platform.db.$client.name)).not.toContain(0);
+    restoreBackup(taken("sessions.backup"), place("sessions"));
+    expect(rows(place("sessions").databaseFile)).toEqual([0, 0]);
+  });
+
+  test("refuses where the environment gives another signing key: the server would sign with that one", () => {
+    const file = taken("key.backup");
+    const target = { ...place("key"), signingKeyGiven: "22".repeat(32) };
+    expect(() => restoreBackup(file, target)).toThrow(/QUILLET_SIGNING_KEY/);
+    expect(existsSync(target.databaseFile)).toBe(false);
+    expect(restoreBackup(file, { ...target, signingKeyGiven: server.platform.signingKey }).check.ok).toBe(true);
   });
 
   test("refuses while a server runs on the place", () => {
