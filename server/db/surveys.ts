@@ -1,4 +1,5 @@
 import { and, asc, desc, eq, isNull, notInArray } from "drizzle-orm";
+import { Problem } from "#shared/problem.ts";
 import type { Reader, Tx } from "./open.ts";
 import { members, memberships } from "./schema/accounts.ts";
 import { seasons, surveys, targets } from "./schema/surveys.ts";
@@ -19,6 +20,15 @@ export function findSurvey(reader: Reader, id: string): SurveyRow | undefined {
 
 export function isArchived(reader: Reader, id: string): boolean {
   return (findSurvey(reader, id)?.archivedAt ?? null) !== null;
+}
+
+/** @throws Problem `survey-archived`: what is archived can be read, and taken out of the archive */
+export function expectInWork(reader: Reader, id: string): void {
+  if (!isArchived(reader, id)) return;
+  throw new Problem(
+    "survey-archived",
+    "It can be read and takes nothing new. A planner can take it out of the archive.",
+  );
 }
 
 /** The surveys in which an account holds a role, archived ones too, newest first. */

@@ -8,7 +8,7 @@ import { Problem } from "#shared/problem.ts";
 import type { Context, Platform, Visitor } from "../context.ts";
 import { isOwnedParam, surveyOf } from "../db/belongs.ts";
 import { standingOf } from "../db/members.ts";
-import { isArchived } from "../db/surveys.ts";
+import { expectInWork } from "../db/surveys.ts";
 import { parse } from "./parse.ts";
 import { type FileAnswer, send } from "./send.ts";
 import type { Proven, Sessions } from "./session.ts";
@@ -139,22 +139,13 @@ async function memberFor(contract: Contract, platform: Platform, sessions: Sessi
   if (reached === "none") {
     throw new Problem("not-allowed", `As ${roles.join(" and ")} of this survey you can't do this: ask a planner.`);
   }
-  expectOpen(contract, platform, surveyId);
+  if (contract.method !== "GET" && contract.whenArchived !== true) expectInWork(platform.db, surveyId);
   for (const [name, value] of Object.entries(req.params)) {
     if (isOwnedParam(name) && surveyOf(platform.db, name, String(value)) !== surveyId) {
       throw new Problem("not-found", "It may belong to another survey: go back to the survey and choose again.");
     }
   }
   return { ...visitor, surveyId, memberId, roles, reach: reached } satisfies Context;
-}
-
-/** What is archived can be read, and taken out of the archive. */
-function expectOpen(contract: Contract, platform: Platform, surveyId: string): void {
-  if (contract.method === "GET" || contract.whenArchived === true || !isArchived(platform.db, surveyId)) return;
-  throw new Problem(
-    "survey-archived",
-    "It can be read and takes nothing new. A planner can take it out of the archive.",
-  );
 }
 
 function fileReader(upload: { field: string; maxBytes: number }): RequestHandler {

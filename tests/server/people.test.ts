@@ -8,7 +8,9 @@ import { readSurvey } from "#shared/api/surveys.ts";
 import type { RecordFile } from "#shared/record/record-file.ts";
 import { replay } from "#shared/record/replay.ts";
 import { keyFingerprint, publicKeyOf } from "#shared/record/sign.ts";
+import { findAccountByEmail } from "#server/db/accounts.ts";
 import { allEvents } from "#server/db/events.ts";
+import { changeName as changeNameOf } from "#server/services/change-name.ts";
 import { mailsTo, mailTo } from "../fixtures/mails.ts";
 import { anotherSurvey } from "../fixtures/sealed-frame.ts";
 import { type Client, startTeam, startTestServer, type Team, type TestServer } from "../fixtures/server.ts";
@@ -192,6 +194,23 @@ describe("a new name", () => {
       expect(JSON.parse(last?.payload ?? "{}")).toMatchObject({ before: "Mover", after: "Ada Mover" });
     }
     expect((await mover.call(readSession)).json.account?.name).toBe("Ada Mover");
+  });
+
+  // Both requests were let in while the name was "Counter": the second one's event must begin with what the first one set.
+  test("changed twice at the same moment is told as one name after the other", async () => {
+    const { platform } = server;
+    const account = findAccountByEmail(platform.db, "counter@example.org");
+    if (!account) throw new Error("nobody is counter");
+    changeNameOf({ ...platform, account }, "Counter B");
+    changeNameOf({ ...platform, account }, "Counter C");
+    const events = allEvents(platform.db, team.surveyId).filter(({ kind }) => kind === "member-renamed");
+    const names = events.slice(-2).map(({ payload }) => JSON.parse(payload) as { before: string; after: string });
+    expect(names.map(({ before, after }) => [before, after])).toEqual([
+      [account.name, "Counter B"],
+      ["Counter B", "Counter C"],
+    ]);
+    changeNameOf({ ...platform, account }, account.name);
+    expect(findAccountByEmail(platform.db, "counter@example.org")?.name).toBe(account.name);
   });
 
   test("that is the old one is no event", async () => {

@@ -13,6 +13,8 @@ import {
   unarchiveSurvey,
 } from "#shared/api/settings.ts";
 import { buildRecord } from "#server/services/build-record.ts";
+import { exportWaypoints } from "#server/services/export-waypoints.ts";
+import { actingAs } from "../fixtures/acting-as.ts";
 import { drawnSurveyEachTest } from "../fixtures/drawn-survey.ts";
 
 const survey = drawnSurveyEachTest();
@@ -153,6 +155,15 @@ describe("an archived survey", () => {
     expect(out.json.archivedAt).toBeNull();
     expect(survey.kinds().at(-1)).toBe("survey-unarchived");
     expect((await survey.team.lead.call(enterCounts, { params, body: { entries } })).status).toBe(200);
+  });
+
+  // The file is made in a worker: between the look at the archive and the event others act.
+  test("takes nothing that was begun before it was archived, either", async () => {
+    const wanted = { format: "csv", nameLength: 10, prefix: "", memberId: null } as const;
+    const meanwhile = () => survey.team.planner.call(archiveSurvey, { params: survey.here() });
+    const made = exportWaypoints(actingAs(survey, "lead", meanwhile), wanted, new AbortController().signal);
+    await expect(made).rejects.toMatchObject({ code: "survey-archived" });
+    expect(survey.kinds().at(-1)).toBe("survey-archived");
   });
 
   test("taking out what is not in the archive does nothing", async () => {
