@@ -111,13 +111,21 @@ export function memberNames(reader: Reader, surveyId: string): Map<string, strin
   return new Map(rows.map((row) => [row.id, row.name]));
 }
 
-/** Whether anybody holds a role in a survey. */
+/** Whether anybody who can sign in holds a role in a survey. */
 export function isRoleHeld(reader: Reader, surveyId: string, role: Role): boolean {
   const found = reader
     .select({ id: members.id })
     .from(members)
+    .innerJoin(accounts, eq(accounts.id, members.accountId))
     .innerJoin(memberships, eq(memberships.memberId, members.id))
-    .where(and(eq(members.surveyId, surveyId), eq(memberships.role, role), isNull(memberships.removedAt)))
+    .where(
+      and(
+        eq(members.surveyId, surveyId),
+        eq(memberships.role, role),
+        isNull(memberships.removedAt),
+        isNull(accounts.closedAt),
+      ),
+    )
     .limit(1)
     .get();
   return found !== undefined;

@@ -7,7 +7,7 @@ import { assignVisits, closePick } from "#shared/api/field.ts";
 import { listSurveys, readSurvey } from "#shared/api/surveys.ts";
 import type { WaitingThing } from "#shared/api/waiting.ts";
 import type { Role } from "#shared/access/table.ts";
-import { findAccountByEmail } from "#server/db/accounts.ts";
+import { findAccountByEmail, updateAccount } from "#server/db/accounts.ts";
 import { newestEvent } from "#server/db/events.ts";
 import { writeTx } from "#server/db/open.ts";
 import { invitations, memberships } from "#server/db/schema/accounts.ts";
@@ -114,6 +114,19 @@ test("a lead is told what is in nobody's list, what was reported, and when all i
     tx.update(memberships).set({ removedAt }).where(eq(memberships.memberId, leadMember)).run(),
   );
   expect(await waitingFor("planner")).toEqual([{ kind: "all-counted", role: "planner", cells: 10 }]);
+});
+
+// The role stays while an account is closed: it may be opened again.
+test("the planner is told what a lead would do while the only lead's account is closed", async () => {
+  await drawTen();
+  expect(await waitingFor("planner")).toEqual([]);
+  const { db } = use.server.platform;
+  const account = findAccountByEmail(db, "lead@example.org");
+  const setClosed = (closedAt: string | null) =>
+    writeTx(db, (tx) => updateAccount(tx, account?.id ?? "", { closedAt }));
+  setClosed("2031-05-02T08:00:00.000Z");
+  expect(await waitingFor("planner")).toEqual([{ kind: "not-shared-out", role: "planner", cells: 10, of: 10 }]);
+  setClosed(null);
 });
 
 test("an estimate older than a count waits for planner and lead, one that is newer waits for nobody", async () => {
