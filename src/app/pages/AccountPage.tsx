@@ -26,8 +26,8 @@ export function AccountPage() {
         </MarginNote>
       )}
       <MarginNote title="Your address">
-        Invitations and links come to it. Only you, the planners of your surveys and the owner see it; no record holds
-        it.
+        Invitations and links come to it. Planners, leads and auditors of your surveys see it, and the owner; no record
+        holds it.
       </MarginNote>
     </>
   );
