@@ -197,7 +197,7 @@ describe("a new name", () => {
   });
 
   // Both requests were let in while the name was "Counter": the second one's event must begin with what the first one set.
-  test("changed twice at the same moment is told as one name after the other", async () => {
+  test("changed twice at the same moment is told as one name after the other", () => {
     const { platform } = server;
     const account = findAccountByEmail(platform.db, "counter@example.org");
     if (!account) throw new Error("nobody is counter");
