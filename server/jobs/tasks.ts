@@ -1,5 +1,6 @@
 import type { CrsChoice } from "#shared/api/area.ts";
 import type { FrameSpec, FrameSummary } from "#shared/api/frame.ts";
+import type { AreaAnswers } from "#shared/area/questions.ts";
 import type { ImportReport } from "#shared/area/report.ts";
 import type { BackupTask } from "../services/back-up.ts";
 import type { CountsTask, JudgedCounts } from "./judge-counts.ts";
@@ -11,7 +12,7 @@ export interface JobTasks {
   "read-area": {
     readonly name: string;
     readonly bytes: Uint8Array;
-    readonly answers: { readonly crs?: string | undefined; readonly layer?: string | undefined };
+    readonly answers: AreaAnswers;
   };
   "make-plane": { readonly geometry: string; readonly epsg: number };
   "search-crs": { readonly text: string; readonly projectedOnly: boolean };

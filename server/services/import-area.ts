@@ -1,3 +1,4 @@
+import type { AreaAnswers } from "#shared/area/questions.ts";
 import type { Context } from "../context.ts";
 import { type AreaHead, areasOf, findAreaHead, insertArea } from "../db/areas.ts";
 import { writeTx } from "../db/open.ts";
@@ -10,11 +11,6 @@ interface AreaFile {
   readonly bytes: Uint8Array;
 }
 
-interface Answers {
-  readonly crs?: string | undefined;
-  readonly layer?: string | undefined;
-}
-
 /**
  * Reads a boundary file in a worker and keeps it as the next version of the study area: bytes as they came, geometry in its
  * own system, report. What the file leaves open is asked by the refusal "area-question"; nothing is kept then.
@@ -22,7 +18,7 @@ interface Answers {
 export async function importArea(
   ctx: Context,
   file: AreaFile,
-  answers: Answers,
+  answers: AreaAnswers,
   signal: AbortSignal,
 ): Promise<AreaHead> {
   const memberId = actingMember(ctx);

@@ -60,6 +60,10 @@ export const areaAnswers = z.object({
   /** An EPSG code as text ("25831" or "EPSG:25831") or a CRS text (PROJ, WKT). */
   crs: z.optional(longText),
   layer: z.optional(z.string().check(z.maxLength(300))),
+  /** Places, in the list of the question, of the lines to close to a boundary. */
+  lines: z.optional(z.readonly(z.array(z.int().check(z.minimum(0))).check(z.maxLength(1000)))),
+  /** The file has latitude first. */
+  axes: z.optional(z.literal("exchanged")),
 });
 
 export const importArea = contract({

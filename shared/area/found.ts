@@ -11,6 +11,13 @@ export type StatedCrs =
     }
   | { readonly kind: "missing"; readonly why: string };
 
+/** A line that may be meant as a boundary; it is closed to a ring only where somebody says so. */
+export interface FoundLine {
+  /** As the file names it, or what it is and its number: "line 3". */
+  readonly name: string;
+  readonly vertices: readonly Position[];
+}
+
 /** What a reader took from a file, before anything is checked: rings as they came, closed or not. */
 export interface FoundPolygons {
   readonly format: string;
@@ -18,6 +25,7 @@ export interface FoundPolygons {
   readonly features: number;
   /** [polygon][ring][vertex]; the first ring of a polygon is its outer one. */
   readonly polygons: readonly (readonly (readonly Position[])[])[];
+  readonly lines: readonly FoundLine[];
   readonly others: { readonly points: number; readonly lines: number; readonly empty: number };
   /** Vertices that had a third or further coordinate. */
   readonly heights: number;

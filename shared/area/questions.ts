@@ -3,7 +3,7 @@ import type { LngLat } from "#shared/units/metric.ts";
 
 export type Magnitude = "degrees" | "metres" | "unknown";
 
-/** A question rides on the refusal that asks it. The next request answers with the same file and `crs` or `layer`. */
+/** A question rides on the refusal that asks it. The next request answers with the same file and what was asked for. */
 export type AreaQuestion =
   | {
       readonly kind: "crs";
@@ -12,6 +12,12 @@ export type AreaQuestion =
       readonly suggestions: readonly { readonly epsg: number; readonly name: string; readonly note: string }[];
     }
   | { readonly kind: "layer"; readonly why: string; readonly layers: readonly string[] }
+  /** The file holds lines and no polygon: which of them are boundaries to be closed. `gap` is how far its ends lie apart. */
+  | {
+      readonly kind: "lines";
+      readonly why: string;
+      readonly lines: readonly { readonly name: string; readonly vertices: number; readonly gap: string }[];
+    }
   /** Longitude and latitude look exchanged: what the place would be either way; null where it would be no place at all. */
   | {
       readonly kind: "axes";
@@ -27,6 +33,10 @@ export interface AreaAnswers {
   /** An EPSG code as text, a PROJ text or WKT. */
   readonly crs?: string | undefined;
   readonly layer?: string | undefined;
+  /** Places, in the list of the question, of the lines to close. */
+  readonly lines?: readonly number[] | undefined;
+  /** The first coordinate of the file is the latitude. */
+  readonly axes?: "exchanged" | undefined;
 }
 
 /** Asks for the coordinate reference system; nothing is assumed. */
@@ -45,11 +55,17 @@ export function askLayer(layers: readonly string[]): Problem {
   return new Problem("area-question", `${why} Say which one is the study area.`, question);
 }
 
+export function askLines(lines: readonly { name: string; vertices: number; gap: string }[]): Problem {
+  const why = lines.length === 1 ? "Found a line and no polygon." : `Found ${lines.length} lines and no polygon.`;
+  const question = { kind: "lines", why, lines } as const satisfies AreaQuestion;
+  return new Problem("area-question", `${why} Say which to close to a boundary.`, question);
+}
+
 export function askAxes(why: string, asWritten: LngLat | null, exchanged: LngLat | null): Problem {
   const question = { kind: "axes", why, asWritten, exchanged } as const satisfies AreaQuestion;
   return new Problem(
     "coordinates-swapped",
-    `${why} Write the file again with longitude (east) first, then latitude (north).`,
+    `${why} Say whether they are, or write the file again with longitude (east) first, then latitude (north).`,
     question,
   );
 }

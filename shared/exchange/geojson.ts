@@ -1,8 +1,9 @@
-import type { FoundPolygons, StatedCrs } from "#shared/area/found.ts";
+import type { FoundLine, FoundPolygons, StatedCrs } from "#shared/area/found.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Position } from "#shared/projection/transformer.ts";
 
 const MAX_DEPTH = 30;
+const LONGEST_NAME = 100;
 const GEOMETRIES = [
   "Point",
   "MultiPoint",
@@ -17,9 +18,9 @@ type Json = Readonly<Record<string, unknown>>;
 
 interface Tally {
   polygons: Position[][][];
+  lines: FoundLine[];
   features: number;
   points: number;
-  lines: number;
   empty: number;
   heights: number;
 }
@@ -37,14 +38,15 @@ export function readGeoJson(text: string): FoundPolygons {
       "This is JSON but not GeoJSON: it has no “type”. Export the boundary as GeoJSON.",
     );
   }
-  const tally: Tally = { polygons: [], features: 0, points: 0, lines: 0, empty: 0, heights: 0 };
+  const tally: Tally = { polygons: [], lines: [], features: 0, points: 0, empty: 0, heights: 0 };
   readRoot(root, tally);
   return {
     format: "GeoJSON",
     crs: statedCrs(root),
     features: tally.features,
     polygons: tally.polygons,
-    others: { points: tally.points, lines: tally.lines, empty: tally.empty },
+    lines: tally.lines,
+    others: { points: tally.points, lines: tally.lines.length, empty: tally.empty },
     heights: tally.heights,
     mended: [],
     ignored: [],
@@ -84,16 +86,16 @@ function readRoot(root: Json, tally: Tally): void {
     readFeature(root, "The feature", tally);
   } else {
     tally.features = 1;
-    readGeometry(root, "The geometry", tally, 0);
+    readGeometry(root, "The geometry", "", tally, 0);
   }
 }
 
 function readFeature(feature: unknown, where: string, tally: Tally): void {
   if (!isObject(feature)) throw new Problem("file-damaged", `${where} is not an object. Export the boundary again.`);
   tally.features += 1;
-  if (feature["type"] === "Feature") readGeometry(feature["geometry"] ?? null, where, tally, 0);
+  if (feature["type"] === "Feature") readGeometry(feature["geometry"] ?? null, where, nameOf(feature), tally, 0);
   else if (typeof feature["type"] === "string" && GEOMETRIES.includes(feature["type"]))
-    readGeometry(feature, where, tally, 0);
+    readGeometry(feature, where, "", tally, 0);
   else
     throw new Problem(
       "file-damaged",
@@ -101,7 +103,7 @@ function readFeature(feature: unknown, where: string, tally: Tally): void {
     );
 }
 
-function readGeometry(geometry: unknown, where: string, tally: Tally, depth: number): void {
+function readGeometry(geometry: unknown, where: string, name: string, tally: Tally, depth: number): void {
   if (geometry === null) {
     tally.empty += 1;
     return;
@@ -122,7 +124,7 @@ function readGeometry(geometry: unknown, where: string, tally: Tally, depth: num
           "file-unsafe",
           `${where} nests collections more than ${MAX_DEPTH} deep. Export the boundary as plain polygons.`,
         );
-      for (const member of list(geometry["geometries"], where)) readGeometry(member, where, tally, depth + 1);
+      for (const member of list(geometry["geometries"], where)) readGeometry(member, where, name, tally, depth + 1);
       return;
     }
     case "Point":
@@ -132,14 +134,26 @@ function readGeometry(geometry: unknown, where: string, tally: Tally, depth: num
       tally.points += list(coordinates, where).length;
       return;
     case "LineString":
-      tally.lines += 1;
+      addLine(coordinates, where, name, tally);
       return;
     case "MultiLineString":
-      tally.lines += list(coordinates, where).length;
+      for (const line of list(coordinates, where)) addLine(line, where, name, tally);
       return;
     default:
       throw new Problem("file-damaged", `${where} is of no kind that GeoJSON knows. Export the boundary again.`);
   }
+}
+
+/** What people see a feature called. */
+function nameOf(feature: Json): string {
+  const properties = feature["properties"];
+  const name = isObject(properties) ? (properties["name"] ?? properties["Name"]) : undefined;
+  return typeof name === "string" ? name.trim().slice(0, LONGEST_NAME) : "";
+}
+
+function addLine(coordinates: unknown, where: string, name: string, tally: Tally): void {
+  const vertices = list(coordinates, where).map((vertex) => position(vertex, where, tally));
+  tally.lines.push({ name: name === "" ? `line ${tally.lines.length + 1}` : name, vertices });
 }
 
 function addPolygon(coordinates: unknown, where: string, tally: Tally): void {

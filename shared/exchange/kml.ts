@@ -1,10 +1,9 @@
 import { kml } from "@tmcw/togeojson";
-import { DOMParser, type Document } from "@xmldom/xmldom";
+import type { Document } from "@xmldom/xmldom";
 import type { FoundPolygons } from "#shared/area/found.ts";
 import { Problem } from "#shared/problem.ts";
 import { readGeoJson } from "#shared/exchange/geojson.ts";
-
-const MAX_CHARACTERS = 60_000_000;
+import { parseXml } from "#shared/exchange/xml.ts";
 
 /**
  * KML (always longitude and latitude of WGS 84) to polygons as they came. Declarations of entities are refused before anything
@@ -13,10 +12,7 @@ const MAX_CHARACTERS = 60_000_000;
  * @throws Problem file-unsafe, file-damaged.
  */
 export function readKml(text: string): FoundPolygons {
-  if (text.length > MAX_CHARACTERS)
-    throw new Problem("file-unsafe", "This KML is larger than 60 MB. Keep only the boundary in it.");
-  refuseDeclarations(text);
-  const document = parseXml(text);
+  const document = parseXml(text, "KML");
   if (document.documentElement?.localName !== "kml") {
     throw new Problem(
       "file-unknown",
@@ -59,36 +55,6 @@ export function readKml(text: string): FoundPolygons {
     ignored,
     notes: [],
   };
-}
-
-/** What stands before the outermost element, comments and processing instructions taken away, may declare no document type. */
-function refuseDeclarations(text: string): void {
-  const prolog = text.replace(/^\s*(?:<\?[^]*?\?>\s*|<!--[^]*?-->\s*)*/, "");
-  if (/^<!/.test(prolog)) {
-    throw new Problem(
-      "file-unsafe",
-      "This KML declares a document type or entities, which can hide harmful content. Save it again as plain KML or as GeoJSON.",
-    );
-  }
-}
-
-function parseXml(text: string): Document {
-  let complaint = "";
-  try {
-    return new DOMParser({
-      onError: (level, message) => {
-        if (level !== "warning" && complaint === "") complaint = message;
-        if (level === "fatalError") throw new Error(message);
-      },
-    }).parseFromString(text, "application/xml");
-  } catch (error) {
-    const message = complaint === "" && error instanceof Error ? error.message : complaint;
-    const line = /\[line:(\d+),col:(\d+)\]|:(\d+):(\d+)/.exec(message);
-    throw new Problem(
-      "file-damaged",
-      `The KML is not well-formed XML${line?.[1] === undefined ? "" : ` at line ${line[1]}`}. It may be cut short; export it again.`,
-    );
-  }
 }
 
 /** Rings within polygons as the document has them, whatever their prefix. */

@@ -1,6 +1,7 @@
 import { sha256 } from "@noble/hashes/sha2.js";
 import { bytesToHex } from "@noble/hashes/utils.js";
 import { checkArea, type CheckedArea } from "#shared/area/check.ts";
+import { closeLines } from "#shared/area/close-lines.ts";
 import type { FoundPolygons } from "#shared/area/found.ts";
 import type { ImportedArea } from "#shared/area/imported-area.ts";
 import { extentOf, magnitudeOf } from "#shared/area/plausible.ts";
@@ -8,6 +9,7 @@ import { askCrs, type AreaAnswers } from "#shared/area/questions.ts";
 import { buildReport, type ImportReport } from "#shared/area/report.ts";
 import { readBoundaryFile } from "#shared/exchange/read-file.ts";
 import { Problem } from "#shared/problem.ts";
+import type { Position } from "#shared/projection/transformer.ts";
 import { crsFromText, type Crs, type EpsgLookup } from "#shared/projection/crs.ts";
 
 export interface AreaFile {
@@ -27,12 +29,24 @@ export interface AreaRead {
  * @throws Problem file-*, area-*, rings-cross, parts-overlap, coordinates-swapped, crs-*.
  */
 export function readArea(file: AreaFile, answers: AreaAnswers, tools: { readonly epsg?: EpsgLookup }): AreaRead {
-  const found = readBoundaryFile(file.bytes, answers);
+  const found = closeLines(oriented(readBoundaryFile(file.bytes, answers), answers), answers);
   const { crs, howKnown, notes, checked } = settle(found, answers, tools.epsg);
   const source = { fileName: file.name, bytes: file.bytes.length, sha256: bytesToHex(sha256(file.bytes)) };
   const allNotes = [...found.notes, ...notes, ...checked.notes, ...areaOfUseNote(crs, checked, tools.epsg)];
   const report = buildReport({ found, checked, source, howKnown, notes: allNotes });
   return { value: { area: checked.area, report }, notes: report.notes };
+}
+
+/** Coordinates the other way round, where somebody said that the file has them so. */
+function oriented(found: FoundPolygons, { axes }: AreaAnswers): FoundPolygons {
+  if (axes !== "exchanged") return found;
+  const exchanged = (vertices: readonly Position[]): Position[] => vertices.map(([x, y]) => [y, x]);
+  return {
+    ...found,
+    polygons: found.polygons.map((polygon) => polygon.map(exchanged)),
+    lines: found.lines.map((line) => ({ ...line, vertices: exchanged(line.vertices) })),
+    mended: [...found.mended, "Longitude and latitude were exchanged, as told at import."],
+  };
 }
 
 interface Settled {

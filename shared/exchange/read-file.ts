@@ -1,13 +1,15 @@
 import type { FoundPolygons } from "#shared/area/found.ts";
-import type { AreaAnswers } from "#shared/area/questions.ts";
+import { askLayer, type AreaAnswers } from "#shared/area/questions.ts";
 import { boundaryText } from "#shared/exchange/boundary-text.ts";
 import { readGeoJson } from "#shared/exchange/geojson.ts";
+import { readGpx } from "#shared/exchange/read-gpx.ts";
 import { readKml } from "#shared/exchange/kml.ts";
+import { looksLikeWkt, readWkt } from "#shared/exchange/read-wkt.ts";
 import { readZippedShapefile } from "#shared/exchange/shapefile.ts";
-import { listZip } from "#shared/exchange/zip.ts";
+import { listZip, unzipEntry, type ZipEntry } from "#shared/exchange/zip.ts";
 import { Problem } from "#shared/problem.ts";
 
-const KINDS_READ = "Boundaries are read from GeoJSON, a zipped shapefile, or KML.";
+const KINDS_READ = "Boundaries are read from GeoJSON, a zipped shapefile, KML, KMZ, GPX or WKT.";
 
 /** Files that people choose by mistake, by their first bytes, and what to do instead. */
 const SIGNATURES: readonly { start: readonly number[]; what: string; next?: string }[] = [
@@ -64,13 +66,29 @@ function readArchive(bytes: Uint8Array, answers: AreaAnswers): FoundPolygons {
   if (entries.some(({ name }) => /\.shp$/i.test(name))) return readZippedShapefile(bytes, entries, answers);
   const document = entries.find(({ name }) => /^(word|xl|ppt)\//.test(name) || name === "mimetype");
   if (document !== undefined) throw unknown(`an office document (${officeKind(document.name)})`);
-  const inside = entries.find(({ name }) => /\.(kml|geojson|json|gpkg|shp)$/i.test(name));
+  const kmls = entries.filter(({ name }) => /\.kml$/i.test(name));
+  if (kmls.length > 0) return readKmz(bytes, kmls, answers);
+  const inside = entries.find(({ name }) => /\.(geojson|json|gpkg)$/i.test(name));
   if (inside !== undefined)
     throw unknown(
       `a zip archive with “${inside.name}” and no shapefile in it`,
       `Unpack it and choose the boundary file itself.`,
     );
   return readZippedShapefile(bytes, entries, answers);
+}
+
+/** A KMZ is a zip archive of a KML with its pictures; several KML files in it are asked for. */
+function readKmz(bytes: Uint8Array, kmls: readonly ZipEntry[], answers: AreaAnswers): FoundPolygons {
+  const names = kmls.map(({ name }) => name);
+  const chosen = kmls.find(({ name }) => name === answers.layer) ?? (kmls.length === 1 ? kmls[0] : undefined);
+  if (chosen === undefined) throw askLayer(names);
+  const found = readKml(boundaryText(unzipEntry(bytes, chosen)));
+  const others = names.filter((name) => name !== chosen.name);
+  return {
+    ...found,
+    format: "KMZ",
+    ignored: [...found.ignored, ...(others.length === 0 ? [] : [`Other files of the archive: ${others.join(", ")}.`])],
+  };
 }
 
 const officeKind = (name: string): string =>
@@ -90,14 +108,9 @@ function readText(bytes: Uint8Array): FoundPolygons {
   if (start.startsWith("{") || start.startsWith("[")) return readGeoJson(text);
   if (/^<(!doctype html|html)/i.test(start))
     throw unknown("a web page (HTML)", "Perhaps it is the page that a download should have come from.");
-  if (/<gpx[\s>]/i.test(start))
-    throw unknown(
-      "GPX",
-      "Tracks and routes are not read as boundaries yet; convert it to GeoJSON with a closed polygon.",
-    );
+  if (/<(\w+:)?gpx[\s>]/i.test(start)) return readGpx(text);
   if (start.startsWith("<")) return readKml(text);
-  if (/^(SRID=\d+;)?\s*(MULTI)?POLYGON\s*(Z|M|ZM)?\s*\(/i.test(start))
-    throw unknown("a WKT text", "Save the polygon as GeoJSON.");
+  if (looksLikeWkt(start)) return readWkt(text);
   throw unknown(`plain text, beginning “${start.split(/\r?\n/)[0]?.slice(0, 40) ?? ""}”`);
 }
 

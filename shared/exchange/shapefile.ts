@@ -1,5 +1,5 @@
 import { parseShp } from "shpjs";
-import type { FoundPolygons, StatedCrs } from "#shared/area/found.ts";
+import type { FoundLine, FoundPolygons, StatedCrs } from "#shared/area/found.ts";
 import { askLayer, type AreaAnswers } from "#shared/area/questions.ts";
 import { boundaryText } from "#shared/exchange/boundary-text.ts";
 import { baseType, walkShapeRecords, type ShapeFileHeader } from "#shared/exchange/shapefile-records.ts";
@@ -43,15 +43,18 @@ export function readShp(shp: Uint8Array, layer: string): Omit<FoundPolygons, "cr
   const header = walkShapeRecords(shp, layer);
   const geometries = parse(shp, header, layer);
   const polygons: Position[][][] = [];
-  const others = { points: 0, lines: 0, empty: 0 };
+  const lines: FoundLine[] = [];
+  const others = { points: 0, empty: 0 };
   let heights = 0;
   geometries.forEach((geometry, index) => {
     const place = `Record ${index + 1} of “${layer}.shp”`;
     if (geometry === null) others.empty += 1;
     else if (geometry.type === "Point") others.points += 1;
     else if (geometry.type === "MultiPoint") others.points += geometry.coordinates.length;
-    else if (geometry.type === "LineString" || geometry.type === "MultiLineString") others.lines += 1;
-    else {
+    else if (geometry.type === "LineString" || geometry.type === "MultiLineString") {
+      for (const line of geometry.type === "LineString" ? [geometry.coordinates] : geometry.coordinates)
+        lines.push({ name: `line ${lines.length + 1}`, vertices: line.map((vertex) => position(vertex, place)) });
+    } else {
       const rings = (geometry.type === "Polygon" ? [geometry.coordinates] : geometry.coordinates).map((polygon) =>
         polygon.map((ring) => ring.map((vertex) => position(vertex, place))),
       );
@@ -64,7 +67,8 @@ export function readShp(shp: Uint8Array, layer: string): Omit<FoundPolygons, "cr
     format: "Shapefile",
     features: header.records.length,
     polygons,
-    others,
+    lines,
+    others: { ...others, lines: lines.length },
     heights,
     mended: [],
     ignored: [],

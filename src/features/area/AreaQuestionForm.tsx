@@ -2,8 +2,10 @@ import { useState } from "react";
 import type { AreaAnswers, AreaQuestion } from "#shared/area/questions.ts";
 import { CrsSearch } from "../../components/crs/CrsSearch.tsx";
 import { Button } from "../../components/ui/Button.tsx";
+import { Checkbox } from "../../components/ui/Checkbox.tsx";
 import { Field } from "../../components/ui/Field.tsx";
 import { Fold } from "../../components/ui/Fold.tsx";
+import { formatCount } from "../../components/ui/format.ts";
 import { RadioCards } from "../../components/ui/RadioCards.tsx";
 import { TextArea } from "../../components/ui/TextArea.tsx";
 import { AskBlock } from "./AskBlock.tsx";
@@ -85,7 +87,66 @@ function LayerQuestion({
   );
 }
 
-/** What the file leaves open. A question about swapped axes or one about a place is answered by a better file. */
+function LinesQuestion({
+  question,
+  busy,
+  onAnswer,
+}: AreaQuestionFormProps & { question: AreaQuestion & { kind: "lines" } }) {
+  const [chosen, setChosen] = useState<readonly number[]>(question.lines.length === 1 ? [0] : []);
+  const toggle = (place: number) => {
+    setChosen(
+      chosen.includes(place) ? chosen.filter((one) => one !== place) : [...chosen, place].sort((a, b) => a - b),
+    );
+  };
+  return (
+    <AskBlock question="Close a line to a boundary?" why={question.why}>
+      <div role="group" aria-label="Lines in the file">
+        {question.lines.map(({ name, vertices, gap }, place) => (
+          <Checkbox
+            key={place}
+            label={name}
+            help={`${formatCount(vertices, "vertex", "vertices")}; ${gap}.`}
+            checked={chosen.includes(place)}
+            onChange={() => toggle(place)}
+          />
+        ))}
+      </div>
+      <p className="q-help">A straight edge is drawn from a line’s end to its beginning, and the report says so.</p>
+      <div>
+        <Button size="small" busy={busy} disabled={chosen.length === 0} onClick={() => onAnswer({ lines: chosen })}>
+          {chosen.length === 0 ? "Choose a line first" : `Close ${formatCount(chosen.length, "line")}`}
+        </Button>
+      </div>
+    </AskBlock>
+  );
+}
+
+function AxesQuestion({
+  question,
+  detail,
+  busy,
+  onAnswer,
+}: AreaQuestionFormProps & { question: AreaQuestion & { kind: "axes" } }) {
+  return (
+    <AskBlock question="Are longitude and latitude exchanged?" why={detail}>
+      <dl className="q-places">
+        <dt>As written</dt>
+        <dd>{question.asWritten === null ? "no place on the Earth" : placeText(question.asWritten)}</dd>
+        <dt>Exchanged</dt>
+        <dd>{question.exchanged === null ? "no place on the Earth" : placeText(question.exchanged)}</dd>
+      </dl>
+      {question.exchanged !== null && (
+        <div>
+          <Button size="small" busy={busy} onClick={() => onAnswer({ axes: "exchanged" })}>
+            Yes, it lies at the second place
+          </Button>
+        </div>
+      )}
+    </AskBlock>
+  );
+}
+
+/** What the file leaves open. A question about one place is answered by a better file. */
 export function AreaQuestionForm(props: AreaQuestionFormProps) {
   const { question, detail } = props;
   switch (question.kind) {
@@ -93,17 +154,10 @@ export function AreaQuestionForm(props: AreaQuestionFormProps) {
       return <CrsQuestion {...props} question={question} />;
     case "layer":
       return <LayerQuestion {...props} question={question} />;
+    case "lines":
+      return <LinesQuestion {...props} question={question} />;
     case "axes":
-      return (
-        <AskBlock question="Are longitude and latitude exchanged?" why={detail}>
-          <dl className="q-places">
-            <dt>As written</dt>
-            <dd>{question.asWritten === null ? "no place on the Earth" : placeText(question.asWritten)}</dd>
-            <dt>Exchanged</dt>
-            <dd>{question.exchanged === null ? "no place on the Earth" : placeText(question.exchanged)}</dd>
-          </dl>
-        </AskBlock>
-      );
+      return <AxesQuestion {...props} question={question} />;
     case "place":
       return (
         <AskBlock question="One place has to be mended in the file." why={detail}>

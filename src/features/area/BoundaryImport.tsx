@@ -17,7 +17,7 @@ interface BoundaryImportProps {
 /** Choosing a boundary file, and answering what it leaves open. A refused file stays chosen. */
 export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
   const { file, reading, refusal, question } = boundary;
-  const canAnswer = question?.kind === "crs" || question?.kind === "layer";
+  const canAnswer = question !== null && question.kind !== "place";
   // The question itself tells what is refused with it.
   const apart = refusal !== null && refusal.question === undefined;
   return (
@@ -54,8 +54,8 @@ export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
       {!reading && (
         <FileDrop
           label={file === null ? "Drop the boundary file here" : "Another file"}
-          help={`GeoJSON, zipped shapefile or KML, at most ${formatUnit(formatNumber(MAX_AREA_FILE_BYTES / 1_000_000), "MB")}.`}
-          accept=".geojson,.json,.zip,.kml"
+          help={`GeoJSON, zipped shapefile, KML, KMZ, GPX or WKT, at most ${formatUnit(formatNumber(MAX_AREA_FILE_BYTES / 1_000_000), "MB")}.`}
+          accept=".geojson,.json,.zip,.kml,.kmz,.gpx,.wkt,.txt"
           primary={file === null}
           onFile={boundary.take}
           buttonLabel={file === null ? "Choose a file" : "Choose another file"}

@@ -21,7 +21,13 @@ export interface BoundaryFile {
   readonly leave: () => void;
 }
 
-const QUESTION_KINDS: readonly string[] = ["crs", "layer", "axes", "place"] satisfies readonly AreaQuestion["kind"][];
+const QUESTION_KINDS: readonly string[] = [
+  "crs",
+  "layer",
+  "lines",
+  "axes",
+  "place",
+] satisfies readonly AreaQuestion["kind"][];
 
 /** Refusals that another answer, or the same once more, may help. */
 const OF_THE_ANSWER: readonly ProblemCode[] = [

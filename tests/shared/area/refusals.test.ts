@@ -1,5 +1,6 @@
 import { zipSync } from "fflate";
 import { describe, expect, test } from "vitest";
+import { readArea } from "#shared/exchange/read-area.ts";
 import { imported } from "../exchange/imports.ts";
 import { makeShp, rectangle } from "../exchange/make-shapefile.ts";
 import { box, geojson, inSystem, read, refused } from "./read.ts";
@@ -19,7 +20,6 @@ describe("a boundary that cannot be used", { timeout: 30_000 }, () => {
       "file-unknown",
       /office document/,
     ],
-    ["WKT", made("area.wkt"), "file-unknown", /WKT/],
     ["a table", new TextEncoder().encode("name;x;y\na;1;2\n"), "file-unknown", /plain text, beginning “name;x;y”/],
     ["a .shp by itself", makeShp([[rectangle(0, 0, 1, 1)]]), "file-unknown", /zip/],
     ["a zip without the geometry part", made("zip_without_shp.zip"), "file-unknown", /no \.shp/],
@@ -77,6 +77,18 @@ describe("a boundary that cannot be used", { timeout: 30_000 }, () => {
       asWritten: null,
       exchanged: { lng: expect.closeTo(147.335, 6) as number, lat: expect.closeTo(-42.875, 6) as number },
     });
+  });
+
+  test("is read the other way round once somebody says so, and the report tells it", () => {
+    const bytes = made("swapped.geojson");
+    const { report } = readArea({ name: "s.geojson", bytes }, { axes: "exchanged" }, {}).value;
+    expect(report.mended).toContain("Longitude and latitude were exchanged, as told at import.");
+    expect(report.bounds).toMatchObject([
+      expect.closeTo(147.33, 1),
+      expect.closeTo(-42.88, 1),
+      expect.anything(),
+      expect.anything(),
+    ]);
   });
 });
 

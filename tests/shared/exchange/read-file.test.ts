@@ -1,4 +1,5 @@
 import fc from "fast-check";
+import { zipSync } from "fflate";
 import { describe, expect, test } from "vitest";
 import { readBoundaryFile } from "#shared/exchange/read-file.ts";
 import { Problem } from "#shared/problem.ts";
@@ -11,14 +12,14 @@ describe("a boundary file is known by what is in it, not by its name", { timeout
   test.each([
     ["made/good_polygon_hole.geojson", "GeoJSON"],
     ["made/zip_with_folder_and_mac_junk.zip", "Shapefile"],
+    ["made/area.wkt", "WKT"],
   ])("%s is %s", (name, format) => {
     expect(read(imported(name)).format).toBe(format);
   });
 
   test.each([
     ["a web page", bytesOf("<!DOCTYPE html><html></html>"), /web page/],
-    ["GPX", bytesOf('<?xml version="1.0"?><gpx version="1.1"></gpx>'), /GPX/],
-    ["EWKT", bytesOf("SRID=25833;POLYGON((0 0,1 0,1 1,0 0))"), /WKT/],
+    ["an archive with a GeoPackage", zipSync({ "a.gpkg": bytesOf("SQLite") }), /a\.gpkg/],
     ["a GeoPackage", bytesOf("SQLite format 3\0…"), /GeoPackage/],
     ["a JPEG", new Uint8Array([0xff, 0xd8, 0xff, 0xe0, 0, 0]), /image/],
     ["a gzip archive", new Uint8Array([0x1f, 0x8b, 8, 0]), /Unpack it/],
@@ -27,7 +28,7 @@ describe("a boundary file is known by what is in it, not by its name", { timeout
     const { code, message } = refusalOf(() => read(bytes));
     expect(code).toBe("file-unknown");
     expect(message).toMatch(named);
-    expect(message).toContain("GeoJSON, a zipped shapefile, or KML");
+    expect(message).toContain("GeoJSON, a zipped shapefile, KML, KMZ, GPX or WKT");
   });
 
   test("blanks are as good as nothing", () => {

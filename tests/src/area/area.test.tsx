@@ -4,7 +4,7 @@ import { afterEach, expect, test, vi } from "vitest";
 import { readSession } from "#shared/api/accounts.ts";
 import { importArea, listAreas, searchCrs, type AreaVersion } from "#shared/api/area.ts";
 import { readSurvey } from "#shared/api/surveys.ts";
-import { askAxes, askCrs, askLayer, askPlace } from "#shared/area/questions.ts";
+import { askAxes, askCrs, askLayer, askLines, askPlace } from "#shared/area/questions.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Role } from "#shared/access/table.ts";
 import { FakeApi } from "../app/fake-api.ts";
@@ -134,7 +134,7 @@ test("a lost connection offers to send the same file again", async () => {
 });
 
 test("swapped coordinates show both places", async () => {
-  open(["planner"], [])
+  const api = open(["planner"], [])
     .on(importArea, () => {
       throw askAxes("Latitude 112 is no latitude.", null, { lng: -2.5, lat: 51.56 });
     })
@@ -144,6 +144,30 @@ test("swapped coordinates show both places", async () => {
   await screen.findByRole("heading", { name: "Are longitude and latitude exchanged?" });
   screen.getByText("no place on the Earth");
   screen.getByText("51.560000° N, 2.500000° W");
+  await userEvent.click(screen.getByRole("button", { name: "Yes, it lies at the second place" }));
+  await waitFor(() => {
+    expect(api.named("importArea").at(-1)?.body).toEqual({ axes: "exchanged" });
+  });
+});
+
+test("a file of lines asks which to close, and says how far their ends lie apart", async () => {
+  const api = open(["planner"], [])
+    .on(importArea, ({ body }) => {
+      if (body.lines !== undefined) throw new Problem("rings-cross", "The boundary crosses itself. Move the corners.");
+      throw askLines([
+        { name: "walk round the fen", vertices: 214, gap: "its ends lie 12 m apart" },
+        { name: "way home", vertices: 9, gap: "its ends lie 4100 m apart" },
+      ]);
+    })
+    .install();
+  renderApp("/surveys/s1/area");
+  await choose(new File(["<gpx>"], "walk.gpx"));
+  await screen.findByText("214 vertices; its ends lie 12 m apart.");
+  expect(screen.getByRole<HTMLButtonElement>("button", { name: "Choose a line first" }).disabled).toBe(true);
+  await userEvent.click(screen.getByRole("checkbox", { name: "walk round the fen" }));
+  await userEvent.click(screen.getByRole("button", { name: "Close 1 line" }));
+  await screen.findByText("The boundary crosses itself. Move the corners.", { exact: false });
+  expect(api.named("importArea").at(-1)?.body).toEqual({ lines: [0] });
 });
 
 test("a boundary that crosses itself names the place", async () => {
