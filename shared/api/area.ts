@@ -1,6 +1,7 @@
 import * as z from "zod/mini";
 import { id, longText, none, polygons, sha256Hex, surveyParams, utc } from "#shared/api/common.ts";
 import { contract, json, stream } from "#shared/api/contract.ts";
+import { areaAnswers } from "#shared/area/questions.ts";
 
 /** What an import found, mended, left aside; kept with the file for ever. */
 export const importReport = z.object({
@@ -20,6 +21,7 @@ export const importReport = z.object({
   mended: z.array(z.string()),
   ignored: z.array(z.string()),
   notes: z.array(z.string()),
+  answers: z.optional(z.omit(areaAnswers, { crs: true })),
 });
 
 export const crsChoice = z.object({ epsg: z.int(), name: z.string(), note: z.string() });
@@ -55,23 +57,12 @@ export const listAreas = contract({
   answer: json(z.object({ areas: z.array(areaVersion) })),
 });
 
-/** Answers to what the file leaves open; a refusal "area-question" says what is asked. */
-export const areaAnswers = z.object({
-  /** An EPSG code as text ("25831" or "EPSG:25831") or a CRS text (PROJ, WKT). */
-  crs: z.optional(longText),
-  layer: z.optional(z.string().check(z.maxLength(300))),
-  /** Places, in the list of the question, of the lines to close to a boundary. */
-  lines: z.optional(z.readonly(z.array(z.int().check(z.minimum(0))).check(z.maxLength(1000)))),
-  /** The file has latitude first. */
-  axes: z.optional(z.literal("exchanged")),
-});
-
 export const importArea = contract({
   name: "importArea",
   method: "POST",
   path: "/api/surveys/:surveyId/areas",
   guard: "area.change",
-  summary: "Import a study area from a boundary file",
+  summary: "Import a study area from a boundary file; a refusal “area-question” says what it leaves open",
   params: surveyParams,
   query: none,
   body: areaAnswers,

@@ -24,12 +24,11 @@ export function closeLines(found: FoundPolygons, answers: AreaAnswers): FoundPol
   if (chosen.length !== answers.lines?.length) {
     throw new Problem("area-question", "One of the lines to close is not in this file. Choose the file again.");
   }
-  const left = lines.length - chosen.length;
   return {
     ...found,
     polygons: chosen.map(({ vertices }) => [closed(vertices)]),
     mended: [...found.mended, ...chosen.map((line) => `Closed “${line.name}” to a boundary; ${gapText(line)}.`)],
-    ignored: [...found.ignored, ...(left === 0 ? [] : [`${left} other ${left === 1 ? "line" : "lines"}.`])],
+    others: { ...found.others, lines: found.others.lines - chosen.length },
   };
 }
 

@@ -1,3 +1,4 @@
+import * as z from "zod/mini";
 import { Problem, type ProblemCode } from "#shared/problem.ts";
 import type { LngLat } from "#shared/units/metric.ts";
 
@@ -29,15 +30,16 @@ export type AreaQuestion =
   | { readonly kind: "place"; readonly why: string; readonly at: LngLat };
 
 /** Answers to the questions, as the client sends them with the file. */
-export interface AreaAnswers {
-  /** An EPSG code as text, a PROJ text or WKT. */
-  readonly crs?: string | undefined;
-  readonly layer?: string | undefined;
-  /** Places, in the list of the question, of the lines to close. */
-  readonly lines?: readonly number[] | undefined;
+export const areaAnswers = z.object({
+  /** An EPSG code as text ("25831" or "EPSG:25831"), a PROJ text or WKT. */
+  crs: z.optional(z.string().check(z.trim(), z.maxLength(4000))),
+  layer: z.optional(z.string().check(z.maxLength(300))),
+  /** Places, in the list of the question, of the lines to close to a boundary. */
+  lines: z.optional(z.readonly(z.array(z.int().check(z.minimum(0))).check(z.maxLength(1000)))),
   /** The first coordinate of the file is the latitude. */
-  readonly axes?: "exchanged" | undefined;
-}
+  axes: z.optional(z.literal("exchanged")),
+});
+export type AreaAnswers = z.infer<typeof areaAnswers>;
 
 /** Asks for the coordinate reference system; nothing is assumed. */
 export function askCrs(why: string, looksLike: Magnitude): Problem {

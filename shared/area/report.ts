@@ -1,5 +1,6 @@
 import type { CheckedArea } from "#shared/area/check.ts";
 import type { FoundPolygons } from "#shared/area/found.ts";
+import type { AreaAnswers } from "#shared/area/questions.ts";
 
 /** What an import found, mended and left aside; kept with the file for ever. The same shape as importReport of the API. */
 export interface ImportReport {
@@ -23,6 +24,8 @@ export interface ImportReport {
   mended: string[];
   ignored: string[];
   notes: string[];
+  /** What people answered beside the system, so that the file can be read again alike; left out where nothing was asked. */
+  answers?: Omit<AreaAnswers, "crs">;
 }
 
 export interface ReportInput {
@@ -31,10 +34,11 @@ export interface ReportInput {
   readonly source: { readonly fileName: string; readonly bytes: number; readonly sha256: string };
   readonly howKnown: string;
   readonly notes: readonly string[];
+  readonly answers: AreaAnswers;
 }
 
 /** Puts an import's facts together; counts are of what was taken, after mending. */
-export function buildReport({ found, checked, source, howKnown, notes }: ReportInput): ImportReport {
+export function buildReport({ found, checked, source, howKnown, notes, answers }: ReportInput): ImportReport {
   const { crs, polygons } = checked.area;
   const rings = polygons.flat();
   const [west, south, east, north] = checked.bounds;
@@ -52,7 +56,17 @@ export function buildReport({ found, checked, source, howKnown, notes }: ReportI
     mended: [...checked.mended],
     ignored: [...found.ignored, ...leftAside(found)],
     notes: [...notes],
+    ...answered(answers),
   };
+}
+
+function answered({ layer, lines, axes }: AreaAnswers): Pick<ImportReport, "answers"> {
+  const given = {
+    ...(layer === undefined ? {} : { layer }),
+    ...(lines === undefined ? {} : { lines }),
+    ...(axes === undefined ? {} : { axes }),
+  };
+  return Object.keys(given).length === 0 ? {} : { answers: given };
 }
 
 function leftAside({ others, heights }: FoundPolygons): string[] {

@@ -33,7 +33,7 @@ export function readArea(file: AreaFile, answers: AreaAnswers, tools: { readonly
   const { crs, howKnown, notes, checked } = settle(found, answers, tools.epsg);
   const source = { fileName: file.name, bytes: file.bytes.length, sha256: bytesToHex(sha256(file.bytes)) };
   const allNotes = [...found.notes, ...notes, ...checked.notes, ...areaOfUseNote(crs, checked, tools.epsg)];
-  const report = buildReport({ found, checked, source, howKnown, notes: allNotes });
+  const report = buildReport({ found, checked, source, howKnown, notes: allNotes, answers });
   return { value: { area: checked.area, report }, notes: report.notes };
 }
 

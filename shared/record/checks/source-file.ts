@@ -1,5 +1,6 @@
 import { sha256 } from "@noble/hashes/sha2.js";
 import { bytesToHex } from "@noble/hashes/utils.js";
+import { areaAnswers } from "#shared/area/questions.ts";
 import type { ImportedArea } from "#shared/area/imported-area.ts";
 import { type AreaFile, readArea } from "#shared/exchange/read-area.ts";
 import { type PlaneArea, ringsFromJson, ringsToJson, vertexCount } from "#shared/geometry/rings.ts";
@@ -69,11 +70,12 @@ function checkRingsFollow(run: ReplayRun, frame: RebuiltFrame, file: AreaFile, a
   }
 }
 
-/** What the file left open is answered from the record: its system, and the layer with as many vertices. */
+/** What the file left open is answered from the record; a report without answers is tried with each layer. */
 function readAgain(run: ReplayRun, file: AreaFile, area: RecordArea): ImportedArea {
   const tools = run.given.epsg === undefined ? {} : { epsg: run.given.epsg };
+  const given = areaAnswers.safeParse(area.report["answers"] ?? {});
   try {
-    return readArea(file, { crs: area.sourceCrs }, tools).value.area;
+    return readArea(file, { ...given.data, crs: area.sourceCrs }, tools).value.area;
   } catch (error) {
     if (!(error instanceof Problem) || error.question?.kind !== "layer") throw error;
     for (const layer of error.question["layers"] as readonly string[]) {
