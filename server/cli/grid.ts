@@ -125,7 +125,8 @@ async function fromBoundary(values: Values): Promise<Ground> {
   const path = needed(values.area, "--area");
   const crs = crsFromText(needed(values.crs, "--crs"), epsgLookup);
   const file = { name: basename(path), bytes: readBytes(path) };
-  const { value, notes } = readArea(file, {}, { epsg: epsgLookup });
+  const { readGeoPackage } = await import("../jobs/read-geopackage.ts");
+  const { value, notes } = readArea(file, {}, { epsg: epsgLookup, geoPackage: readGeoPackage });
   const made = makePlaneRings(value.area, crs);
   for (const note of [...notes, ...made.notes]) sayError(note);
   return {

@@ -23,6 +23,7 @@ export async function replayRecord(args: readonly string[]): Promise<number> {
     fingerprint: values.fingerprint,
     sourceFile: values.area === undefined ? undefined : { name: basename(values.area), bytes: readBytes(values.area) },
     epsg: epsgLookup,
+    geoPackage: (await import("../jobs/read-geopackage.ts")).readGeoPackage,
   });
   process.stdout.write(linesOf(report));
   return report.summary.failed > 0 ? 1 : 0;

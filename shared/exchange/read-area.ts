@@ -7,7 +7,7 @@ import type { ImportedArea } from "#shared/area/imported-area.ts";
 import { extentOf, magnitudeOf } from "#shared/area/plausible.ts";
 import { askCrs, type AreaAnswers } from "#shared/area/questions.ts";
 import { buildReport, type ImportReport } from "#shared/area/report.ts";
-import { readBoundaryFile } from "#shared/exchange/read-file.ts";
+import { readBoundaryFile, type Readers } from "#shared/exchange/read-file.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Position } from "#shared/projection/transformer.ts";
 import { crsFromText, type Crs, type EpsgLookup } from "#shared/projection/crs.ts";
@@ -23,13 +23,17 @@ export interface AreaRead {
 }
 
 /**
- * A boundary file (GeoJSON, zipped shapefile, KML) to a checked study area and its import report. Nothing is assumed: what the
+ * A boundary file to a checked study area and its import report. Nothing is assumed: what the
  * file leaves open is asked by a Problem with a question (area/questions.ts), answered by calling again with `answers`.
  * Lives here, and not in area/, because it stands on the readers of exchange/.
  * @throws Problem file-*, area-*, rings-cross, parts-overlap, coordinates-swapped, crs-*.
  */
-export function readArea(file: AreaFile, answers: AreaAnswers, tools: { readonly epsg?: EpsgLookup }): AreaRead {
-  const found = closeLines(oriented(readBoundaryFile(file.bytes, answers), answers), answers);
+export function readArea(
+  file: AreaFile,
+  answers: AreaAnswers,
+  tools: Readers & { readonly epsg?: EpsgLookup },
+): AreaRead {
+  const found = closeLines(oriented(readBoundaryFile(file.bytes, answers, tools), answers), answers);
   const { crs, howKnown, notes, checked } = settle(found, answers, tools.epsg);
   const source = { fileName: file.name, bytes: file.bytes.length, sha256: bytesToHex(sha256(file.bytes)) };
   const allNotes = [...found.notes, ...notes, ...checked.notes, ...areaOfUseNote(crs, checked, tools.epsg)];

@@ -9,7 +9,7 @@ import { readZippedShapefile } from "#shared/exchange/shapefile.ts";
 import { listZip, unzipEntry, type ZipEntry } from "#shared/exchange/zip.ts";
 import { Problem } from "#shared/problem.ts";
 
-const KINDS_READ = "Boundaries are read from GeoJSON, a zipped shapefile, KML, KMZ, GPX or WKT.";
+const KINDS_READ = "Boundaries are read from GeoJSON, a zipped shapefile, KML, KMZ, GeoPackage, GPX or WKT.";
 
 /** Files that people choose by mistake, by their first bytes, and what to do instead. */
 const SIGNATURES: readonly { start: readonly number[]; what: string; next?: string }[] = [
@@ -37,25 +37,32 @@ const SIGNATURES: readonly { start: readonly number[]; what: string; next?: stri
   },
   { start: [0xd0, 0xcf, 0x11, 0xe0], what: "an old office document" },
   {
-    start: [0x53, 0x51, 0x4c, 0x69, 0x74, 0x65],
-    what: "a database (SQLite or GeoPackage)",
-    next: "Export the boundary from it as GeoJSON.",
-  },
-  {
     start: [0x00, 0x00, 0x27, 0x0a],
     what: "a .shp or .shx by itself",
     next: "Put the .shp, .shx, .dbf and .prj into one zip archive and choose that.",
   },
 ];
 
+/** "SQLite" */
+const SQLITE = [0x53, 0x51, 0x4c, 0x69, 0x74, 0x65];
+
+/** Readers that need more than a browser has. */
+export interface Readers {
+  readonly geoPackage?: (bytes: Uint8Array, answers: AreaAnswers) => FoundPolygons;
+}
+
 /**
  * Reads a boundary file by what is in it, whatever its name.
  * @throws Problem file-empty; file-unknown that names what was found; and what the readers throw.
  */
-export function readBoundaryFile(bytes: Uint8Array, answers: AreaAnswers): FoundPolygons {
+export function readBoundaryFile(bytes: Uint8Array, answers: AreaAnswers, readers: Readers = {}): FoundPolygons {
   if (bytes.length === 0) throw new Problem("file-empty", "This file is empty. Nothing was changed.");
   const signature = SIGNATURES.find(({ start }) => start.every((byte, i) => bytes[i] === byte));
   if (signature !== undefined) throw unknown(signature.what, signature.next);
+  if (SQLITE.every((byte, i) => bytes[i] === byte)) {
+    if (readers.geoPackage !== undefined) return readers.geoPackage(bytes, answers);
+    throw unknown("a database (SQLite or GeoPackage)", "Here it cannot be opened: export the boundary as GeoJSON.");
+  }
   if (bytes[0] === 0x50 && bytes[1] === 0x4b) return readArchive(bytes, answers);
   return readText(bytes);
 }

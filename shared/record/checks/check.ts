@@ -1,4 +1,5 @@
 import type { AreaFile } from "#shared/exchange/read-area.ts";
+import type { Readers } from "#shared/exchange/read-file.ts";
 import type { EpsgLookup } from "#shared/projection/crs.ts";
 import type { RecordFile } from "#shared/record/record-file.ts";
 import type { Repeated } from "./draws-repeated.ts";
@@ -27,7 +28,7 @@ export interface Check {
 }
 
 /** What the auditor holds beside the record. */
-export interface ReplayGiven {
+export interface ReplayGiven extends Readers {
   /** Hashes from mails, sheets and exports; spaces in them are passed over. */
   readonly heldHashes?: readonly string[] | undefined;
   /** Fingerprint of the installation's key, as given at invitation. */

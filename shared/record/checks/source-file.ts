@@ -72,7 +72,8 @@ function checkRingsFollow(run: ReplayRun, frame: RebuiltFrame, file: AreaFile, a
 
 /** What the file left open is answered from the record; a report without answers is tried with each layer. */
 function readAgain(run: ReplayRun, file: AreaFile, area: RecordArea): ImportedArea {
-  const tools = run.given.epsg === undefined ? {} : { epsg: run.given.epsg };
+  const { epsg, geoPackage } = run.given;
+  const tools = { ...(epsg && { epsg }), ...(geoPackage && { geoPackage }) };
   const given = areaAnswers.safeParse(area.report["answers"] ?? {});
   try {
     return readArea(file, { ...given.data, crs: area.sourceCrs }, tools).value.area;

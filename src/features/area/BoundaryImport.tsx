@@ -54,8 +54,8 @@ export function BoundaryImport({ boundary, onLeave }: BoundaryImportProps) {
       {!reading && (
         <FileDrop
           label={file === null ? "Drop the boundary file here" : "Another file"}
-          help={`GeoJSON, zipped shapefile, KML, KMZ, GPX or WKT, at most ${formatUnit(formatNumber(MAX_AREA_FILE_BYTES / 1_000_000), "MB")}.`}
-          accept=".geojson,.json,.zip,.kml,.kmz,.gpx,.wkt,.txt"
+          help={`GeoJSON, zipped shapefile, KML, KMZ, GeoPackage, GPX or WKT, at most ${formatUnit(formatNumber(MAX_AREA_FILE_BYTES / 1_000_000), "MB")}.`}
+          accept=".geojson,.json,.zip,.kml,.kmz,.gpkg,.gpx,.wkt,.txt"
           primary={file === null}
           onFile={boundary.take}
           buttonLabel={file === null ? "Choose a file" : "Choose another file"}

@@ -28,7 +28,7 @@ describe("a boundary file is known by what is in it, not by its name", { timeout
     const { code, message } = refusalOf(() => read(bytes));
     expect(code).toBe("file-unknown");
     expect(message).toMatch(named);
-    expect(message).toContain("GeoJSON, a zipped shapefile, KML, KMZ, GPX or WKT");
+    expect(message).toContain("GeoJSON, a zipped shapefile, KML, KMZ, GeoPackage, GPX or WKT");
   });
 
   test("blanks are as good as nothing", () => {
