@@ -16,6 +16,7 @@ export const PROBLEMS = {
   cancelled: { status: 409, title: "The work was cancelled" },
   "already-served": { status: 409, title: "Two servers cannot share one database" },
   "database-missing": { status: 404, title: "There is no database here" },
+  "database-newer": { status: 409, title: "This database is newer than this Quillet" },
   "backup-exists": { status: 409, title: "There is a file of this name" },
   "backup-unusable": { status: 422, title: "This backup cannot be used" },
   // accounts

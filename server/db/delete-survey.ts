@@ -1,5 +1,6 @@
 import { sql, type SQL } from "drizzle-orm";
 import type { SQLiteTable } from "drizzle-orm/sqlite-core";
+import { standsOn } from "./elsewhere.ts";
 import type { Tx } from "./open.ts";
 import { invitations, members, memberships } from "./schema/accounts.ts";
 import { areaVersions, planes, zones } from "./schema/area.ts";
@@ -20,7 +21,7 @@ import { mails } from "./schema/mail.ts";
 import { events, keptEstimates } from "./schema/record.ts";
 import { seasons, surveys, targets } from "./schema/surveys.ts";
 
-export type DeletedSurveyRow = typeof deletedSurveys.$inferSelect;
+type DeletedSurveyRow = Omit<typeof deletedSurveys.$inferSelect, "sourceSha256s" | "frameSha256s">;
 
 /**
  * Deletes every row of a survey in every table, and keeps that it was there. Only inside `withoutTriggers`: most of these
@@ -28,6 +29,7 @@ export type DeletedSurveyRow = typeof deletedSurveys.$inferSelect;
  */
 export function deleteEverythingOf(tx: Tx, row: DeletedSurveyRow): void {
   const { id } = row;
+  const stoodOn = standsOn(tx, id);
   const of = (table: SQLiteTable): SQL => sql`(select id from ${table} where survey_id = ${id})`;
   const within: readonly (readonly [SQLiteTable, SQL])[] = [
     [countEntries, sql`visit_id in ${of(visits)}`],
@@ -58,5 +60,7 @@ export function deleteEverythingOf(tx: Tx, row: DeletedSurveyRow): void {
   tx.delete(surveys)
     .where(sql`id = ${id}`)
     .run();
-  tx.insert(deletedSurveys).values(row).run();
+  tx.insert(deletedSurveys)
+    .values({ ...row, ...stoodOn })
+    .run();
 }

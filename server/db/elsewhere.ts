@@ -1,32 +1,54 @@
-import { and, countDistinct, eq, inArray, ne } from "drizzle-orm";
+import { and, eq, inArray, isNotNull, ne } from "drizzle-orm";
 import type { Reader } from "./open.ts";
 import { areaVersions } from "./schema/area.ts";
 import { frameVersions } from "./schema/frame.ts";
+import { deletedSurveys } from "./schema/installation.ts";
 
-/** How many other surveys of this installation have a boundary file, or a sealed frame, of this survey. */
+/** How many other surveys of this installation have, or had before they were deleted, a boundary file or a sealed frame of this one. */
 export interface Elsewhere {
   readonly sameSource: number;
   readonly sameFrame: number;
 }
 
-export function elsewhereOf(reader: Reader, surveyId: string): Elsewhere {
+/** SHA-256 of a survey's boundary files and of its sealed frames. */
+export interface StandsOn {
+  readonly sourceSha256s: string[];
+  readonly frameSha256s: string[];
+}
+
+export function standsOn(reader: Reader, surveyId: string): StandsOn {
   const files = reader
-    .select({ sha256: areaVersions.fileSha256 })
+    .selectDistinct({ sha256: areaVersions.fileSha256 })
     .from(areaVersions)
-    .where(eq(areaVersions.surveyId, surveyId));
+    .where(eq(areaVersions.surveyId, surveyId))
+    .all();
   const frames = reader
-    .select({ sha256: frameVersions.frameSha256 })
+    .selectDistinct({ sha256: frameVersions.frameSha256 })
     .from(frameVersions)
-    .where(eq(frameVersions.surveyId, surveyId));
+    .where(and(eq(frameVersions.surveyId, surveyId), isNotNull(frameVersions.frameSha256)))
+    .all();
+  return {
+    sourceSha256s: files.map(({ sha256 }) => sha256),
+    frameSha256s: frames.flatMap(({ sha256 }) => (sha256 === null ? [] : [sha256])),
+  };
+}
+
+export function elsewhereOf(reader: Reader, surveyId: string): Elsewhere {
+  const here = standsOn(reader, surveyId);
   const sources = reader
-    .select({ n: countDistinct(areaVersions.surveyId) })
+    .selectDistinct({ surveyId: areaVersions.surveyId })
     .from(areaVersions)
-    .where(and(ne(areaVersions.surveyId, surveyId), inArray(areaVersions.fileSha256, files)))
-    .get();
+    .where(and(ne(areaVersions.surveyId, surveyId), inArray(areaVersions.fileSha256, here.sourceSha256s)))
+    .all();
   const sealed = reader
-    .select({ n: countDistinct(frameVersions.surveyId) })
+    .selectDistinct({ surveyId: frameVersions.surveyId })
     .from(frameVersions)
-    .where(and(ne(frameVersions.surveyId, surveyId), inArray(frameVersions.frameSha256, frames)))
-    .get();
-  return { sameSource: sources?.n ?? 0, sameFrame: sealed?.n ?? 0 };
+    .where(and(ne(frameVersions.surveyId, surveyId), inArray(frameVersions.frameSha256, here.frameSha256s)))
+    .all();
+  const deleted = reader.select().from(deletedSurveys).all();
+  const among = (had: readonly string[], own: readonly string[]): boolean => had.some((sha256) => own.includes(sha256));
+  return {
+    sameSource: sources.length + deleted.filter((row) => among(row.sourceSha256s, here.sourceSha256s)).length,
+    sameFrame: sealed.length + deleted.filter((row) => among(row.frameSha256s, here.frameSha256s)).length,
+  };
 }

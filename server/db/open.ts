@@ -3,6 +3,7 @@ import { join } from "node:path";
 import Database from "better-sqlite3";
 import { drizzle } from "drizzle-orm/better-sqlite3";
 import { migrate } from "drizzle-orm/better-sqlite3/migrator";
+import { Problem } from "#shared/problem.ts";
 import { projectRoot } from "../project.ts";
 import * as accounts from "./schema/accounts.ts";
 import * as area from "./schema/area.ts";
@@ -39,6 +40,7 @@ export function openDb(file: string) {
   sqlite.pragma("busy_timeout = 5000"); // first: switching to WAL can itself wait
   sqlite.pragma("journal_mode = WAL");
   sqlite.pragma("synchronous = FULL"); // a reopened WAL file falls back to NORMAL
+  sqlite.pragma("secure_delete = ON"); // what is deleted, a survey or a session, is overwritten
   sqlite.pragma("recursive_triggers = ON"); // so that REPLACE meets the DELETE triggers
   const db = drizzle({ client: sqlite, schema, casing: "snake_case" });
 
@@ -80,6 +82,9 @@ function migrationsPending(sqlite: Database.Database): boolean {
   const journal = JSON.parse(readFileSync(join(MIGRATIONS, "meta/_journal.json"), "utf8")) as { entries: unknown[] };
   const known = sqlite.prepare("SELECT 1 FROM sqlite_master WHERE name = '__drizzle_migrations'").get();
   const made = known === undefined ? 0 : sqlite.prepare("SELECT count(*) FROM __drizzle_migrations").pluck().get();
+  if (Number(made) > journal.entries.length) {
+    throw new Problem("database-newer", "It was made by a newer version. Install that version, or one after it.");
+  }
   return made !== journal.entries.length;
 }
 

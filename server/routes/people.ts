@@ -25,7 +25,7 @@ export function peopleRoutes(mount: Mount): void {
   });
 
   mount.survey(api.setRoles, (ctx, { params, body }) => {
-    setRoles(ctx, params.memberId, body.roles);
+    setRoles(ctx, params.memberId, body.roles, body.seen);
     return presentPeople(ctx, listPeople(ctx));
   });
 

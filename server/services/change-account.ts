@@ -10,17 +10,22 @@ import { endResets } from "./send-reset.ts";
 interface Wanted {
   readonly isOwner: boolean;
   readonly closed: boolean;
+  /** What the sender saw. */
+  readonly seen?: { readonly isOwner: boolean; readonly closed: boolean } | undefined;
 }
 
 /**
  * Makes somebody an owner or not, closes their account or opens it again. Closing ends their sessions; their roles stay, and
  * so do their names on records.
- * @throws Problem `account-not-found`; `last-owner` where nobody who can sign in would be an owner
+ * @throws Problem `account-not-found`; `changed-meanwhile`; `last-owner` where nobody who can sign in would be an owner
  */
-export function changeAccount(ctx: Visitor, accountId: string, { isOwner, closed }: Wanted): void {
+export function changeAccount(ctx: Visitor, accountId: string, { isOwner, closed, seen }: Wanted): void {
   writeTx(ctx.db, (tx) => {
     const account = findAccount(tx, accountId);
     if (!account) throw new Problem("account-not-found", "Reload the page.");
+    if (seen && (seen.isOwner !== account.isOwner || seen.closed !== (account.closedAt !== null))) {
+      throw new Problem("changed-meanwhile", `${account.name}’s account is otherwise by now. Look again, then decide.`);
+    }
     const now = ctx.now().toISOString();
     updateAccount(tx, accountId, { isOwner, closedAt: closed ? (account.closedAt ?? now) : null });
     // Thrown inside the transaction, which is taken back then.

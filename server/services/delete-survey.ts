@@ -1,9 +1,12 @@
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
+import { auditorsOf } from "../db/auditors.ts";
 import { deleteEverythingOf } from "../db/delete-survey.ts";
 import { newestEvent } from "../db/events.ts";
 import { withoutTriggers, writeTx } from "../db/open.ts";
 import { findSurvey } from "../db/surveys.ts";
+import { queueMail } from "../mail/queue-mail.ts";
+import { deletedMail } from "../mail/templates/deleted.ts";
 
 /**
  * Deletes a survey with all that belongs to it. What stays is that it was there and the newest hash of its record, so that
@@ -19,6 +22,7 @@ export function deleteSurvey(ctx: Context, typedName: string): void {
     }
     const newest = newestEvent(tx, ctx.surveyId);
     if (!newest) throw new Error(`survey ${ctx.surveyId} has no record`);
+    const auditors = auditorsOf(tx, ctx.surveyId);
     withoutTriggers(ctx.db, () => {
       deleteEverythingOf(tx, {
         id: ctx.surveyId,
@@ -28,5 +32,15 @@ export function deleteSurvey(ctx: Context, typedName: string): void {
         deletedBy: ctx.account.id,
       });
     });
+    const { sequence, sha256 } = newest;
+    for (const { name, email } of auditors) {
+      queueMail(tx, ctx, {
+        kind: "deleted",
+        to: { name, address: email },
+        surveyId: null,
+        secret: false,
+        written: deletedMail({ survey: survey.name, by: ctx.account.name, sequence, sha256 }),
+      });
+    }
   });
 }

@@ -13,14 +13,19 @@ import { tellAdded, tellRoleEnded } from "./tell-roles.ts";
 
 /**
  * The roles that somebody holds from now on; none removes them from the survey, which ends their sessions.
- * @throws Problem `last-planner`, `account-closed`
+ * @param seen the roles that the sender saw
+ * @throws Problem `last-planner`, `account-closed`, `changed-meanwhile`
  */
-export function setRoles(ctx: Context, memberId: string, roles: readonly Role[]): void {
+export function setRoles(ctx: Context, memberId: string, roles: readonly Role[], seen?: readonly Role[]): void {
   writeTx(ctx.db, (tx) => {
     const accountId = accountOfMember(tx, memberId);
     const account = accountId === undefined ? undefined : findAccount(tx, accountId);
     if (!account) throw new Error(`member ${memberId} has no account`);
     const held = standingOf(tx, ctx.surveyId, account.id).roles;
+    if (seen && !ROLES.every((role) => held.includes(role) === seen.includes(role))) {
+      const now = held.length === 0 ? "no longer in the survey" : held.join(" and ");
+      throw new Problem("changed-meanwhile", `${account.name} is ${now} by now. Look at the list again, then decide.`);
+    }
     const ended = ROLES.filter((role) => held.includes(role) && !roles.includes(role));
     const given = ROLES.filter((role) => roles.includes(role) && !held.includes(role));
     if (given.length > 0) expectOpenAccount(account);

@@ -1,5 +1,5 @@
 import * as z from "zod/mini";
-import { id, longText, none, polygons, sha256Hex, surveyParams, utc } from "#shared/api/common.ts";
+import { id, none, polygons, sha256Hex, surveyParams, utc } from "#shared/api/common.ts";
 import { contract, json, stream } from "#shared/api/contract.ts";
 import { areaAnswers } from "#shared/area/questions.ts";
 

@@ -152,7 +152,12 @@ export const changeAccount = contract({
   summary: "Make somebody an owner or not, close their account (every session ends) or open it again",
   params: z.object({ accountId: id }),
   query: none,
-  body: z.object({ isOwner: z.boolean(), closed: z.boolean() }),
+  body: z.object({
+    isOwner: z.boolean(),
+    closed: z.boolean(),
+    /** What the sender saw; refused where it is otherwise by now. Left out: whatever it is. */
+    seen: z.optional(z.object({ isOwner: z.boolean(), closed: z.boolean() })),
+  }),
   answer: accounts,
 });
 

@@ -68,7 +68,11 @@ export const setRoles = contract({
   summary: "The roles that somebody holds from now on; none removes them from the survey",
   params: z.object({ surveyId: id, memberId: id }),
   query: none,
-  body: z.object({ roles: z.array(role).check(z.maxLength(4)) }),
+  body: z.object({
+    roles: z.array(role).check(z.maxLength(4)),
+    /** The roles that the sender saw; refused where others are held by now. Left out: whatever they are. */
+    seen: z.optional(z.array(role).check(z.maxLength(4))),
+  }),
   answer: people,
 });
 

@@ -7,7 +7,9 @@ import { invitations } from "#server/db/schema/accounts.ts";
 import { zones } from "#server/db/schema/area.ts";
 import { deletedSurveys } from "#server/db/schema/installation.ts";
 import { mails } from "#server/db/schema/mail.ts";
+import { buildRecord } from "#server/services/build-record.ts";
 import { surveyEachTest } from "../fixtures/each-survey.ts";
+import { mailsTo } from "../fixtures/mails.ts";
 import { anotherSurvey } from "../fixtures/sealed-frame.ts";
 import { runWholeSurvey } from "../fixtures/whole-survey.ts";
 
@@ -82,12 +84,21 @@ test("a deleted survey is gone from every table, and everything else is as it wa
   expect(reply.status).toBe(200);
   for (const [name, rows] of everything()) {
     if (OF_NO_SURVEY.has(name)) continue;
-    expect(rows, name).toEqual(before.get(name));
+    const left =
+      name === "mails" ? rows.filter((row) => !JSON.stringify(row).includes("the survey was deleted")) : rows;
+    expect(left, name).toEqual(before.get(name));
   }
   expect(triggers()).toEqual(guards);
   const kept = survey.server.platform.db.select().from(deletedSurveys).all();
   expect(kept).toMatchObject([{ id: doomed.surveyId, newestSequence: newest?.sequence, newestSha256: newest?.sha256 }]);
   expect((await doomed.planner.call(readSurvey, { params })).json.code).toBe("survey-not-found");
+  // R7: the survey that began with the same boundary still counts the one that is gone.
+  const { elsewhere } = buildRecord(survey.server.platform, survey.here().surveyId);
+  expect(elsewhere.sameSource).toBeGreaterThanOrEqual(1);
+  expect(kept[0]?.sourceSha256s).toHaveLength(1);
+  const [told] = mailsTo(survey.server, "auditor@example.org").filter(({ kind }) => kind === "deleted");
+  expect(told?.surveyId).toBeNull();
+  expect(told?.text).toContain(newest?.sha256);
   expect(() => client().exec(`DELETE FROM events WHERE survey_id = '${survey.here().surveyId}'`)).toThrow(
     "events is append-only",
   );

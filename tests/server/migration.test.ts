@@ -87,3 +87,11 @@ test("it has the new tables, empty, every account open, no broken reference, and
   expect(db.$client.pragma("foreign_key_check")).toEqual([]);
   expect(() => db.$client.exec("DELETE FROM events")).toThrow("append-only");
 });
+
+test("a database of a newer version is refused by name, and stays as it is", () => {
+  const file = join(folder, "newer.sqlite");
+  const newer = openDb(file);
+  newer.$client.prepare("INSERT INTO __drizzle_migrations (hash, created_at) VALUES ('later', 9e12)").run();
+  closeDb(newer);
+  expect(() => openDb(file)).toThrow(/newer version/);
+});

@@ -242,6 +242,22 @@ describe("accounts of the installation", () => {
     expect((await (await again("closing@example.org")).call(readSession)).json.account).not.toBeNull();
   });
 
+  test("what was decided of roles or an account that are otherwise by now is refused", async () => {
+    await server.person("twice@example.org");
+    await team.planner.call(addPerson, { params: here(), body: { email: "twice@example.org", role: "counter" } });
+    const params = { ...here(), memberId: await idOf("twice@example.org") };
+    const decide = (roles: Role[], seen: Role[]) => team.planner.call(setRoles, { params, body: { roles, seen } });
+    expect((await decide([], ["counter"])).status).toBe(200);
+    // Another planner still has the list of before, and would bring them back.
+    const stale = await decide(["counter", "auditor"], ["counter"]);
+    expect(stale).toMatchObject({ status: 412, json: { code: "changed-meanwhile" } });
+    expect(stale.json.detail).toContain("no longer in the survey by now");
+    const accountId = await accountOf("twice@example.org");
+    const body = { isOwner: true, closed: false, seen: { isOwner: false, closed: true } };
+    const changed = await team.owner.call(changeAccount, { params: { accountId }, body });
+    expect(changed.json.code).toBe("changed-meanwhile");
+  });
+
   test("the last owner who can sign in stays owner, and open", async () => {
     await server.person("spare@example.org", { isOwner: true });
     const [own, spare] = [await accountOf("owner@example.org"), await accountOf("spare@example.org")];

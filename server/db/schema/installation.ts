@@ -16,11 +16,14 @@ export const installation = sqliteTable(
   (t) => [check("installation_one_row", sql`${t.id} = 1`)],
 );
 
-/** What is left of a deleted survey: that it was there, and the newest hash of its record. */
+/** What is left of a deleted survey: that it was there, what it stood on, and the newest hash of its record. */
 export const deletedSurveys = sqliteTable("deleted_surveys", {
   id: text().primaryKey(),
   newestSequence: integer().notNull(),
   newestSha256: text().notNull(),
+  /** SHA-256 of its boundary files and of its sealed frames: other records still count it (rule R7). */
+  sourceSha256s: text({ mode: "json" }).$type<string[]>().notNull().default([]),
+  frameSha256s: text({ mode: "json" }).$type<string[]>().notNull().default([]),
   deletedAt: text().notNull(),
   deletedBy: text()
     .notNull()

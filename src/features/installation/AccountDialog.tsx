@@ -57,7 +57,7 @@ export function AccountDialog({ act, onClose }: { readonly act: AccountAct; read
   const isOwner = kind === "owner" ? true : kind === "no-owner" ? false : account.isOwner;
   const confirm = () =>
     change.mutate(
-      { accountId: account.id, isOwner, closed: kind === "close" },
+      { account, isOwner, closed: kind === "close" },
       {
         onSuccess: () => {
           showToast(words.done);

@@ -36,11 +36,11 @@ export function AccountsSection({ mailsAreKept }: AccountsSectionProps) {
         ),
     });
   };
-  const openAgain = ({ id, isOwner, name }: OwnedAccount) => {
+  const openAgain = (account: OwnedAccount) => {
     reset.reset();
     change.mutate(
-      { accountId: id, isOwner, closed: false },
-      { onSuccess: () => showToast(`${name} can sign in again.`) },
+      { account, isOwner: account.isOwner, closed: false },
+      { onSuccess: () => showToast(`${account.name} can sign in again.`) },
     );
   };
   const failure = change.error ?? reset.error;

@@ -13,6 +13,7 @@ import {
   sendMailAgain,
   sendReset,
   withdrawAccountInvitation,
+  type OwnedAccount,
 } from "#shared/api/installation.ts";
 import { call, callVersioned, type Versioned } from "../../api/call.ts";
 import { sessionKey, surveysKey } from "../../api/keys.ts";
@@ -73,8 +74,11 @@ export function useChangeAccount() {
   const queries = useQueryClient();
   return useMutation({
     meta: { keeps: true },
-    mutationFn: ({ accountId, ...body }: { accountId: string } & z.input<typeof changeAccount.body>) =>
-      call(changeAccount, { params: { accountId }, body }),
+    mutationFn: ({ account, ...change }: { account: OwnedAccount; isOwner: boolean; closed: boolean }) => {
+      const seen = { isOwner: account.isOwner, closed: account.closedAt !== null };
+      return call(changeAccount, { params: { accountId: account.id }, body: { ...change, seen } });
+    },
+    onError: () => void queries.invalidateQueries({ queryKey: accountsKey }),
     onSuccess: (answer) => {
       queries.setQueryData(accountsKey, answer);
       // Whoever gave up being an owner is told of it by their session.

@@ -77,7 +77,7 @@ test("closing an account says what follows, is done by a second press, and a ref
   await screen.findByText("closed since 2 May 2031");
   expect(api.named("changeAccount").at(-1)).toMatchObject({
     params: { accountId: "a2" },
-    body: { isOwner: false, closed: true },
+    body: { isOwner: false, closed: true, seen: { isOwner: false, closed: false } },
   });
   await press.click(screen.getByRole("button", { name: "Change Tom Ashby" }));
   await press.click(screen.getByRole("menuitem", { name: "Open the account again" }));

@@ -137,7 +137,7 @@ test("roles are changed together, at least one is kept, and the last planner sta
   await user.click(keep);
   await screen.findByRole("cell", { name: "planner and lead" });
   expect(api.named("setRoles").map(({ params, body }) => ({ params, body }))).toEqual([
-    { params: { surveyId: "s1", memberId: "m2" }, body: { roles: ["planner", "lead"] } },
+    { params: { surveyId: "s1", memberId: "m2" }, body: { roles: ["planner", "lead"], seen: ["lead", "counter"] } },
   ]);
 });
 
@@ -155,7 +155,7 @@ test("removing says that access ends at once and what stays on record, and is do
   await waitFor(() => {
     expect(screen.queryByText("Tom Ashby")).toBeNull();
   });
-  expect(api.named("setRoles")[0]?.body).toEqual({ roles: [] });
+  expect(api.named("setRoles")[0]?.body).toEqual({ roles: [], seen: ["lead", "counter"] });
 });
 
 test("the last planner can't leave and is told why", async () => {

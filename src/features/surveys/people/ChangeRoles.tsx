@@ -30,7 +30,7 @@ function consequence({ isSelf, name, roles: held }: Member, roles: readonly Role
 /** The roles that somebody holds, to be changed together. */
 export function ChangeRoles({ surveyId, member, isLastPlanner, onClose }: ChangeRolesProps) {
   const [roles, setRoles] = useState<readonly Role[]>(member.roles);
-  const change = useSetRoles(surveyId, member.id);
+  const change = useSetRoles(surveyId, member);
   const toggle = (role: Role, on: boolean) =>
     setRoles(ROLES.filter((one) => (one === role ? on : roles.includes(one))));
   const isSame = ROLES.every((role) => roles.includes(role) === member.roles.includes(role));

@@ -14,7 +14,7 @@ interface RemovePersonProps {
 /** Takes all roles of somebody, after saying what that ends and what it leaves. */
 export function RemovePerson({ surveyId, member, onClose }: RemovePersonProps) {
   const { name } = member;
-  const remove = useSetRoles(surveyId, member.id);
+  const remove = useSetRoles(surveyId, member);
   const confirm = () =>
     remove.mutate([], {
       onSuccess: () => {

@@ -7,6 +7,7 @@ import {
   renewInvitation,
   setRoles,
   withdrawInvitation,
+  type Member,
   type People,
 } from "#shared/api/people.ts";
 import { call } from "../../../api/call.ts";
@@ -43,8 +44,10 @@ export function useAddPerson(surveyId: string) {
 }
 
 /** No role removes the person from the survey. */
-export function useSetRoles(surveyId: string, memberId: string) {
-  return usePeopleAct(surveyId, (roles: Role[]) => call(setRoles, { params: { surveyId, memberId }, body: { roles } }));
+export function useSetRoles(surveyId: string, { id: memberId, roles: seen }: Member) {
+  return usePeopleAct(surveyId, (roles: Role[]) =>
+    call(setRoles, { params: { surveyId, memberId }, body: { roles, seen } }),
+  );
 }
 
 export function useRenewInvitation(surveyId: string) {
