@@ -1,4 +1,4 @@
-import { and, asc, eq, isNull } from "drizzle-orm";
+import { and, asc, count, eq, gt, isNull } from "drizzle-orm";
 import type { Role } from "#shared/access/table.ts";
 import type { MailRow } from "./mails.ts";
 import type { Reader, Tx } from "./open.ts";
@@ -21,6 +21,16 @@ export function insertInvitation(tx: Tx, row: InvitationRow): void {
 
 export function updateInvitation(tx: Tx, id: string, change: Partial<Omit<InvitationRow, "id">>): void {
   tx.update(invitations).set(change).where(eq(invitations.id, id)).run();
+}
+
+/** How many invitations of an account were written after a moment. */
+export function invitationsBy(reader: Reader, accountId: string, after: string): number {
+  const row = reader
+    .select({ n: count() })
+    .from(invitations)
+    .where(and(eq(invitations.invitedBy, accountId), gt(invitations.createdAt, after)))
+    .get();
+  return row?.n ?? 0;
 }
 
 /** One that was neither accepted nor withdrawn; it may have expired. */

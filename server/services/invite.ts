@@ -1,7 +1,8 @@
 import type { Role } from "#shared/access/table.ts";
+import { Problem } from "#shared/problem.ts";
 import { keyFingerprint, publicKeyOf } from "#shared/record/sign.ts";
 import type { Visitor } from "../context.ts";
-import { aboutLink, insertInvitation, type InvitationRow, updateInvitation } from "../db/invitations.ts";
+import { aboutLink, insertInvitation, invitationsBy, type InvitationRow, updateInvitation } from "../db/invitations.ts";
 import type { Tx } from "../db/open.ts";
 import { findSurvey } from "../db/surveys.ts";
 import { queueMail } from "../mail/queue-mail.ts";
@@ -19,8 +20,19 @@ interface Wanted {
   readonly makesOwner: boolean;
 }
 
-/** Writes an invitation and its mail. */
+/** More than anybody invites in a day who does not write to strangers. */
+const INVITATIONS_A_DAY = 100;
+const DAY_MS = 24 * 3600_000;
+
+/**
+ * Writes an invitation and its mail.
+ * @throws Problem `too-many-requests` after a hundred in a day from one account
+ */
 export function invite(tx: Tx, ctx: Visitor, { email, to, makesOwner }: Wanted): void {
+  const dayAgo = new Date(ctx.now().getTime() - DAY_MS).toISOString();
+  if (invitationsBy(tx, ctx.account.id, dayAgo) >= INVITATIONS_A_DAY) {
+    throw new Problem("too-many-requests", `You invited ${INVITATIONS_A_DAY} people within a day. Go on tomorrow.`);
+  }
   const { secret, ...fresh } = freshLink(ctx);
   const row: InvitationRow = {
     id: newId(ctx),

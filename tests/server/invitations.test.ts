@@ -300,3 +300,17 @@ test("accepting while somebody else is signed in in the same browser ends that s
   // The other browser of that person stays.
   expect((await copy.call(readSession)).json.account?.email).toBe(`before-${count}@example.org`);
 });
+
+test("after a hundred in a day the next waits for the day to pass, whichever survey it is for", async () => {
+  server.setNow("2031-05-10T08:00:00.000Z");
+  let sent = 0; // other tests wrote some of the hundred
+  while (sent < 200 && (await add("counter", `many-${sent}@example.org`)).status === 200) sent += 1;
+  expect(sent).toBeGreaterThan(50);
+  expect(sent).toBeLessThanOrEqual(100);
+  team = await anotherSurvey(people);
+  const refused = await add("counter", "one-more@example.org");
+  expect(refused).toMatchObject({ status: 429, json: { code: "too-many-requests" } });
+  expect(mailsTo(server, "one-more@example.org")).toEqual([]);
+  server.setNow("2031-05-11T08:00:00.001Z");
+  expect((await add("counter", "one-more@example.org")).status).toBe(200);
+}, 60_000);
