@@ -80,6 +80,8 @@ export interface MemberRow {
   readonly email: string;
   readonly addedAt: string;
   readonly role: Role;
+  /** Since when the person can't sign in any more; null for everybody who can. */
+  readonly closedAt: string | null;
 }
 
 /** One row a role, in the order in which people were added. */
@@ -91,6 +93,7 @@ export function membersOf(reader: Reader, surveyId: string): MemberRow[] {
       email: accounts.email,
       addedAt: members.addedAt,
       role: memberships.role,
+      closedAt: accounts.closedAt,
     })
     .from(members)
     .innerJoin(accounts, eq(accounts.id, members.accountId))

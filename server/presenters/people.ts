@@ -17,10 +17,19 @@ export function presentPeople(ctx: Visitor, { members, invitations }: PeopleFoun
 /** One entry a person, with the roles held now. */
 function presentMembers(rows: readonly MemberRow[], ownEmail: string): Member[] {
   const people = new Map<string, Member>();
-  for (const { id, name, email, addedAt, role } of rows) {
+  for (const { id, name, email, addedAt, role, closedAt } of rows) {
     const known = people.get(id);
     if (known) known.roles.push(role);
-    else people.set(id, { id, name, email, addedAt, roles: [role], isSelf: email === ownEmail });
+    else
+      people.set(id, {
+        id,
+        name,
+        email,
+        addedAt,
+        roles: [role],
+        isSelf: email === ownEmail,
+        isClosed: closedAt !== null,
+      });
   }
   return [...people.values()];
 }

@@ -92,6 +92,9 @@ function expectFieldRole(reader: Reader, surveyId: string, memberId: string): vo
   const rows = membersOf(reader, surveyId).filter((row) => row.id === memberId);
   const [first] = rows;
   if (!first) throw new Problem("not-found", "This person holds no role in the survey. Choose somebody from the list.");
+  if (first.closedAt !== null) {
+    throw new Problem("account-closed", `${first.name} can't sign in any more. Choose somebody else.`);
+  }
   if (rows.some((row) => FIELD_ROLES.has(row.role))) return;
   throw new Problem(
     "not-allowed",

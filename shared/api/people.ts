@@ -16,6 +16,8 @@ export const member = z.object({
   addedAt: utc,
   /** Whether this is the person who asks. */
   isSelf: z.boolean(),
+  /** An owner closed the account: the roles stay, and nobody signs in. */
+  isClosed: z.boolean(),
 });
 export type Member = z.infer<typeof member>;
 

@@ -1,5 +1,8 @@
+import { eq } from "drizzle-orm";
 import { describe, expect, test } from "vitest";
 import { assignVisits, listVisits } from "#shared/api/field.ts";
+import { listPeople } from "#shared/api/people.ts";
+import { accounts } from "#server/db/schema/accounts.ts";
 import { anotherSurvey, declaring, drawCells } from "../fixtures/sealed-frame.ts";
 import { surveyEachTest } from "../fixtures/each-survey.ts";
 
@@ -99,5 +102,24 @@ describe("assigning", () => {
       body: { visitIds, memberId: null, day: "" },
     });
     expect(foreign.json.code).toBe("cell-not-drawn");
+  });
+
+  test("nobody is sent out whose account is closed, and the list of people says it", async () => {
+    await drawCells(survey.team, declaring(survey.frame.frameId));
+    const [visit] = (await survey.visits()).visits;
+    const counter = await survey.memberWith("counter");
+    const { db } = survey.server.platform;
+    const closed = (at: string | null): void => {
+      db.update(accounts).set({ closedAt: at }).where(eq(accounts.email, "counter@example.org")).run();
+    };
+    closed("2031-05-02T07:00:00Z");
+    const reply = await survey.team.lead.call(assignVisits, {
+      params: survey.here(),
+      body: { visitIds: [visit?.id ?? ""], memberId: counter, day: "" },
+    });
+    const { members } = (await survey.team.lead.call(listPeople, { params: survey.here() })).json;
+    closed(null);
+    expect(reply.json.code).toBe("account-closed");
+    expect(members.filter(({ isClosed }) => isClosed).map(({ id }) => id)).toEqual([counter]);
   });
 });

@@ -19,7 +19,8 @@ export function useFieldMembers(surveyId: string) {
   return useQuery({
     queryKey: surveyKey(surveyId, "people"),
     queryFn: ({ signal }) => call(listPeople, { params: { surveyId }, signal }),
-    select: ({ members }): Member[] => members.filter(({ roles }) => roles.some((role) => role !== "auditor")),
+    select: ({ members }): Member[] =>
+      members.filter(({ roles, isClosed }) => !isClosed && roles.some((role) => role !== "auditor")),
   });
 }
 

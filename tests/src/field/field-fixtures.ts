@@ -69,6 +69,7 @@ export const people: Member[] = [
     roles: ["lead"],
     addedAt: "2031-05-02T08:00:00Z",
     isSelf: false,
+    isClosed: false,
   },
   {
     id: "m2",
@@ -77,6 +78,7 @@ export const people: Member[] = [
     roles: ["counter"],
     addedAt: "2031-05-02T08:00:00Z",
     isSelf: false,
+    isClosed: false,
   },
   {
     id: "m3",
@@ -85,5 +87,6 @@ export const people: Member[] = [
     roles: ["auditor"],
     addedAt: "2031-05-02T08:00:00Z",
     isSelf: false,
+    isClosed: false,
   },
 ];

@@ -32,6 +32,7 @@ function member(part: Partial<Member>): Member {
     roles: ["planner"],
     addedAt: "2031-05-02T08:00:00Z",
     isSelf: false,
+    isClosed: false,
     ...part,
   };
 }
@@ -188,9 +189,14 @@ test("one of two planners leaves after a question, and a refusal keeps them in",
 });
 
 test("who may not change people sees them and no form", async () => {
-  peopleOf({ roles: ["lead"], members: [{ ...ines, isSelf: false }], invitations: [invitation] }).install();
+  peopleOf({
+    roles: ["lead"],
+    members: [{ ...ines, isSelf: false, isClosed: true }],
+    invitations: [invitation],
+  }).install();
   open();
   await screen.findByText("ines@example.org");
+  screen.getByText("(account closed)");
   for (const name of [/^Add to/, /^Change the roles/, /^Remove/, /new link/, /^Withdraw/]) {
     expect(screen.queryByRole("button", { name })).toBeNull();
   }

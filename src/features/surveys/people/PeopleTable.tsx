@@ -51,6 +51,7 @@ export function PeopleTable({ surveyId, members, mayChange }: PeopleTableProps) 
               <th scope="row">
                 {member.name}
                 {member.isSelf && <span className="q-label-quiet"> (you)</span>}
+                {member.isClosed && <span className="q-label-quiet"> (account closed)</span>}
               </th>
               <td>{formatList(member.roles)}</td>
               <td>{member.email}</td>
