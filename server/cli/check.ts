@@ -1,6 +1,6 @@
 import { existsSync } from "node:fs";
 import { Problem } from "#shared/problem.ts";
-import { closeDb, openDb } from "../db/open.ts";
+import { closeDb, missingTriggers, openDb } from "../db/open.ts";
 import { readEnv } from "../env.ts";
 import { projectRoot, version } from "../project.ts";
 import { readSecrets } from "../secrets.ts";
@@ -19,11 +19,13 @@ export function check(args: readonly string[]): number {
     );
   }
   const { signingKey } = readSecrets(env);
+  const missing = missingTriggers(env.databaseFile);
   const db = openDb(env.databaseFile);
   try {
     const result = checkInstallation({ db, signingKey, now: () => new Date(), version: version(root) });
-    printJson(result);
-    return result.ok ? 0 : 1;
+    const ok = result.ok && missing.length === 0;
+    printJson({ ...result, ok, missingTriggers: missing });
+    return ok ? 0 : 1;
   } finally {
     closeDb(db);
   }

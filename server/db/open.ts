@@ -88,9 +88,28 @@ function migrationsPending(sqlite: Database.Database): boolean {
   return made !== journal.entries.length;
 }
 
+/** Guards that a database file lacks, so that somebody may have changed what is sealed; before `openDb` sets them again. */
+export function missingTriggers(file: string): string[] {
+  const sqlite = new Database(file, { readonly: true, fileMustExist: true });
+  try {
+    if (migrationsPending(sqlite)) return []; // an older shape has its own
+    const there = new Set(triggerNames(sqlite));
+    const wanted = [...triggersText().matchAll(/^CREATE TRIGGER (\w+)/gm)].map(([, name]) => name ?? "");
+    return wanted.filter((name) => !there.has(name));
+  } finally {
+    sqlite.close();
+  }
+}
+
+const triggersText = (): string => readFileSync(join(projectRoot(), "server/db/triggers.sql"), "utf8");
+
+function triggerNames(sqlite: Database.Database): string[] {
+  return sqlite.prepare("SELECT name FROM sqlite_master WHERE type = 'trigger'").pluck().all() as string[];
+}
+
 /** All at once, so that no other process that has the file open ever writes without them. */
 function setTriggers(sqlite: Database.Database): void {
-  const triggers = readFileSync(join(projectRoot(), "server/db/triggers.sql"), "utf8");
+  const triggers = triggersText();
   sqlite
     .transaction(() => {
       dropTriggers(sqlite);
@@ -100,6 +119,5 @@ function setTriggers(sqlite: Database.Database): void {
 }
 
 function dropTriggers(sqlite: Database.Database): void {
-  const names = sqlite.prepare("SELECT name FROM sqlite_master WHERE type = 'trigger'").pluck().all() as string[];
-  for (const name of names) sqlite.exec(`DROP TRIGGER "${name}"`);
+  for (const name of triggerNames(sqlite)) sqlite.exec(`DROP TRIGGER "${name}"`);
 }

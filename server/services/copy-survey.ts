@@ -1,6 +1,7 @@
 import type { ImportReport } from "#shared/area/report.ts";
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
+import { findAccount } from "../db/accounts.ts";
 import { areasOf } from "../db/areas.ts";
 import { copyArea, insertWholeSurvey, type RoleHeld, rolesHeld } from "../db/copies.ts";
 import { newestEvent } from "../db/events.ts";
@@ -13,6 +14,7 @@ import { newId } from "./new-id.ts";
 import { readSettings } from "./read-settings.ts";
 import { recordEvent } from "./record-event.ts";
 import { keepDraft } from "./save-draft-frame.ts";
+import { tellAdded } from "./tell-roles.ts";
 
 interface NewCopy {
   readonly name: string;
@@ -117,6 +119,8 @@ function addPeople({ tx, ctx, surveyId, memberId, at }: Begun, held: readonly Ro
     upsertMembership(tx, member, role, at);
     const payload = { version: 1, member, name, role } as const;
     recordEvent(tx, ctx, { surveyId, at, memberId, kind: "member-added", payload });
+    const account = findAccount(tx, accountId);
+    if (account) tellAdded(tx, { ...ctx, surveyId }, account, role);
   }
 }
 

@@ -1,5 +1,6 @@
 import { existsSync, rmSync } from "node:fs";
 import { join } from "node:path";
+import Database from "better-sqlite3";
 import { afterAll, afterEach, expect, test, vi } from "vitest";
 import { lockForServing } from "#server/db/lock.ts";
 import { cliFolder, json, quillet, refusal } from "../fixtures/cli.ts";
@@ -20,6 +21,17 @@ test("what was backed up is there again after the folder was lost, and checks th
   expect(json(await quillet(["check"]))).toEqual(before);
   const again = await quillet(["create-owner", "--email", "ola@example.org", "--name", "Ola"]);
   expect(refusal(again, 1)).toContain("account-exists");
+});
+
+test("the check names a guard that somebody took away, once: opening sets it again", async () => {
+  vi.stubEnv("QUILLET_DATA", data);
+  const sqlite = new Database(join(data, "quillet.sqlite"));
+  sqlite.exec("DROP TRIGGER count_entries_update");
+  sqlite.close();
+  const found = await quillet(["check"]);
+  expect(found.status).toBe(1);
+  expect(JSON.parse(found.stdout)).toMatchObject({ ok: false, missingTriggers: ["count_entries_update"] });
+  expect(json(await quillet(["check"]))).toMatchObject({ ok: true, missingTriggers: [] });
 });
 
 test("each refusal says what to do", async () => {

@@ -9,6 +9,7 @@ import { membersOf } from "#server/db/members.ts";
 import { targets } from "#server/db/schema/surveys.ts";
 import { buildRecord } from "#server/services/build-record.ts";
 import { surveyEachTest } from "../fixtures/each-survey.ts";
+import { mailsTo } from "../fixtures/mails.ts";
 import { putSealedFrame } from "../fixtures/sealed-frame.ts";
 
 const survey = surveyEachTest();
@@ -82,6 +83,11 @@ test("people come along in their roles where that was asked for, each under a ne
   expect(failedChecks(made.id)).toEqual([]);
   const { surveys } = (await survey.team.counter.call(listSurveys)).json;
   expect(surveys.map(({ id }) => id)).toContain(made.id);
+  const told = (email: string) => mailsTo(survey.server, email).filter(({ surveyId }) => surveyId === made.id);
+  expect(told("counter@example.org").map(({ subject }) => subject)).toEqual([
+    "Hallow Moss 2032: you are its counter now",
+  ]);
+  expect(told("planner@example.org")).toEqual([]);
 });
 
 test("the newest boundary and the newest frame are the ones that are copied", async () => {
