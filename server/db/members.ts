@@ -55,23 +55,39 @@ export function accountOfMember(reader: Reader, memberId: string): string | unde
   return reader.select({ id: members.accountId }).from(members).where(eq(members.id, memberId)).get()?.id;
 }
 
-/** Accounts of the planners of a survey who can sign in. */
-export function openPlanners(reader: Reader, surveyId: string): string[] {
+/** Somebody who holds a role and can sign in. */
+export interface HolderRow {
+  readonly accountId: string;
+  readonly memberId: string;
+  readonly name: string;
+  readonly email: string;
+  /** Since when this person holds the role. */
+  readonly since: string;
+}
+
+/** Who holds a role in a survey, in the order in which it was given: neither those removed nor those whose account is closed. */
+export function openHolders(reader: Reader, surveyId: string, role: Role): HolderRow[] {
   return reader
-    .select({ id: accounts.id })
+    .select({
+      accountId: accounts.id,
+      memberId: members.id,
+      name: accounts.name,
+      email: accounts.email,
+      since: memberships.addedAt,
+    })
     .from(members)
     .innerJoin(accounts, eq(accounts.id, members.accountId))
     .innerJoin(memberships, eq(memberships.memberId, members.id))
     .where(
       and(
         eq(members.surveyId, surveyId),
-        eq(memberships.role, "planner"),
+        eq(memberships.role, role),
         isNull(memberships.removedAt),
         isNull(accounts.closedAt),
       ),
     )
-    .all()
-    .map((row) => row.id);
+    .orderBy(memberships.addedAt, members.id)
+    .all();
 }
 
 export interface MemberRow {

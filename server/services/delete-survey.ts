@@ -1,6 +1,6 @@
 import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
-import { auditorsOf } from "../db/auditors.ts";
+import { openHolders } from "../db/members.ts";
 import { deleteEverythingOf } from "../db/delete-survey.ts";
 import { newestEvent } from "../db/events.ts";
 import { withoutTriggers, writeTx } from "../db/open.ts";
@@ -22,7 +22,7 @@ export function deleteSurvey(ctx: Context, typedName: string): void {
     }
     const newest = newestEvent(tx, ctx.surveyId);
     if (!newest) throw new Error(`survey ${ctx.surveyId} has no record`);
-    const auditors = auditorsOf(tx, ctx.surveyId);
+    const auditors = openHolders(tx, ctx.surveyId, "auditor");
     withoutTriggers(ctx.db, () => {
       deleteEverythingOf(tx, {
         id: ctx.surveyId,

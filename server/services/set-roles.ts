@@ -3,7 +3,7 @@ import { Problem } from "#shared/problem.ts";
 import type { Context } from "../context.ts";
 import { type AccountRow, findAccount } from "../db/accounts.ts";
 import { openInvitationFor } from "../db/invitations.ts";
-import { accountOfMember, openPlanners, standingOf } from "../db/members.ts";
+import { accountOfMember, openHolders, standingOf } from "../db/members.ts";
 import { type Reader, type Tx, writeTx } from "../db/open.ts";
 import { deleteSessionsOf } from "../db/sessions.ts";
 import { expectOpenAccount } from "./add-person.ts";
@@ -66,6 +66,6 @@ function endOldInvitations(tx: Tx, ctx: Context, { email }: AccountRow, roles: r
 
 /** @throws Problem `last-planner` where nobody else who can sign in is planner of the survey */
 export function expectAnotherPlanner(reader: Reader, surveyId: string, account: Pick<AccountRow, "id">): void {
-  if (openPlanners(reader, surveyId).some((id) => id !== account.id)) return;
+  if (openHolders(reader, surveyId, "planner").some(({ accountId }) => accountId !== account.id)) return;
   throw new Problem("last-planner", "Make somebody else a planner first.");
 }

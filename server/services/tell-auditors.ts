@@ -1,6 +1,6 @@
 import { keyFingerprint, publicKeyOf } from "#shared/record/sign.ts";
 import type { Platform } from "../context.ts";
-import { type AuditorRow, auditorsOf } from "../db/auditors.ts";
+import { type HolderRow, openHolders } from "../db/members.ts";
 import type { EventRow } from "../db/events.ts";
 import type { Tx } from "../db/open.ts";
 import { findSurvey } from "../db/surveys.ts";
@@ -18,7 +18,7 @@ export interface Happening {
 
 /** A day is told to those who were there in time, and to each of them once. */
 export interface DayTold {
-  readonly only: (auditor: AuditorRow) => boolean;
+  readonly only: (auditor: HolderRow) => boolean;
   /** Names the day in its survey. */
   readonly about: string;
 }
@@ -31,7 +31,7 @@ export function tellAuditors(
   happening: Happening,
   day: DayTold | null,
 ): void {
-  const auditors = auditorsOf(tx, event.surveyId).filter((auditor) => day?.only(auditor) ?? true);
+  const auditors = openHolders(tx, event.surveyId, "auditor").filter((auditor) => day?.only(auditor) ?? true);
   if (auditors.length === 0) return;
   const written = witnessMail({
     ...happening,

@@ -1,5 +1,5 @@
 import type { Platform } from "../context.ts";
-import { auditorsOf } from "../db/auditors.ts";
+import { openHolders } from "../db/members.ts";
 import { type EventStep, eventStepsSince } from "../db/events.ts";
 import { newestMailAt } from "../db/mails.ts";
 import { writeTx } from "../db/open.ts";
@@ -42,7 +42,7 @@ function tellDaysOf(platform: Place, { id: surveyId, timeZone }: SurveyRow): voi
 
 /** Before it every day was told, or there was no auditor; null while there is none. */
 function firstToLookAt({ db }: Place, surveyId: string): string | null {
-  const first = auditorsOf(db, surveyId)[0];
+  const first = openHolders(db, surveyId, "auditor")[0];
   if (!first) return null;
   const told = newestMailAt(db, surveyId, WITNESS_DAY);
   const from = told !== null && told > first.since ? told : first.since;

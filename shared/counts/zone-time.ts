@@ -1,3 +1,5 @@
+import { MONTHS } from "#shared/units/months.ts";
+
 /** A day of the calendar, and where it is known the time on the clocks of the place. */
 export interface LocalTime {
   readonly year: number;
@@ -105,21 +107,6 @@ export function localText({ year, month, day, time }: LocalTime): string {
   const date = `${String(year).padStart(4, "0")}-${two(month)}-${two(day)}`;
   return time === null ? date : `${date} ${two(time.hour)}:${two(time.minute)}`;
 }
-
-const MONTHS = [
-  "January",
-  "February",
-  "March",
-  "April",
-  "May",
-  "June",
-  "July",
-  "August",
-  "September",
-  "October",
-  "November",
-  "December",
-];
 
 /** "3 May 2031". */
 export function dayInWords({ year, month, day }: LocalTime): string {

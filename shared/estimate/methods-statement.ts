@@ -4,6 +4,7 @@ import type { EstimateResult, LimitKind } from "./result.ts";
 import { printedLimitsOf } from "./rounding.ts";
 import { estimateSentence, levelText, sentenceText, type TargetWords } from "./sentence.ts";
 import { missingNames } from "./notes.ts";
+import { MONTHS } from "#shared/units/months.ts";
 
 /** What a methods statement tells beside the estimate; all of it stands in the record. Times are ISO texts in UTC. */
 export interface MethodsFacts {
@@ -48,21 +49,6 @@ export interface MethodsFacts {
   readonly counted: { readonly from: string; readonly to: string; readonly observers: number };
   readonly software: { readonly name: string; readonly version: string };
 }
-
-const MONTHS = [
-  "January",
-  "February",
-  "March",
-  "April",
-  "May",
-  "June",
-  "July",
-  "August",
-  "September",
-  "October",
-  "November",
-  "December",
-];
 
 /** "2031-06-03T09:12:00Z" as "3 June 2031". Throws RangeError for another form. */
 function dayText(iso: string): string {

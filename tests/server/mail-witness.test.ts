@@ -9,7 +9,7 @@ import { envelopeSha256 } from "#shared/record/chain.ts";
 import { parseRecordFile, type RecordFile } from "#shared/record/record-file.ts";
 import { replay } from "#shared/record/replay.ts";
 import { keyFingerprint, publicKeyOf } from "#shared/record/sign.ts";
-import { auditorsOf } from "#server/db/auditors.ts";
+import { openHolders } from "#server/db/members.ts";
 import type { MailRow } from "#server/db/mails.ts";
 import { tellCountDays } from "#server/services/tell-count-days.ts";
 import { surveyEachTest } from "../fixtures/each-survey.ts";
@@ -155,7 +155,7 @@ describe("told are", () => {
       params: here(),
       body: declaring(survey.frame.frameId),
     });
-    const removed = auditorsOf(db, here().surveyId).find(({ email }) => email === "counter@example.org");
+    const removed = openHolders(db, here().surveyId, "auditor").find(({ email }) => email === "counter@example.org");
     db.$client
       .prepare("UPDATE memberships SET removed_at = ? WHERE member_id = ? AND role = 'auditor'")
       .run("2031-05-02T08:00:00.000Z", removed?.memberId);
